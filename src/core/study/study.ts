@@ -1,0 +1,89 @@
+/** A checked study in SI: plain data that travels unchanged to worker threads and, as JSON, into the report. */
+import type { FullLoadCurve } from '../vehicle/full-load-curve.ts';
+import type { LossMap } from '../vehicle/loss-map.ts';
+import type { TrialKind } from './trial-kinds.ts';
+
+/** A speed trace, as written: times in s, rising strictly; speeds in m/s, not negative. */
+export interface SpeedTrace {
+  readonly name: string;
+  readonly timesS: readonly number[];
+  readonly speedsMPerS: readonly number[];
+  /** What the file says of itself, its source first. */
+  readonly notes: readonly string[];
+}
+
+/** Grade over time (s) or over distance (m), piecewise linear, held beyond its ends. */
+export interface RoadProfile {
+  readonly name: string;
+  readonly over: 'time' | 'distance';
+  readonly at: readonly number[];
+  readonly grades: readonly number[];
+}
+
+/** One trial; its numbers stand in `Study.values` as `trials.<name>.<key>`. */
+export interface Trial {
+  readonly name: string;
+  readonly kind: TrialKind;
+  readonly rating: 'peak' | 'continuous';
+  /** Figures of the study that this trial replaces for itself, SI, by dotted name. */
+  readonly with: Readonly<Record<string, number>>;
+  /** Cycle trials only. */
+  readonly trace: SpeedTrace | null;
+  readonly road: RoadProfile | null;
+}
+
+/** One axis of the search: a varied number, or a list of named options that set several together. */
+export interface Axis {
+  /** Dotted name of the number, or name of the options list. */
+  readonly name: string;
+  /** Dotted names that a point of the axis sets. */
+  readonly sets: readonly string[];
+  /** Points in the order of the study file: one SI value per name in `sets`. */
+  readonly points: readonly (readonly number[])[];
+  /** Names of the points where they are options. */
+  readonly labels: readonly string[] | null;
+  /** A range between two SI values that a sampling method may fill freely; null for lists and options. */
+  readonly range: { readonly from: number; readonly to: number; readonly stepped: boolean } | null;
+}
+
+/** A requirement on one metric, SI, inclusive. One metric may have both ends: two requirements. */
+export interface Requirement {
+  readonly metric: string;
+  readonly bound: 'atLeast' | 'atMost';
+  readonly limit: number;
+}
+
+/** One objective of the trade-off. */
+export interface Objective {
+  readonly metric: string;
+  readonly aim: 'minimise' | 'maximise';
+  /** Size of the box within which people see one design, SI; 0: every design. */
+  readonly resolution: number;
+}
+
+/** How designs are chosen. */
+export interface Search {
+  readonly method: 'grid';
+}
+
+/** A complete, checked study. Dotted names as in the catalogue of parameters. */
+export interface Study {
+  readonly title: string;
+  readonly about: string;
+  readonly driven: 'front' | 'rear' | 'all';
+  /** The tyre size as written, where the radius follows from it. */
+  readonly tyre: string | null;
+  readonly currency: string | null;
+  /** Every number given or defaulted, SI, by dotted name: the reference design. */
+  readonly values: Readonly<Record<string, number>>;
+  readonly fullLoad: FullLoadCurve | null;
+  readonly lossMap: LossMap | null;
+  readonly trials: readonly Trial[];
+  readonly axes: readonly Axis[];
+  readonly search: Search;
+  readonly requirements: readonly Requirement[];
+  readonly objectives: readonly Objective[];
+  /** Further metrics to store with every design. */
+  readonly keep: readonly string[];
+  readonly report: { readonly units: 'SI' | 'US' };
+}
