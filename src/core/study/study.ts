@@ -51,6 +51,8 @@ export interface Requirement {
   readonly metric: string;
   readonly bound: 'atLeast' | 'atMost';
   readonly limit: number;
+  /** Not written in the file: every cycle must be followed unless the study says otherwise (off-trace share at most 0). */
+  readonly implied: boolean;
 }
 
 /** One objective of the trade-off. */

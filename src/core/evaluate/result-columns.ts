@@ -1,0 +1,49 @@
+/** Which figures of a design a run stores and shows: varied inputs, objectives, required metrics, and what `keep` names. */
+import { type MetricColumn, type MetricRow, machineKey } from '../study/metrics.ts';
+import { findParameter, type ParameterRow } from '../study/parameters.ts';
+import type { Study } from '../study/study.ts';
+import type { Quantity } from '../units/units.ts';
+
+/** One stored column. `option` columns hold the index of the point on their axis, whose names are `labels`. */
+export interface ResultColumn {
+  /** Column name in parts and front.csv, with its unit: `gearing.ratio`, `motor.peakTorque_Nm`, `ramp.grade_pct`. */
+  readonly key: string;
+  /** Name in the study file: `motor.peakTorque`, `ramp.grade`, `motor on offer`. */
+  readonly name: string;
+  readonly role: 'input' | 'option' | 'metric';
+  /** Meaningless for options. */
+  readonly quantity: Quantity;
+  readonly decimals: number;
+  /** For axes and tables: `ramp: grade`, `peak torque`. */
+  readonly label: string;
+  readonly better: 'less' | 'more' | null;
+  readonly labels: readonly string[] | null;
+}
+
+/** The columns of a study's results, inputs first; each metric once, in the order objectives, requirements, keep. */
+export function resultColumns(study: Study, metrics: readonly MetricColumn[]): ResultColumn[] {
+  const wanted = new Set([...study.objectives.map((o) => o.metric), ...study.requirements.map((r) => r.metric), ...study.keep]);
+  const byName = new Map(metrics.map((column) => [column.name, column]));
+  return [...study.axes.map(inputColumn), ...[...wanted].map((name) => metricColumn(byName.get(name), name))];
+
+  function inputColumn(axis: Study['axes'][number]): ResultColumn {
+    if (axis.labels !== null) {
+      return { key: axis.name, name: axis.name, role: 'option', quantity: 'number', decimals: 0, label: axis.name, better: null, labels: axis.labels };
+    }
+    const parameter = findParameter(axis.name) as ParameterRow;
+    const label = axis.name.startsWith('trials.') ? axis.name.slice('trials.'.length) : parameter.label;
+    const { quantity, decimals } = parameter;
+    return { key: machineKey(axis.name, quantity), name: axis.name, role: 'input', quantity, decimals, label, better: null, labels: null };
+  }
+}
+
+/** The label people read for a metric: the trial in front of it. */
+export function metricLabel(trial: string | null, row: MetricRow): string {
+  return trial === null ? row.label : `${trial}: ${row.label}`;
+}
+
+function metricColumn(column: MetricColumn | undefined, name: string): ResultColumn {
+  if (column === undefined) throw new Error(`no metric named ${name}`);
+  const { quantity, decimals, better } = column.row;
+  return { key: column.key, name, role: 'metric', quantity, decimals, label: metricLabel(column.trial, column.row), better, labels: null };
+}
