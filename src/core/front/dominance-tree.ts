@@ -1,0 +1,168 @@
+/**
+ * A fixed set of points that answers one question fast: does any of you dominate this one? A k-d tree (Bentley,
+ * Multidimensional binary search trees, Communications of the ACM 18(9), 1975; from memory) whose nodes know the best
+ * and the worst corner of their points: a node whose best corner is beaten anywhere holds no dominator, and a node
+ * whose worst corner dominates is full of them. Only comparisons, so infinities are ordinary values.
+ */
+const leafSize = 12;
+
+/** Points in rows: `rows[i * width + j]` is objective j of point i, whose design number is `numbers[i]`. */
+export interface PointRows {
+  readonly count: number;
+  readonly width: number;
+  readonly rows: Float64Array;
+  readonly numbers: Float64Array;
+}
+
+/** Points arranged for dominance questions; less is better in every objective, and no value is NaN. */
+export class DominanceTree implements PointRows {
+  readonly count: number;
+  readonly width: number;
+  readonly rows: Float64Array;
+  readonly numbers: Float64Array;
+  private readonly firstLeaf: number;
+  /** Leaf k holds the points from leafStart[k] to before leafStart[k + 1]. */
+  private readonly leafStart: Uint32Array;
+  /** Corners by node, in heap order: the children of node i are 2i + 1 and 2i + 2. */
+  private readonly best: Float64Array;
+  private readonly worst: Float64Array;
+  private readonly stack = new Int32Array(64);
+  private lastDominator = 0;
+
+  /** Copies at least one point; the order of the points inside the tree is its own. */
+  constructor(points: PointRows) {
+    const { count, width } = points;
+    this.count = count;
+    this.width = width;
+    let leaves = 1;
+    while (leaves * leafSize < count) leaves *= 2;
+    this.firstLeaf = leaves - 1;
+    this.leafStart = new Uint32Array(leaves + 1);
+    const order = this.arrange(points);
+    this.rows = new Float64Array(count * width);
+    this.numbers = new Float64Array(count);
+    for (let i = 0; i < count; i++) {
+      const from = order[i]! * width;
+      for (let j = 0; j < width; j++) this.rows[i * width + j] = points.rows[from + j]!;
+      this.numbers[i] = points.numbers[order[i]!]!;
+    }
+    this.best = new Float64Array((2 * leaves - 1) * width).fill(Number.POSITIVE_INFINITY);
+    this.worst = new Float64Array((2 * leaves - 1) * width).fill(Number.NEGATIVE_INFINITY);
+    this.findCorners(leaves);
+  }
+
+  /** True when a point of the tree dominates the point `x` (`width` values, none of them NaN). */
+  dominates(x: Float64Array): boolean {
+    // Neighbouring designs often fall to the same dominator.
+    if (this.rowDominates(this.lastDominator, x)) return true;
+    const { stack, firstLeaf } = this;
+    let depth = 0;
+    stack[depth++] = 0;
+    while (depth > 0) {
+      const node = stack[--depth]!;
+      if (!this.cornerReaches(this.best, node, x)) continue;
+      if (node >= firstLeaf) {
+        if (this.leafDominates(node - firstLeaf, x)) return true;
+      } else {
+        stack[depth++] = 2 * node + 2;
+        stack[depth++] = 2 * node + 1;
+      }
+    }
+    return false;
+  }
+
+  private leafDominates(leaf: number, x: Float64Array): boolean {
+    const end = this.leafStart[leaf + 1]!;
+    for (let i = this.leafStart[leaf]!; i < end; i++) {
+      if (this.rowDominates(i, x)) {
+        this.lastDominator = i;
+        return true;
+      }
+    }
+    return false;
+  }
+
+  private rowDominates(i: number, x: Float64Array): boolean {
+    const { rows, width } = this;
+    const at = i * width;
+    let better = false;
+    for (let j = 0; j < width; j++) {
+      const value = rows[at + j]!;
+      if (value > x[j]!) return false;
+      if (value < x[j]!) better = true;
+    }
+    return better;
+  }
+
+  private cornerReaches(corners: Float64Array, node: number, x: Float64Array): boolean {
+    const at = node * this.width;
+    for (let j = 0; j < this.width; j++) if (corners[at + j]! > x[j]!) return false;
+    return true;
+  }
+
+  /** Halves the points along one objective after another until the leaves are small; fills leafStart. */
+  private arrange(points: PointRows): Uint32Array {
+    const order = new Uint32Array(points.count);
+    for (let i = 0; i < points.count; i++) order[i] = i;
+    const split = (node: number, from: number, to: number, objective: number): void => {
+      if (node >= this.firstLeaf) {
+        this.leafStart[node - this.firstLeaf + 1] = to;
+        return;
+      }
+      const middle = (from + to) >>> 1;
+      selectMiddle(order, points, objective, from, to, middle);
+      const next = (objective + 1) % points.width;
+      split(2 * node + 1, from, middle, next);
+      split(2 * node + 2, middle, to, next);
+    };
+    split(0, 0, points.count, 0);
+    return order;
+  }
+
+  private findCorners(leaves: number): void {
+    for (let leaf = 0; leaf < leaves; leaf++) {
+      for (let i = this.leafStart[leaf]!; i < this.leafStart[leaf + 1]!; i++) this.widen(this.firstLeaf + leaf, this.rows, this.rows, i);
+    }
+    for (let node = this.firstLeaf - 1; node >= 0; node--) {
+      this.widen(node, this.best, this.worst, 2 * node + 1);
+      this.widen(node, this.best, this.worst, 2 * node + 2);
+    }
+  }
+
+  private widen(node: number, low: Float64Array, high: Float64Array, index: number): void {
+    for (let j = 0; j < this.width; j++) {
+      const at = node * this.width + j;
+      const from = index * this.width + j;
+      if (low[from]! < this.best[at]!) this.best[at] = low[from]!;
+      if (high[from]! > this.worst[at]!) this.worst[at] = high[from]!;
+    }
+  }
+}
+
+/**
+ * Orders `order[from..to)` so that no value of `objective` before `middle` exceeds one at or after it: Hoare's
+ * selection (Algorithm 65: Find, Communications of the ACM 4(7), 1961; from memory), the middle element as pivot.
+ */
+function selectMiddle(order: Uint32Array, points: PointRows, objective: number, from: number, to: number, middle: number): void {
+  const { rows, width } = points;
+  const valueAt = (k: number): number => rows[order[k]! * width + objective]!;
+  let low = from;
+  let high = to - 1;
+  while (low < high) {
+    const pivot = valueAt((low + high) >>> 1);
+    let i = low;
+    let j = high;
+    while (i <= j) {
+      while (valueAt(i) < pivot) i++;
+      while (valueAt(j) > pivot) j--;
+      if (i <= j) {
+        const swapped = order[i]!;
+        order[i++] = order[j]!;
+        order[j--] = swapped;
+      }
+    }
+    if (middle <= j) high = j;
+    else if (middle >= i) low = i;
+    else return;
+  }
+}

@@ -1,0 +1,14 @@
+/** Who dominates whom, when less is better in every objective. */
+
+/**
+ * True when `a` is no worse than `b` in all objectives and better in one (less is better). Points equal in all
+ * objectives do not dominate each other; a point with a NaN neither dominates nor is dominated.
+ */
+export function dominates(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
+  let better = false;
+  for (let j = 0; j < a.length; j++) {
+    if (!(a[j]! <= b[j]!)) return false;
+    if (a[j]! < b[j]!) better = true;
+  }
+  return better;
+}

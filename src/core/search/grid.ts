@@ -1,0 +1,55 @@
+/** The full grid: every point of every axis with every point of the others. */
+import type { Axis } from '../study/study.ts';
+import type { Search, SearchMethod } from './search-method.ts';
+
+/**
+ * Numbers the grid in the order of nested lists: the first axis of the study changes slowest, the last fastest, so
+ * that neighbouring numbers differ in the last axis. A study without axes has an empty grid (its one design is the
+ * reference). Exact up to 2^53 - 1 designs; more throw.
+ */
+export const gridSearch: SearchMethod = ({ axes }): Search => {
+  const count = gridSize(axes);
+  const check = (designNumber: number): number => {
+    if (!Number.isInteger(designNumber) || designNumber < 1 || designNumber > count) {
+      throw new RangeError(`design ${designNumber} is not one of 1 to ${count}`);
+    }
+    return designNumber - 1;
+  };
+  const walk = (designNumber: number, visit: (axis: number, point: number) => void): void => {
+    // Remainders of doubles, not bit operations: counts pass 2^32.
+    let rest = check(designNumber);
+    for (let k = axes.length - 1; k >= 0; k--) {
+      const size = axes[k]!.points.length;
+      const point = rest % size;
+      visit(k, point);
+      rest = (rest - point) / size;
+    }
+  };
+  const offsets = inputOffsets(axes);
+  return {
+    count,
+    inputNames: axes.flatMap((axis) => axis.sets),
+    inputs: (designNumber, out, at) => walk(designNumber, (axis, point) => out.set(axes[axis]!.points[point]!, at + offsets[axis]!)),
+    points: (designNumber, out) =>
+      walk(designNumber, (axis, point) => {
+        out[axis] = point;
+      }),
+  };
+};
+
+function gridSize(axes: readonly Axis[]): number {
+  if (axes.length === 0) return 0;
+  const count = axes.reduce((product, axis) => product * axis.points.length, 1);
+  if (count > Number.MAX_SAFE_INTEGER) throw new RangeError(`a grid of ${count} designs cannot be numbered exactly`);
+  return count;
+}
+
+/** Where each axis begins in a row of inputs. */
+function inputOffsets(axes: readonly Axis[]): number[] {
+  let next = 0;
+  return axes.map((axis) => {
+    const offset = next;
+    next += axis.sets.length;
+    return offset;
+  });
+}
