@@ -33,6 +33,9 @@ const FOOT_M = 0.3048;
 const MILE_M = 1609.344;
 const POUND_FORCE_N = POUND_KG * 9.80665;
 const MPH_M_PER_S = 0.44704;
+/** Mechanical horsepower, and the metric one (Pferdestärke, 75 kp·m/s): by the definitions of the study file. */
+const HORSEPOWER_W = 745.69987;
+const METRIC_HORSEPOWER_W = 735.49875;
 /** One revolution per minute in rad/s is 2π/60. */
 const REV_RAD = 2 * Math.PI;
 
@@ -51,10 +54,20 @@ export const quantities = {
   length: {
     noun: 'length',
     us: 'ft',
-    units: [unit('m', 'm'), unit('mm', 'mm', 1, { divisor: 1000 }), unit('cm', 'cm', 1, { divisor: 100 }), unit('ft', 'ft', FOOT_M), unit('in', 'in', 0.0254)],
+    units: [
+      unit('m', 'm'),
+      unit('mm', 'mm', 1, { divisor: 1000 }),
+      unit('cm', 'cm', 1, { divisor: 100 }),
+      unit('ft', 'ft', FOOT_M),
+      unit('in', 'in', 0.0254, { spellings: ['inch'] }),
+    ],
   },
-  distance: { noun: 'distance', us: 'ft', units: [unit('m', 'm'), unit('km', 'km', 1000), unit('ft', 'ft', FOOT_M), unit('mi', 'mi', MILE_M)] },
-  range: { noun: 'distance', us: 'mi', units: [unit('km', 'km', 1000), unit('mi', 'mi', MILE_M), unit('m', 'm')] },
+  distance: {
+    noun: 'distance',
+    us: 'ft',
+    units: [unit('m', 'm'), unit('km', 'km', 1000), unit('ft', 'ft', FOOT_M), unit('mi', 'mi', MILE_M, { spellings: ['mile', 'miles'] })],
+  },
+  range: { noun: 'distance', us: 'mi', units: [unit('km', 'km', 1000), unit('mi', 'mi', MILE_M, { spellings: ['mile', 'miles'] }), unit('m', 'm')] },
   area: { noun: 'area', us: 'ft²', units: [unit('m²', 'm2'), unit('ft²', 'ft2', FOOT_M * FOOT_M)] },
   speed: {
     noun: 'speed',
@@ -68,7 +81,7 @@ export const quantities = {
   acceleration: { noun: 'acceleration', us: 'ft/s²', units: [unit('m/s²', 'm_per_s2'), unit('ft/s²', 'ft_per_s2', FOOT_M)] },
   rotationalSpeed: {
     noun: 'rotational speed',
-    units: [unit('rpm', 'rpm', REV_RAD, { divisor: 60, spellings: ['1/min', 'min^-1', 'r/min'] }), unit('rad/s', 'rad_per_s')],
+    units: [unit('rpm', 'rpm', REV_RAD, { divisor: 60, spellings: ['1/min', 'min^-1', 'r/min', 'rev/min'] }), unit('rad/s', 'rad_per_s')],
   },
   torque: {
     noun: 'torque',
@@ -80,7 +93,7 @@ export const quantities = {
     noun: 'force per speed',
     us: 'lbf/mph',
     units: [
-      unit('N/(km/h)', 'N_per_kmh', 3.6),
+      unit('N/(km/h)', 'N_per_kmh', 3.6, { spellings: ['N/kmh', 'N/kph'] }),
       unit('N/(m/s)', 'N_per_m_per_s', 1, { spellings: ['N·s/m'] }),
       unit('lbf/mph', 'lbf_per_mph', POUND_FORCE_N / MPH_M_PER_S),
     ],
@@ -89,7 +102,7 @@ export const quantities = {
     noun: 'force per speed squared',
     us: 'lbf/mph²',
     units: [
-      unit('N/(km/h)²', 'N_per_kmh2', 12.96),
+      unit('N/(km/h)²', 'N_per_kmh2', 12.96, { spellings: ['N/kmh²', 'N/kph²'] }),
       unit('N/(m/s)²', 'N_per_m_per_s2', 1, { spellings: ['N·s²/m²'] }),
       unit('lbf/mph²', 'lbf_per_mph2', POUND_FORCE_N / (MPH_M_PER_S * MPH_M_PER_S)),
     ],
@@ -97,10 +110,13 @@ export const quantities = {
   power: {
     noun: 'power',
     us: 'hp',
-    units: [unit('kW', 'kW', 1000), unit('W', 'W'), unit('hp', 'hp', 745.69987), unit('PS', 'PS', 735.49875)],
+    units: [unit('kW', 'kW', 1000), unit('W', 'W'), unit('hp', 'hp', HORSEPOWER_W, { spellings: ['bhp'] }), unit('PS', 'PS', METRIC_HORSEPOWER_W)],
   },
-  auxiliaryPower: { noun: 'power', units: [unit('W', 'W'), unit('kW', 'kW', 1000), unit('hp', 'hp', 745.69987), unit('PS', 'PS', 735.49875)] },
-  energy: { noun: 'energy', units: [unit('kWh', 'kWh', 3_600_000), unit('Wh', 'Wh', 3600), unit('MJ', 'MJ', 1e6)] },
+  auxiliaryPower: {
+    noun: 'power',
+    units: [unit('W', 'W'), unit('kW', 'kW', 1000), unit('hp', 'hp', HORSEPOWER_W, { spellings: ['bhp'] }), unit('PS', 'PS', METRIC_HORSEPOWER_W)],
+  },
+  energy: { noun: 'energy', units: [unit('kWh', 'kWh', 3_600_000), unit('Wh', 'Wh', 3600), unit('MJ', 'MJ', 1e6), unit('kJ', 'kJ', 1000), unit('J', 'J')] },
   energyPerDistance: {
     noun: 'energy per distance',
     us: 'Wh/mi',
@@ -111,11 +127,15 @@ export const quantities = {
       unit('kWh/km', 'kWh_per_km', 3600),
     ],
   },
-  time: { noun: 'time', units: [unit('s', 's'), unit('ms', 'ms', 1, { divisor: 1000 }), unit('min', 'min', 60)] },
+  time: { noun: 'time', units: [unit('s', 's', 1, { spellings: ['sec'] }), unit('ms', 'ms', 1, { divisor: 1000 }), unit('min', 'min', 60)] },
   timeSquared: { noun: 'time squared', units: [unit('s²', 's2')] },
   perSpeedSquared: {
     noun: 'rise per speed squared',
-    units: [unit('s²/m²', 's2_per_m2', 1, { spellings: ['1/(m/s)²'] }), unit('1/(km/h)²', 'per_kmh2', 12.96, { spellings: ['h²/km²'] })],
+    units: [
+      unit('s²/m²', 's2_per_m2', 1, { spellings: ['1/(m/s)²'] }),
+      unit('1/(km/h)²', 'per_kmh2', 12.96, { spellings: ['h²/km²', '1/kmh²'] }),
+      unit('1/mph²', 'per_mph2', 1 / (MPH_M_PER_S * MPH_M_PER_S), { spellings: ['h²/mi²'] }),
+    ],
   },
   temperature: {
     noun: 'temperature',
@@ -126,30 +146,61 @@ export const quantities = {
       unit('K', 'K'),
     ],
   },
-  density: { noun: 'density', units: [unit('kg/m³', 'kg_per_m3'), unit('lb/ft³', 'lb_per_ft3', POUND_KG / (FOOT_M * FOOT_M * FOOT_M))] },
+  density: {
+    noun: 'density',
+    units: [
+      unit('kg/m³', 'kg_per_m3'),
+      unit('lb/ft³', 'lb_per_ft3', POUND_KG / (FOOT_M * FOOT_M * FOOT_M)),
+      unit('slug/ft³', 'slug_per_ft3', POUND_FORCE_N / FOOT_M / (FOOT_M * FOOT_M * FOOT_M)),
+    ],
+  },
   inertia: {
     noun: 'moment of inertia',
     us: 'lb·ft²',
-    units: [unit('kg·m²', 'kg_m2'), unit('g·m²', 'g_m2', 1, { divisor: 1000 }), unit('lb·ft²', 'lb_ft2', POUND_KG * FOOT_M * FOOT_M)],
+    units: [
+      unit('kg·m²', 'kg_m2'),
+      unit('g·m²', 'g_m2', 1, { divisor: 1000 }),
+      unit('kg·cm²', 'kg_cm2', 1, { divisor: 10_000 }),
+      unit('lb·ft²', 'lb_ft2', POUND_KG * FOOT_M * FOOT_M),
+    ],
   },
-  inertiaPerTorque: { noun: 'inertia per torque', units: [unit('kg·m²/(N·m)', 'kg_m2_per_Nm')] },
-  lossPerTorque: { noun: 'loss per torque', units: [unit('W/(N·m)', 'W_per_Nm')] },
-  torquePerSpeed: { noun: 'torque per rotational speed', units: [unit('N·m·s', 'Nms', 1, { spellings: ['N·m/(rad/s)', 'N·m·s/rad'] })] },
+  inertiaPerTorque: {
+    noun: 'inertia per torque',
+    units: [
+      unit('kg·m²/(N·m)', 'kg_m2_per_Nm'),
+      unit('g·m²/(N·m)', 'g_m2_per_Nm', 1, { divisor: 1000 }),
+      unit('lb·ft²/(lbf·ft)', 'lb_ft2_per_lbf_ft', (POUND_KG * FOOT_M) / POUND_FORCE_N, { spellings: ['lb·ft²/(lb·ft)'] }),
+    ],
+  },
+  lossPerTorque: {
+    noun: 'loss per torque',
+    units: [unit('W/(N·m)', 'W_per_Nm'), unit('W/(lbf·ft)', 'W_per_lbf_ft', 1 / (POUND_FORCE_N * FOOT_M), { spellings: ['W/(lb·ft)'] })],
+  },
+  torquePerSpeed: {
+    noun: 'torque per rotational speed',
+    units: [unit('N·m·s', 'Nms', 1, { spellings: ['N·m/(rad/s)', 'N·m·s/rad'] }), unit('N·m/rpm', 'Nm_per_rpm', 60, { divisor: REV_RAD })],
+  },
   voltage: { noun: 'voltage', units: [unit('V', 'V')] },
   resistance: {
     noun: 'resistance',
-    units: [unit('Ω', 'Ohm', 1, { spellings: ['ohm', 'Ohm', 'Ω'] }), unit('mΩ', 'mOhm', 1, { divisor: 1000, spellings: ['mohm', 'mOhm', 'mΩ'] })],
+    units: [unit('Ω', 'Ohm', 1, { spellings: ['ohm', 'Ohm', 'ohms'] }), unit('mΩ', 'mOhm', 1, { divisor: 1000, spellings: ['mohm', 'mOhm'] })],
   },
-  resistanceEnergy: { noun: 'resistance times energy', units: [unit('Ω·kWh', 'Ohm_kWh', 3_600_000, { spellings: ['ohm·kWh'] })] },
-  massPerTorque: { noun: 'mass per torque', units: [unit('kg/(N·m)', 'kg_per_Nm'), unit('lb/(lbf·ft)', 'lb_per_lbf_ft', POUND_KG / (POUND_FORCE_N * FOOT_M))] },
-  massPerPower: { noun: 'mass per power', units: [unit('kg/kW', 'kg_per_kW', 1, { divisor: 1000 }), unit('lb/hp', 'lb_per_hp', POUND_KG / 745.69987)] },
+  resistanceEnergy: { noun: 'resistance times energy', units: [unit('Ω·kWh', 'Ohm_kWh', 3_600_000, { spellings: ['ohm·kWh', 'Ohm·kWh'] })] },
+  massPerTorque: {
+    noun: 'mass per torque',
+    units: [unit('kg/(N·m)', 'kg_per_Nm'), unit('lb/(lbf·ft)', 'lb_per_lbf_ft', POUND_KG / (POUND_FORCE_N * FOOT_M), { spellings: ['lb/(lb·ft)'] })],
+  },
+  massPerPower: { noun: 'mass per power', units: [unit('kg/kW', 'kg_per_kW', 1, { divisor: 1000 }), unit('lb/hp', 'lb_per_hp', POUND_KG / HORSEPOWER_W)] },
   massPerEnergy: {
     noun: 'mass per energy',
     units: [unit('kg/kWh', 'kg_per_kWh', 1, { divisor: 3_600_000 }), unit('lb/kWh', 'lb_per_kWh', POUND_KG / 3_600_000)],
   },
   money: { noun: 'cost', bare: true, units: [unit('', '')] },
-  moneyPerTorque: { noun: 'cost per torque', units: [unit('/(N·m)', 'per_Nm'), unit('/(lbf·ft)', 'per_lbf_ft', 1 / (POUND_FORCE_N * FOOT_M))] },
-  moneyPerPower: { noun: 'cost per power', units: [unit('/kW', 'per_kW', 1, { divisor: 1000 }), unit('/hp', 'per_hp', 1 / 745.69987)] },
+  moneyPerTorque: {
+    noun: 'cost per torque',
+    units: [unit('/(N·m)', 'per_Nm'), unit('/(lbf·ft)', 'per_lbf_ft', 1 / (POUND_FORCE_N * FOOT_M), { spellings: ['/(lb·ft)'] })],
+  },
+  moneyPerPower: { noun: 'cost per power', units: [unit('/kW', 'per_kW', 1, { divisor: 1000 }), unit('/hp', 'per_hp', 1 / HORSEPOWER_W)] },
   moneyPerEnergy: { noun: 'cost per energy', units: [unit('/kWh', 'per_kWh', 1, { divisor: 3_600_000 })] },
 } as const satisfies Record<string, QuantityRow>;
 

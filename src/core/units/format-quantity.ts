@@ -1,0 +1,77 @@
+/** SI numbers -> text that people read: the unit of their system, signs as in print, and never a missed limit that looks met. */
+import { fromSi, type Quantity, readingUnit, toSi } from './units.ts';
+
+/** How a number is to be shown. */
+export interface Format {
+  readonly system?: 'SI' | 'US';
+  /** From the catalogue; used in the reading unit. */
+  readonly decimals: number;
+}
+
+/** A space that holds number and unit together. */
+const NARROW_NO_BREAK = '\u202f';
+const MINUS = '\u2212';
+/** toFixed is exact up to here; beyond, an exponent. */
+const LARGEST_FIXED = 1e21;
+const MOST_DECIMALS = 20;
+
+/** A number without its unit: a real minus sign, thin spaces between thousands from 10 000 up, no negative zero; — for NaN. */
+export function formatFigure(value: number, decimals: number): string {
+  if (Number.isNaN(value)) return '—';
+  const size = Math.abs(value);
+  const digits = size === Number.POSITIVE_INFINITY ? '∞' : size >= LARGEST_FIXED ? String(size) : groupThousands(size.toFixed(decimals));
+  const zero = Number(size.toFixed(Math.min(decimals, MOST_DECIMALS))) === 0;
+  return value < 0 && !zero ? `${MINUS}${digits}` : digits;
+}
+
+function groupThousands(fixed: string): string {
+  const [whole = '', fraction] = fixed.split('.');
+  const grouped = whole.length < 5 ? whole : whole.replace(/\B(?=(\d{3})+$)/gu, NARROW_NO_BREAK);
+  return fraction === undefined ? grouped : `${grouped}.${fraction}`;
+}
+
+/** `15.2 km/h` with a narrow no-break space; — for NaN, no unit for pure numbers and money. */
+export function formatQuantity(si: number, quantity: Quantity, format: Format): string {
+  const unit = readingUnit(quantity, format.system ?? 'SI');
+  return withUnit(formatFigure(fromSi(si, unit), format.decimals), Number.isNaN(si) ? '' : unit.symbol);
+}
+
+function withUnit(digits: string, symbol: string): string {
+  return symbol === '' ? digits : `${digits}${NARROW_NO_BREAK}${symbol}`;
+}
+
+/** A limit as people read it: up to three decimals more than `format.decimals` where that shows it exactly, one more where not. */
+export function formatLimit(limit: number, quantity: Quantity, format: Format): string {
+  return formatQuantity(limit, quantity, { ...format, decimals: decimalsOfLimit(limit, quantity, format) });
+}
+
+function decimalsOfLimit(limit: number, quantity: Quantity, format: Format): number {
+  const written = fromSi(limit, readingUnit(quantity, format.system ?? 'SI'));
+  if (!Number.isFinite(written)) return format.decimals;
+  const exact = Number(written.toPrecision(12));
+  for (let more = 0; more <= 3; more++) if (Number(exact.toFixed(format.decimals + more)) === exact) return format.decimals + more;
+  return format.decimals + 1;
+}
+
+/**
+ * A value beside its limit (formatLimit): decimals are added until the printed value is on the same side of the printed limit
+ * as the real one. Where no decimals tell them apart, `<` or `>` stands in front. Limits are inclusive.
+ */
+export function formatAgainstLimit(value: number, limit: number, bound: 'atLeast' | 'atMost', quantity: Quantity, format: Format): string {
+  const unit = readingUnit(quantity, format.system ?? 'SI');
+  const written = fromSi(value, unit);
+  if (!Number.isFinite(written) || Math.abs(written) >= LARGEST_FIXED) return formatQuantity(value, quantity, format);
+  const printedLimit = Number(fromSi(limit, unit).toFixed(decimalsOfLimit(limit, quantity, format)));
+  const met = meets(value, limit, bound);
+  for (let decimals = format.decimals; decimals <= MOST_DECIMALS; decimals++) {
+    const printed = Number(written.toFixed(decimals));
+    if (meets(printed, printedLimit, bound) === met && meets(toSi(printed, unit), limit, bound) === met)
+      return withUnit(formatFigure(written, decimals), unit.symbol);
+  }
+  const sign = met ? '' : bound === 'atLeast' ? '< ' : '> ';
+  return `${sign}${formatLimit(limit, quantity, format)}`;
+}
+
+function meets(value: number, limit: number, bound: 'atLeast' | 'atMost'): boolean {
+  return bound === 'atLeast' ? value >= limit : value <= limit;
+}
