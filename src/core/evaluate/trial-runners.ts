@@ -1,0 +1,134 @@
+/** One runner per kind of trial: reads the trial's own numbers, calls its solver, writes its metrics in catalogue order. */
+
+import type { Trial } from '../study/study.ts';
+import { type TrialKind, trialKindRow } from '../study/trial-kinds.ts';
+import { solveAcceleration } from '../trials/acceleration.ts';
+import { type CompiledCycle, compileCycle } from '../trials/compiled-cycle.ts';
+import { type CycleResult, createCycleResult, runCycle } from '../trials/cycle.ts';
+import { solveGradeability } from '../trials/gradeability.ts';
+import { solveHillStart } from '../trials/hill-start.ts';
+import { solveStandingDistance } from '../trials/standing-distance.ts';
+import { solveTopSpeed } from '../trials/top-speed.ts';
+import { slopeOf } from '../vehicle/road-load.ts';
+import type { Vehicle } from '../vehicle/vehicle.ts';
+import { type LimitWord, limitWords } from './evaluator.ts';
+import { orZero, type ReadCell } from './read-figures.ts';
+
+/** Where trials write: one row of metrics (SI) and of limits (index into limitWords); the trial in hand from `at` on. */
+export interface MetricSlots {
+  metrics: Float64Array;
+  limits: Uint8Array;
+  at: number;
+}
+
+/** Runs one trial on a vehicle that carries its load. The payload, first metric of every kind, is written by the caller. */
+export type TrialRunner = (vehicle: Vehicle, figures: Float64Array, out: MetricSlots) => void;
+
+type CompileRunner = (trial: Trial, own: ReadCell) => TrialRunner;
+
+const runners: Record<TrialKind, CompileRunner> = {
+  acceleration: ({ rating }, own) => {
+    const [from, to, grade] = [own('from'), own('to'), own('grade')];
+    return (vehicle, figures, out) => {
+      const result = solveAcceleration(vehicle, { fromMPerS: figures[from], toMPerS: figures[to], slope: slopeOf(orZero(figures[grade])), rating });
+      out.metrics[out.at + 1] = result.timeS;
+      out.metrics[out.at + 2] = result.distanceM;
+    };
+  },
+  'standing distance': ({ rating }, own) => {
+    const [distance, grade] = [own('distance'), own('grade')];
+    return (vehicle, figures, out) => {
+      const result = solveStandingDistance(vehicle, { distanceM: figures[distance], slope: slopeOf(orZero(figures[grade])), rating });
+      out.metrics[out.at + 1] = result.timeS;
+      out.metrics[out.at + 2] = result.endSpeedMPerS;
+    };
+  },
+  'top speed': ({ rating }, own) => {
+    const grade = own('grade');
+    return (vehicle, figures, out) => {
+      const result = solveTopSpeed(vehicle, { slope: slopeOf(orZero(figures[grade])), rating });
+      writeLimited(out, result.speedMPerS, result.limit);
+    };
+  },
+  gradeability: ({ rating }, own) => {
+    const at = own('at');
+    return (vehicle, figures, out) => {
+      const result = solveGradeability(vehicle, { speedMPerS: figures[at], rating });
+      writeLimited(out, result.grade, result.limit);
+    };
+  },
+  'hill start': ({ rating }, own) => {
+    const acceleration = own('startAcceleration');
+    return (vehicle, figures, out) => {
+      const result = solveHillStart(vehicle, { startAccelerationMPerS2: orZero(figures[acceleration]), rating });
+      writeLimited(out, result.grade, result.limit);
+    };
+  },
+  cycle: (trial, own) => {
+    const cycleOf = cycleReader(trial, own);
+    const result = createCycleResult();
+    return (vehicle, figures, out) => {
+      runCycle(vehicle, cycleOf(figures), result);
+      for (let k = 0; k < cycleFigures.length; k++) out.metrics[out.at + 1 + k] = cycleFigures[k](result);
+    };
+  },
+};
+
+/** Figures of a cycle in the order of its metrics after the payload. */
+const cycleFigureOf: Record<string, (result: CycleResult) => number> = {
+  batteryEnergy: (r) => r.batteryEnergyJPerM,
+  gridEnergy: (r) => r.gridEnergyJPerM,
+  range: (r) => r.rangeM,
+  wheelDemand: (r) => r.wheelDemandJPerM,
+  wheelBraking: (r) => r.wheelBrakingJPerM,
+  rmsTorque: (r) => r.rmsTorqueNm,
+  torqueLoad: (r) => r.torqueLoad,
+  lossLoad: (r) => r.lossLoad,
+  worstLossLoad: (r) => r.worstLossLoad,
+  offTrace: (r) => r.offTrace,
+  recovered: (r) => r.recovered,
+  outsideMap: (r) => r.outsideMap,
+  'energy.rolling': (r) => r.rollingJPerM,
+  'energy.air': (r) => r.airJPerM,
+  'energy.grade': (r) => r.gradeJPerM,
+  'energy.inertia': (r) => r.inertiaJPerM,
+  'energy.gearing': (r) => r.gearingJPerM,
+  'energy.motor': (r) => r.motorJPerM,
+  'energy.battery': (r) => r.batteryJPerM,
+  'energy.auxiliaries': (r) => r.auxiliariesJPerM,
+  'energy.brakes': (r) => r.brakesJPerM,
+  'energy.unmet': (r) => r.unmetJPerM,
+};
+const cycleFigures = trialKindRow('cycle')
+  .metrics.slice(1)
+  .map((name) => cycleFigureOf[name]);
+
+/** The runner of a trial. */
+export function compileRunner(trial: Trial, read: ReadCell): TrialRunner {
+  return runners[trial.kind](trial, (key) => read(`trials.${trial.name}.${key}`));
+}
+
+/** The prepared cycle of a trial; prepared again only when a design changes its grade or its speed cap. */
+function cycleReader(trial: Trial, own: ReadCell): (figures: Float64Array) => CompiledCycle {
+  const { trace, road } = trial;
+  if (trace === null) throw new Error(`cycle trial ${trial.name} has no trace`);
+  const [gradeCell, capCell] = [own('grade'), own('capSpeed')];
+  let grade = Number.NaN;
+  let capSpeedMPerS = Number.NaN;
+  let cycle: CompiledCycle | null = null;
+  return (figures) => {
+    const wantedGrade = orZero(figures[gradeCell]);
+    const wantedCap = figures[capCell];
+    if (cycle === null || wantedGrade !== grade || !Object.is(wantedCap, capSpeedMPerS)) {
+      grade = wantedGrade;
+      capSpeedMPerS = wantedCap;
+      cycle = compileCycle(trace, { grade, road, capSpeedMPerS });
+    }
+    return cycle;
+  };
+}
+
+function writeLimited(out: MetricSlots, value: number, limit: LimitWord): void {
+  out.metrics[out.at + 1] = value;
+  out.limits[out.at + 1] = limitWords.indexOf(limit);
+}
