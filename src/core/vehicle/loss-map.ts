@@ -12,3 +12,12 @@ export interface LossMap {
   readonly referencePeakTorqueNm: number;
   readonly referenceBaseSpeedRadPerS: number;
 }
+
+/**
+ * Losses (W) behind a measured efficiency at torque T ≠ 0 and speed ω > 0: T ω (1/e − 1) motoring, |T| ω (1 − e) generating.
+ * Interpolate these, never the efficiency.
+ */
+export function lossOfEfficiencyW(torqueNm: number, speedRadPerS: number, efficiency: number): number {
+  const shaftW = torqueNm * speedRadPerS;
+  return torqueNm >= 0 ? shaftW * (1 / efficiency - 1) : -shaftW * (1 - efficiency);
+}

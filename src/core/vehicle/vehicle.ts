@@ -5,7 +5,7 @@
 import type { FullLoadCurve } from './full-load-curve.ts';
 import type { LossMap } from './loss-map.ts';
 
-/** Coefficients of the loss law (see motor-losses.ts); SI, the dimensionless ones as fractions. */
+/** Coefficients of the loss law (see motor.ts); SI, the dimensionless ones as fractions. */
 export interface LossCoefficients {
   hysteresis: number;
   eddyS: number;
