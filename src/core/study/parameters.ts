@@ -66,6 +66,7 @@ export const parameters: readonly ParameterRow[] = [
   }),
   row('vehicle.wheelInertia', 'inertia', 2, 'wheel inertia', 'Moment of inertia of all wheels of the vehicle together, with what turns with them.', {
     ...notNegative,
+    default: 0,
     atMost: 1000,
   }),
   row('vehicle.massFactor', 'number', 4, 'mass factor', 'Effective over actual mass, fixed for every ratio and load instead of the inertias.', {
@@ -109,7 +110,7 @@ export const parameters: readonly ParameterRow[] = [
   row('motor.continuous.torque', 'share', 0, 'continuous torque', 'Continuous torque as a share of peak torque.', { above: 0, atMost: 1 }),
   row('motor.continuous.power', 'share', 0, 'continuous power', 'Continuous power as a share of peak power.', { above: 0, atMost: 1 }),
   row('motor.standstill', 'share', 0, 'standstill torque', 'Share of peak torque that the motor gives at a hill start.', { above: 0, atMost: 1, default: 1 }),
-  row('motor.inertia', 'inertia', 4, 'rotor inertia', 'Moment of inertia of the rotor and all that turns with it.', { ...notNegative, atMost: 100 }),
+  row('motor.inertia', 'inertia', 4, 'rotor inertia', 'Moment of inertia of the rotor and all that turns with it.', { ...notNegative, default: 0, atMost: 100 }),
   row('motor.inertia.perTorque', 'inertiaPerTorque', 6, 'rotor inertia per torque', 'Rotor inertia per newton metre of peak torque.', {
     ...notNegative,
     atMost: 0.01,
@@ -151,7 +152,7 @@ export const parameters: readonly ParameterRow[] = [
   }),
   row('gearing.dragTorque.perSpeed', 'torquePerSpeed', 5, 'gearing drag rise', 'Rise of that drag torque with motor speed.', { ...coefficient, atMost: 10 }),
   row('battery.voltage', 'voltage', 0, 'battery voltage', 'Open-circuit voltage of the pack, taken as constant.', { above: 10, atMost: 2000 }),
-  row('battery.resistance', 'resistance', 3, 'battery resistance', 'Internal resistance of the pack.', { ...notNegative, atMost: 10 }),
+  row('battery.resistance', 'resistance', 3, 'battery resistance', 'Internal resistance of the pack.', { ...notNegative, default: 0, atMost: 10 }),
   row(
     'battery.resistance.perEnergy',
     'resistanceEnergy',
@@ -204,9 +205,9 @@ export const parameters: readonly ParameterRow[] = [
 
 /** Numbers of a trial; in a study's own table they stand as `trials.<name>.<key>`. Which kind takes which: trial-kinds.ts. */
 export const trialParameters = {
-  payload: row('payload', 'mass', 0, 'payload', 'Mass carried beside the vehicle, driver included.', { ...notNegative, atMost: 100_000 }),
+  payload: row('payload', 'mass', 0, 'payload', 'Mass carried beside the vehicle, driver included.', { ...notNegative, default: 0, atMost: 100_000 }),
   laden: row('laden', 'mass', 0, 'laden mass', 'Mass of vehicle and payload together; the payload follows.', { above: 0, atMost: 200_000 }),
-  'trailer.mass': row('trailer.mass', 'mass', 0, 'trailer mass', 'Mass of the trailer.', { ...notNegative, atMost: 200_000 }),
+  'trailer.mass': row('trailer.mass', 'mass', 0, 'trailer mass', 'Mass of the trailer.', { ...notNegative, default: 0, atMost: 200_000 }),
   'trailer.dragArea': row('trailer.dragArea', 'area', 2, 'trailer drag area', 'Drag area that the trailer adds.', { ...notNegative, default: 0, atMost: 30 }),
   headWind: row('headWind', 'speed', 0, 'head wind', 'Wind against the vehicle; a tail wind is negative.', { default: 0, atLeast: -60, atMost: 60 }),
   grade: row('grade', 'grade', 1, 'grade', 'Slope of the road, rise over run; downhill is negative.', { default: 0, atLeast: -1, atMost: 1 }),
