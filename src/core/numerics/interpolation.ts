@@ -6,7 +6,7 @@ export function cellOf(axis: readonly number[], x: number): number {
   let high = axis.length - 1;
   while (high - low > 1) {
     const middle = (low + high) >> 1;
-    if (axis[middle]! <= x) low = middle;
+    if (axis[middle] <= x) low = middle;
     else high = middle;
   }
   return low;
@@ -14,15 +14,15 @@ export function cellOf(axis: readonly number[], x: number): number {
 
 /** Place of `x` in its cell, 0 to 1: held at the ends outside it. */
 export function placeInCell(axis: readonly number[], cell: number, x: number): number {
-  const from = axis[cell]!;
-  const share = (x - from) / (axis[cell + 1]! - from);
+  const from = axis[cell];
+  const share = (x - from) / (axis[cell + 1] - from);
   return Math.min(Math.max(share, 0), 1);
 }
 
 /** Piecewise linear `values` over a strictly rising `axis` of two points or more, held beyond its ends. Exact at the points. */
 export function interpolateLinear(axis: readonly number[], values: readonly number[], x: number): number {
   const cell = cellOf(axis, x);
-  return blend(values[cell]!, values[cell + 1]!, placeInCell(axis, cell, x));
+  return blend(values[cell], values[cell + 1], placeInCell(axis, cell, x));
 }
 
 /**
@@ -35,7 +35,7 @@ export function interpolateBilinear(xAxis: readonly number[], yAxis: readonly nu
   const yShare = placeInCell(yAxis, j, y);
   const near = i * yAxis.length + j;
   const far = near + yAxis.length;
-  return blend(blend(grid[near]!, grid[near + 1]!, yShare), blend(grid[far]!, grid[far + 1]!, yShare), placeInCell(xAxis, i, x));
+  return blend(blend(grid[near], grid[near + 1], yShare), blend(grid[far], grid[far + 1], yShare), placeInCell(xAxis, i, x));
 }
 
 /** `a` at share 0, `b` at share 1, both exactly. */

@@ -104,8 +104,8 @@ function mapLimitNm(motor: Motor, map: LossMap, allowedW: number, speedRadPerS: 
   const rest = cellOf(torques, 0);
   let lossW = blend(lossLineW(map, row, rowShare, rest), lossLineW(map, row, rowShare, rest + 1), placeInCell(torques, rest, 0)) * scale;
   if (left <= root * Math.sqrt(field) + lossW) return 0;
-  for (let column = torques[rest]! > 0 ? rest : rest + 1; column < torques.length; column++) {
-    const nextShare = torques[column]! / map.referencePeakTorqueNm;
+  for (let column = torques[rest] > 0 ? rest : rest + 1; column < torques.length; column++) {
+    const nextShare = torques[column] / map.referencePeakTorqueNm;
     const nextLossW = lossLineW(map, row, rowShare, column) * scale;
     const needed = nextShare * (square * nextShare + linear) + root * Math.sqrt(nextShare * nextShare + field) + nextLossW;
     if (needed >= left) {
@@ -121,5 +121,5 @@ function mapLimitNm(motor: Motor, map: LossMap, allowedW: number, speedRadPerS: 
 /** Measured loss (W) on torque line `column`, at a place between two speed rows. */
 function lossLineW(map: LossMap, row: number, rowShare: number, column: number): number {
   const at = row * map.torquesNm.length + column;
-  return blend(map.lossesW[at]!, map.lossesW[at + map.torquesNm.length]!, rowShare);
+  return blend(map.lossesW[at], map.lossesW[at + map.torquesNm.length], rowShare);
 }

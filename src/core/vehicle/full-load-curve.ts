@@ -20,7 +20,7 @@ export function fullLoadCurve(
   statedBaseSpeedRadPerS?: number,
 ): FullLoadCurve {
   const largestTorqueNm = Math.max(...torquesNm);
-  const largestPowerW = Math.max(...torquesNm.map((torqueNm, k) => torqueNm * speedsRadPerS[k]!));
+  const largestPowerW = Math.max(...torquesNm.map((torqueNm, k) => torqueNm * speedsRadPerS[k]));
   return {
     speedsRadPerS,
     torquesNm,
@@ -31,5 +31,5 @@ export function fullLoadCurve(
 
 /** Maximum speed (rad/s) of a motor of that base speed under this curve. */
 export function curveMaxSpeedRadPerS(curve: FullLoadCurve, baseSpeedRadPerS: number): number {
-  return curve.speedsRadPerS[curve.speedsRadPerS.length - 1]! * (baseSpeedRadPerS / curve.referenceBaseSpeedRadPerS);
+  return curve.speedsRadPerS[curve.speedsRadPerS.length - 1] * (baseSpeedRadPerS / curve.referenceBaseSpeedRadPerS);
 }

@@ -112,8 +112,8 @@ export function isOutsideMap(motor: Motor, torqueNm: number, speedRadPerS: numbe
 }
 
 function isOutside(axis: readonly number[], x: number): boolean {
-  const first = axis[0]!;
-  const last = axis[axis.length - 1]!;
+  const first = axis[0];
+  const last = axis[axis.length - 1];
   const room = EDGE * (last - first);
   return x < first - room || x > last + room;
 }

@@ -26,7 +26,7 @@ export function shiftSpeedMPerS(vehicle: Vehicle, rating: DrivingRating, slope: 
   const higher = tractionBreakSpeeds(vehicle, 1, rating, slope, 0, end);
   const stretches = [0, ...[...lower, ...higher].sort((a, b) => a - b), end];
   for (let k = 1; k < stretches.length; k++) {
-    const [first] = signChanges(gainN, stretches[k - 1]!, stretches[k]!, PIECES);
+    const [first] = signChanges(gainN, stretches[k - 1], stretches[k], PIECES);
     if (first !== undefined) return first;
   }
   return end;

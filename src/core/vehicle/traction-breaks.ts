@@ -89,13 +89,13 @@ function adhesionBreaksMPerS(vehicle: Vehicle, gear: Gear, rating: DrivingRating
   const mostNm = motor.fullLoad === null ? motor.peakTorqueNm : Math.max(...branchEndsRadPerS(motor).map((speed) => peakTorqueLimitNm(motor, speed)));
   const mostN = (mostNm * gearing.ratios[gear] * gearing.efficiencies[gear]) / wheelRadiusM;
   // Adhesion rises or falls throughout with speed: it is least at one of the ends.
-  if (Math.min(grip(stretches[0]!), grip(stretches[stretches.length - 1]!)) > mostN) return [];
+  if (Math.min(grip(stretches[0]), grip(stretches[stretches.length - 1])) > mostN) return [];
   return crossings(stretches, (speed) => driveForceN(vehicle, gear, speed, rating) - grip(speed), PIECES);
 }
 
 function crossings(stretches: readonly number[], f: (x: number) => number, pieces: number): number[] {
   const found: number[] = [];
-  for (let k = 1; k < stretches.length; k++) found.push(...signChanges(f, stretches[k - 1]!, stretches[k]!, pieces));
+  for (let k = 1; k < stretches.length; k++) found.push(...signChanges(f, stretches[k - 1], stretches[k], pieces));
   return found;
 }
 
