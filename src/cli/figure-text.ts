@@ -1,0 +1,73 @@
+/** Figures of a study in the units its readers asked for, and the words around them. */
+
+import type { Study } from '../core/study/study.ts';
+import { type Format, formatFigure, formatQuantity } from '../core/units/format-quantity.ts';
+import { fromSi, type Quantity, readingUnit } from '../core/units/units.ts';
+
+/** What decides how a figure is printed. */
+export interface FigureKind {
+  readonly quantity: Quantity;
+  readonly decimals: number;
+}
+
+/** Figure and unit as two cells, so that a table can align them; money carries the study's currency. */
+export function figureCells(si: number, { quantity, decimals }: FigureKind, study: Study): [string, string] {
+  const unit = readingUnit(quantity, study.report.units);
+  return [formatFigure(fromSi(si, unit), decimals), Number.isNaN(si) ? '' : unitText(quantity, study)];
+}
+
+/** Figure and unit as one text. */
+export function figureText(si: number, { quantity, decimals }: FigureKind, study: Study): string {
+  return withCurrency(formatQuantity(si, quantity, formatOf(decimals, study)), quantity, study);
+}
+
+/** How the core's formatters are to print for the readers of this study. */
+export function formatOf(decimals: number, study: Study): Format {
+  return { decimals, system: study.report.units };
+}
+
+/** The unit as people read it; the currency for money. */
+export function unitText(quantity: Quantity, study: Study): string {
+  return quantity === 'money' ? (study.currency ?? '') : readingUnit(quantity, study.report.units).symbol;
+}
+
+/** Adds the currency to a printed amount; other figures carry their unit already. */
+export function withCurrency(printed: string, quantity: Quantity, study: Study): string {
+  return quantity === 'money' && study.currency !== null ? `${printed} ${study.currency}` : printed;
+}
+
+/** A whole number of things: `62 400`. */
+export function count(value: number): string {
+  return formatFigure(value, 0);
+}
+
+/** `1 design`, `2 designs`, `62 400 designs`. */
+export function countOf(value: number, noun: string): string {
+  return `${count(value)} ${value === 1 ? noun : `${noun}s`}`;
+}
+
+/** A duration as people say it: `0.8 s`, `42 s`, `3 min 05 s`, `2 h 10 min`. */
+export function durationText(seconds: number): string {
+  if (seconds < 9.95) return `${seconds.toFixed(1)} s`;
+  const whole = Math.round(seconds);
+  if (whole < 60) return `${whole} s`;
+  if (whole < 3600) return `${Math.floor(whole / 60)} min ${String(whole % 60).padStart(2, '0')} s`;
+  const minutes = Math.round(seconds / 60);
+  return `${Math.floor(minutes / 60)} h ${String(minutes % 60).padStart(2, '0')} min`;
+}
+
+/** A share in per cent that shows 0 only for none and 100 only for all: `0.02 %`, `31 %`, `99.9 %`. */
+export function shareText(share: number): string {
+  const percent = share * 100;
+  if (percent === 0 || percent === 100) return `${percent} %`;
+  if (percent < 0.01) return 'below 0.01 %';
+  if (percent > 99.9) return 'above 99.9 %';
+  return percent < 1 ? `${percent.toPrecision(1)} %` : `${percent.toFixed(percent > 99 || percent < 10 ? 1 : 0)} %`;
+}
+
+/** A size on disk: `840 kB`, `3.2 MB`. */
+export function sizeText(bytes: number): string {
+  if (bytes < 999_500) return `${Math.max(1, Math.round(bytes / 1000))} kB`;
+  const [size, symbol] = bytes < 999_500_000 ? [bytes / 1e6, 'MB'] : [bytes / 1e9, 'GB'];
+  return `${size.toFixed(size < 9.95 ? 1 : 0)} ${symbol}`;
+}

@@ -1,0 +1,75 @@
+/** Progress for people: one moving line on a terminal, plain lines at the start, about every half minute and at the end elsewhere. */
+import { count, durationText, shareText } from './figure-text.ts';
+import { movingAllowed, say, terminalWidth } from './terminal.ts';
+
+/** How far a run is. */
+export interface Standing {
+  readonly done: number;
+  readonly total: number;
+  /** Designs that met every requirement, among those done. */
+  readonly feasible: number;
+  /** Designs on the front so far. */
+  readonly front: number;
+}
+
+/** Something that shows progress until it is told to stop. */
+export interface Progress {
+  update(standing: Standing): void;
+  /** Leaves the line as it stands, or says the last one. */
+  end(): void;
+}
+
+const movingEveryMs = 100;
+const plainEveryMs = 30_000;
+
+/** One line of progress without a bar: `12 000 of 62 400 designs, 8300/s, 6 s left, 31 % feasible, 48 on the front`. */
+export function progressText(standing: Standing, elapsedMs: number): string {
+  const { done, total, feasible, front } = standing;
+  const perS = elapsedMs > 0 ? (done * 1000) / elapsedMs : 0;
+  const parts = [`${count(done)} of ${count(total)} designs`];
+  if (perS > 0) parts.push(`${rateText(perS)}/s`, done < total ? `${durationText((total - done) / perS)} left` : `${durationText(elapsedMs / 1000)} in all`);
+  if (done > 0) parts.push(`${shareText(feasible / done)} feasible`, `${count(front)} on the front`);
+  return parts.join(', ');
+}
+
+/** The moving line: a bar in front of the text, cut to the width of the terminal. */
+export function progressLine(standing: Standing, elapsedMs: number, width: number): string {
+  const share = standing.total > 0 ? Math.min(1, standing.done / standing.total) : 1;
+  const filled = Math.round(share * barWidth);
+  const bar = '█'.repeat(filled) + '░'.repeat(barWidth - filled);
+  return `${bar} ${String(Math.floor(share * 100)).padStart(3)} %  ${progressText(standing, elapsedMs)}`.slice(0, width - 1);
+}
+
+const barWidth = 20;
+
+/** Shows progress as the terminal allows. Starts counting time now. */
+export function startProgress(total: number, now: () => number = Date.now): Progress {
+  const moving = movingAllowed();
+  const began = now();
+  let last: Standing = { done: 0, total, feasible: 0, front: 0 };
+  let shown = began;
+  draw();
+
+  function draw(): void {
+    const elapsed = now() - began;
+    if (moving) process.stderr.write(`\r${progressLine(last, elapsed, terminalWidth())}\u001b[K`);
+    else say(progressText(last, elapsed));
+  }
+
+  return {
+    update(standing) {
+      last = standing;
+      if (now() - shown < (moving ? movingEveryMs : plainEveryMs)) return;
+      shown = now();
+      draw();
+    },
+    end() {
+      draw();
+      if (moving) say();
+    },
+  };
+}
+
+function rateText(perS: number): string {
+  return count(perS >= 1000 ? Math.round(perS / 100) * 100 : Math.round(perS));
+}

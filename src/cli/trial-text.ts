@@ -1,0 +1,31 @@
+/** Trials in words: their conditions, and what limits a result or keeps it from existing. */
+import type { LimitWord } from '../core/evaluate/evaluator.ts';
+import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
+import type { Study, Trial } from '../core/study/study.ts';
+import { trialKindRow } from '../core/study/trial-kinds.ts';
+import { figureText } from './figure-text.ts';
+
+/** `acceleration, from 0 km/h, to 80 km/h, laden mass 2800 kg, peak rating`: the conditions as given, defaults left out. */
+export function trialConditions(study: Study, trial: Trial): string {
+  const kind = trialKindRow(trial.kind);
+  const given = kind.takes.flatMap((key) => {
+    const row: ParameterRow = trialParameters[key];
+    const value = study.values[`trials.${trial.name}.${key}`];
+    return value === undefined || value === row.default ? [] : [`${row.label} ${figureText(value, row, study)}`];
+  });
+  const replaced = Object.entries(trial.with).map(([name, value]) => `${name} ${figureText(value, findParameter(name) as ParameterRow, study)}`);
+  return [
+    trial.trace === null ? trial.kind : `cycle ${trial.trace.name}`,
+    ...given,
+    ...(trial.road === null ? [] : [`road ${trial.road.name}`]),
+    ...(kind.rating === null ? [] : [`${trial.rating} rating`]),
+    ...(replaced.length === 0 ? [] : [`with ${replaced.join(', ')}`]),
+  ].join(', ');
+}
+
+/** What stands beside a result: `limited by adhesion`; for one that does not exist, why. */
+export function limitText(limit: LimitWord, exists: boolean): string {
+  if (limit === '') return exists ? '' : 'not reached';
+  if (exists) return limit === 'beyond 45°' ? limit : `limited by ${limit}`;
+  return limit === 'motor speed' ? 'beyond maximum motor speed' : limit;
+}
