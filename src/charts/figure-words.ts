@@ -1,0 +1,69 @@
+/** Columns and figures in the words and units people read, the same on charts and in the page. */
+import type { ResultColumn } from '../core/evaluate/result-columns.ts';
+import type { Study } from '../core/study/study.ts';
+import { formatFigure, formatQuantity } from '../core/units/format-quantity.ts';
+import { fromSi, type Quantity, readingUnit } from '../core/units/units.ts';
+import { shortText } from './visible-text.ts';
+
+/** What has a quantity and decimals: a column, a metric, a parameter. */
+export interface Measured {
+  readonly quantity: Quantity;
+  readonly decimals: number;
+}
+
+/** What a column tells: the measure, and the trial it is measured in (null: of the design itself). Study text is not yet made visible. */
+export function columnWords(column: Pick<ResultColumn, 'name' | 'label' | 'role'>, study: Study): { measure: string; trial: string | null } {
+  const prefix = column.role === 'input' ? 'trials.' : '';
+  const trial = column.role === 'option' ? undefined : study.trials.find(({ name }) => column.name.startsWith(`${prefix}${name}.`));
+  if (trial === undefined) return { measure: column.label, trial: null };
+  // The label has the trial in front: `ramp: grade` of a metric, `ramp.laden` of an input.
+  return { measure: column.label.slice(trial.name.length + (column.role === 'metric' ? 2 : 1)), trial: trial.name };
+}
+
+/** `battery energy in stops`, on one line and of a bearable length. */
+export function columnPhrase(column: ResultColumn, study: Study): string {
+  const { measure, trial } = columnWords(column, study);
+  return trial === null ? shortText(measure, 60) : `${shortText(measure, 40)} in ${shortText(trial, 40)}`;
+}
+
+/** The first letter in upper case. */
+export function capitalised(text: string): string {
+  return text.slice(0, 1).toUpperCase() + text.slice(1);
+}
+
+/** Symbol of the unit people read, the currency for money; empty for pure numbers. */
+export function unitWord(quantity: Quantity, study: Study): string {
+  return quantity === 'money' ? shortText(study.currency ?? '', 12) : readingUnit(quantity, study.report.units).symbol;
+}
+
+/** A figure with its unit; a dash where it does not exist. */
+export function figureText(value: number | null, measured: Measured, study: Study): string {
+  if (value === null || Number.isNaN(value)) return '—';
+  return withCurrency(formatQuantity(value, measured.quantity, { decimals: measured.decimals, system: study.report.units }), measured.quantity, study);
+}
+
+/** Adds the currency to a figure that is money. */
+export function withCurrency(text: string, quantity: Quantity, study: Study): string {
+  const currency = unitWord(quantity, study);
+  return quantity === 'money' && currency !== '' ? `${text}\u202f${currency}` : text;
+}
+
+/** A value of a column: the option's name, or a figure with its unit. */
+export function valueText(value: number | null, column: ResultColumn, study: Study): string {
+  if (column.labels === null) return figureText(value, column, study);
+  return value === null ? '—' : shortText(column.labels[value] ?? '—', 60);
+}
+
+/** The size of a difference between two SI values, in decimals enough that a difference never reads as none; percentages differ by percentage points. */
+export function differenceText(difference: number, measured: Measured, study: Study): string {
+  const unit = readingUnit(measured.quantity, study.report.units);
+  const size = Math.abs((difference * unit.divisor) / unit.factor);
+  const figure = size !== 0 && Number(size.toFixed(measured.decimals)) === 0 ? size.toPrecision(1) : formatFigure(size, measured.decimals);
+  const word = unit.symbol === '%' ? 'percentage points' : unitWord(measured.quantity, study);
+  return word === '' ? figure : `${figure}\u202f${word}`;
+}
+
+/** A value in the unit people read, as a plain number; for options the index. */
+export function readingValue(value: number, column: ResultColumn, study: Study): number {
+  return column.labels === null ? fromSi(value, readingUnit(column.quantity, study.report.units)) : value;
+}
