@@ -21,47 +21,62 @@ export function signChange(f: RealFunction, from: number, to: number): number {
 export function signChanges(f: RealFunction, from: number, to: number, intervals: number): number[] {
   const found: number[] = [];
   const step = (to - from) / intervals;
-  let [x0, f0] = [from, f(from)];
-  let [x1, f1] = [from + step, f(from + step)];
+  let [x0, x1] = [from, from + step];
+  let [f0, f1] = [f(x0), f(x1)];
   if (f0 > 0 !== f1 > 0) found.push(changeBetween(f, x0, f0, x1, f1));
   for (let k = 2; k <= intervals; k++) {
     const x2 = k === intervals ? to : from + k * step;
     const f2 = f(x2);
-    const upright = f1 > 0 ? 1 : -1;
-    const dips = f0 > 0 === f1 > 0 && f1 > 0 === f2 > 0 && upright * f1 <= upright * f0 && upright * f1 <= upright * f2;
-    if (dips) dipChanges(f, [x0, x1, x2], [f0, f1, f2], upright, found);
+    if (f0 > 0 === f1 > 0 && f1 > 0 === f2 > 0) {
+      const triple = { a: x0, b: x1, c: x2, fa: f0, fb: f1, fc: f2, upright: f1 > 0 ? 1 : -1 };
+      const below = triple.upright * (f0 - f1);
+      const beyond = triple.upright * (f2 - f1);
+      // A dip is followed from its lowest point alone; at the two ends that may be an outer one.
+      if (below >= 0 && beyond >= 0) followDip(f, triple, x0, x2, found);
+      else if (k === 2 && below < 0) followDip(f, triple, x0, x1, found);
+      else if (k === intervals && beyond < 0) followDip(f, triple, x1, x2, found);
+    }
     if (f1 > 0 !== f2 > 0) found.push(changeBetween(f, x1, f1, x2, f2));
     [x0, f0, x1, f1] = [x1, f1, x2, f2];
   }
   return found;
 }
 
-/** Slides down a dip of f · upright by parabolas; pushes the two changes beside a point beyond zero, if there is one. */
-function dipChanges(f: RealFunction, xs: [number, number, number], fs: [number, number, number], upright: number, found: number[]): void {
-  let [a, b, c] = xs;
-  let [fa, fb, fc] = fs;
+/** Three neighbouring points of one sign, `upright` 1 where they are positive, else −1. */
+interface Triple {
+  a: number;
+  b: number;
+  c: number;
+  fa: number;
+  fb: number;
+  fc: number;
+  readonly upright: number;
+}
+
+/** Slides towards zero by parabolas, inside (from, to); pushes the two changes beside a point beyond zero, if there is one. */
+function followDip(f: RealFunction, t: Triple, from: number, to: number, found: number[]): void {
   for (let round = 0; round < 12; round++) {
-    const x = bottom(a, b, c, fa, fb, fc);
-    if (!(x > a && x < c) || x === b) return;
+    const x = bottom(t);
+    if (!(x > from && x < to) || x === t.b) return;
     const fx = f(x);
-    if (fx > 0 !== fb > 0) {
-      found.push(changeBetween(f, a, fa, x, fx), changeBetween(f, x, fx, c, fc));
+    if (fx > 0 !== t.fb > 0) {
+      found.push(changeBetween(f, t.a, t.fa, x, fx), changeBetween(f, x, fx, t.c, t.fc));
       return;
     }
-    const lower = upright * fx < upright * fb;
     // A bottom that no longer sinks, far from zero, will not cross it.
-    if (Math.abs(fx - fb) < 0.01 * Math.abs(fb)) return;
-    if (lower && x > b) [a, fa, b, fb] = [b, fb, x, fx];
-    else if (lower) [c, fc, b, fb] = [b, fb, x, fx];
-    else if (x > b) [c, fc] = [x, fx];
-    else [a, fa] = [x, fx];
+    if (Math.abs(fx - t.fb) < 0.01 * Math.abs(t.fb)) return;
+    const lower = t.upright * fx < t.upright * t.fb;
+    if (x > t.b === lower) [t.a, t.fa] = lower ? [t.b, t.fb] : [x, fx];
+    else [t.c, t.fc] = lower ? [t.b, t.fb] : [x, fx];
+    if (lower) [t.b, t.fb] = [x, fx];
   }
 }
 
-/** Bottom (or top) of the parabola through three points; NaN where they lie on a line. */
-function bottom(a: number, b: number, c: number, fa: number, fb: number, fc: number): number {
+/** Bottom of the parabola through the three points (top where they are negative); NaN where it has none. */
+function bottom({ a, b, c, fa, fb, fc, upright }: Triple): number {
   const left = (b - a) * (fb - fc);
   const right = (b - c) * (fb - fa);
+  if (!(upright * (left - right) < 0)) return Number.NaN;
   return b - (0.5 * ((b - a) * left - (b - c) * right)) / (left - right);
 }
 
