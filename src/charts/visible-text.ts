@@ -1,9 +1,9 @@
 /** Text of a study made fit to show: characters that are invisible, reorder what stands beside them or break XML are shown by their code. */
 
-/** Controls but tab and line feed, line and paragraph separators, marks and overrides of direction, zero-width characters, lone surrogates, noncharacters. */
-const hidden = /[\0-\x08\x0b-\x1f\x7f-\x9f\xad\u061c\u180e\u200b\u200e\u200f\u2028-\u202e\u2060-\u206f\ufeff\ufff9-\uffff]|\p{Surrogate}/gu;
+/** Controls, format characters (marks and overrides of direction among them), separators of lines and paragraphs, lone surrogates, noncharacters. */
+const hidden = /(?![\t\n\r\u200c\u200d])[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Cs}\p{Noncharacter_Code_Point}]/gu;
 
-/** The same text with each such character as `[U+202E]`; joiners inside emoji stay. */
+/** The same text with each such character as `[U+202E]`; tabs, line ends and the joiners inside emoji and words stay. */
 export function visibleText(text: string): string {
   return text.replace(hidden, (character) => `[U+${(character.codePointAt(0) as number).toString(16).toUpperCase().padStart(4, '0')}]`);
 }
