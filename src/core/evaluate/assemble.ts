@@ -166,7 +166,6 @@ function blankVehicle(driven: Study['driven']): Vehicle {
       dragNS2PerM2: no,
       headWindMPerS: no,
       weightN: no,
-      carriedWeightN: no,
       carriedRollingN: no,
       carriedRollingPerSpeed2NS2PerM2: no,
     },
