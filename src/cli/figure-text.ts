@@ -1,39 +1,13 @@
-/** Figures of a study in the units its readers asked for, and the words around them. */
-
+/** Figures for the terminal: cells of tables, counts, durations, shares and sizes. The words of a study's figures are those of the charts. */
+import { type Measured, unitWord } from '../charts/figure-words.ts';
 import type { Study } from '../core/study/study.ts';
-import { type Format, formatFigure, formatQuantity } from '../core/units/format-quantity.ts';
-import { fromSi, type Quantity, readingUnit } from '../core/units/units.ts';
+import { formatFigure } from '../core/units/format-quantity.ts';
+import { fromSi, readingUnit } from '../core/units/units.ts';
 
-/** What decides how a figure is printed. */
-export interface FigureKind {
-  readonly quantity: Quantity;
-  readonly decimals: number;
-}
-
-/** Figure and unit as two cells, so that a table can align them; money carries the study's currency. */
-export function figureCells(si: number, { quantity, decimals }: FigureKind, study: Study): [string, string] {
+/** Figure and unit as two cells, so that a table can align them; money carries the study's currency, NaN is a dash. */
+export function figureCells(si: number, { quantity, decimals }: Measured, study: Study): [string, string] {
   const unit = readingUnit(quantity, study.report.units);
-  return [formatFigure(fromSi(si, unit), decimals), Number.isNaN(si) ? '' : unitText(quantity, study)];
-}
-
-/** Figure and unit as one text. */
-export function figureText(si: number, { quantity, decimals }: FigureKind, study: Study): string {
-  return withCurrency(formatQuantity(si, quantity, formatOf(decimals, study)), quantity, study);
-}
-
-/** How the core's formatters are to print for the readers of this study. */
-export function formatOf(decimals: number, study: Study): Format {
-  return { decimals, system: study.report.units };
-}
-
-/** The unit as people read it; the currency for money. */
-export function unitText(quantity: Quantity, study: Study): string {
-  return quantity === 'money' ? (study.currency ?? '') : readingUnit(quantity, study.report.units).symbol;
-}
-
-/** Adds the currency to a printed amount; other figures carry their unit already. */
-export function withCurrency(printed: string, quantity: Quantity, study: Study): string {
-  return quantity === 'money' && study.currency !== null ? `${printed} ${study.currency}` : printed;
+  return [formatFigure(fromSi(si, unit), decimals), Number.isNaN(si) ? '' : unitWord(quantity, study)];
 }
 
 /** A whole number of things: `62 400`. */

@@ -1,9 +1,10 @@
 /** Trials in words: their conditions, and what limits a result or keeps it from existing. */
+import { figureText, neededDecimals } from '../charts/figure-words.ts';
+import { visibleText } from '../charts/visible-text.ts';
 import type { LimitWord } from '../core/evaluate/evaluator.ts';
 import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
 import type { Study, Trial } from '../core/study/study.ts';
 import { trialKindRow } from '../core/study/trial-kinds.ts';
-import { figureText } from './figure-text.ts';
 
 /** `acceleration, from 0 km/h, to 80 km/h, laden mass 2800 kg, peak rating`: the conditions as given, defaults left out. */
 export function trialConditions(study: Study, trial: Trial): string {
@@ -11,16 +12,22 @@ export function trialConditions(study: Study, trial: Trial): string {
   const given = kind.takes.flatMap((key) => {
     const row: ParameterRow = trialParameters[key];
     const value = study.values[`trials.${trial.name}.${key}`];
-    return value === undefined || value === row.default ? [] : [`${row.label} ${figureText(value, row, study)}`];
+    return value === undefined || value === row.default ? [] : [`${row.label} ${givenText(value, row, study)}`];
   });
-  const replaced = Object.entries(trial.with).map(([name, value]) => `${name} ${figureText(value, findParameter(name) as ParameterRow, study)}`);
-  return [
+  const replaced = Object.entries(trial.with).map(([name, value]) => `${name} ${givenText(value, findParameter(name) as ParameterRow, study)}`);
+  const parts = [
     trial.trace === null ? trial.kind : `cycle ${trial.trace.name}`,
     ...given,
     ...(trial.road === null ? [] : [`road ${trial.road.name}`]),
     ...(kind.rating === null ? [] : [`${trial.rating} rating`]),
     ...(replaced.length === 0 ? [] : [`with ${replaced.join(', ')}`]),
-  ].join(', ');
+  ];
+  return visibleText(parts.join(', '));
+}
+
+/** A figure as given, in no more decimals than it needs. */
+export function givenText(value: number, row: ParameterRow, study: Study): string {
+  return figureText(value, { quantity: row.quantity, decimals: neededDecimals(value, row, study) }, study);
 }
 
 /** What stands beside a result: `limited by adhesion`; for one that does not exist, why. */

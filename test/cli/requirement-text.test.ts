@@ -30,6 +30,8 @@ function plain(text: string): string {
   return text.replaceAll('\u202f', ' ');
 }
 
+const verdictOf = (...args: Parameters<typeof verdictText>) => plain(verdictText(...args));
+
 describe('requirements in words', () => {
   it('says the bound in the unit of the reader', () => {
     expect(plain(boundText(grade, trialMetrics.grade, study))).toBe('at least 20.0 %');
@@ -38,21 +40,21 @@ describe('requirements in words', () => {
   });
 
   it('says by how much a requirement is met or missed, percentages in points', () => {
-    expect(verdictText(0.245, grade, trialMetrics.grade, study)).toBe('met, 4.5 percentage points to spare');
-    expect(verdictText(12.03, time, trialMetrics.time, study)).toBe('MISSED by 0.53 s');
-    expect(verdictText(11.5, time, trialMetrics.time, study)).toBe('met, nothing to spare');
+    expect(verdictOf(0.245, grade, trialMetrics.grade, study)).toBe('met, 4.5 percentage points to spare');
+    expect(verdictOf(12.03, time, trialMetrics.time, study)).toBe('MISSED by 0.53 s');
+    expect(verdictOf(11.5, time, trialMetrics.time, study)).toBe('met, nothing to spare');
   });
 
   it('calls a metric that does not exist a miss', () => {
     expect(meets(Number.NaN, time)).toBe(false);
-    expect(verdictText(Number.NaN, time, trialMetrics.time, study)).toBe('MISSED: there is no value');
+    expect(verdictOf(Number.NaN, time, trialMetrics.time, study)).toBe('MISSED: there is no value');
     expect(valueBesideLimit(Number.NaN, time, trialMetrics.time, study)).toBe('—');
   });
 
   it('tells a requirement that every cycle must be followed apart from written ones', () => {
     const followed: Requirement = { metric: 'town.offTrace', bound: 'atMost', limit: 0, implied: true };
-    expect(verdictText(0, followed, trialMetrics.offTrace, study)).toBe('met (asked of every cycle)');
-    expect(verdictText(0.0055, followed, trialMetrics.offTrace, study)).toBe('MISSED by 0.55 percentage points (asked of every cycle)');
+    expect(verdictOf(0, followed, trialMetrics.offTrace, study)).toBe('met (asked of every cycle)');
+    expect(verdictOf(0.0055, followed, trialMetrics.offTrace, study)).toBe('MISSED by 0.55 percentage points (asked of every cycle)');
   });
 
   it('never prints a miss as met or with a margin of zero, however small it is', () => {
@@ -60,7 +62,7 @@ describe('requirements in words', () => {
       fc.property(fc.double({ min: 1e-12, max: 1, noNaN: true }), (miss) => {
         const value = 11.5 + miss;
         fc.pre(value > 11.5);
-        const verdict = verdictText(value, time, trialMetrics.time, study);
+        const verdict = verdictOf(value, time, trialMetrics.time, study);
         expect(verdict).toMatch(/^MISSED by /);
         expect(Number.parseFloat(verdict.slice('MISSED by '.length))).toBeGreaterThan(0);
         const printed = plain(valueBesideLimit(value, time, trialMetrics.time, study));

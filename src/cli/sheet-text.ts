@@ -1,0 +1,112 @@
+/** A design's sheet for people: inputs, trials with what limits them, cycles side by side, requirements with their margins. */
+import { neededDecimals, unitWord } from '../charts/figure-words.ts';
+import { visibleText } from '../charts/visible-text.ts';
+import { cautionLine } from '../core/study/cautions.ts';
+import type { Trial } from '../core/study/study.ts';
+import type { DesignSheet, SheetMetric } from './design-sheet.ts';
+import { count, figureCells } from './figure-text.ts';
+import { boundText, meets, valueBesideLimit, verdictText } from './requirement-text.ts';
+import { columns } from './table.ts';
+import { ink } from './terminal.ts';
+import { limitText, trialConditions } from './trial-text.ts';
+
+type Align = 'left' | 'right';
+
+/** Cycles that stand side by side. */
+const cyclesAbreast = 5;
+
+/** The whole sheet; warnings are those of the study. */
+export function sheetText(sheet: DesignSheet, warnings: readonly string[]): string {
+  const cycles = sheet.study.trials.filter((trial) => trial.kind === 'cycle');
+  const groups = Array.from({ length: Math.ceil(cycles.length / cyclesAbreast) }, (_, at) => cycles.slice(at * cyclesAbreast, (at + 1) * cyclesAbreast));
+  const parts = [
+    sheet.study.title === '' ? '' : ink('bold', visibleText(sheet.study.title)),
+    whichDesign(sheet),
+    block('Inputs', inputRows(sheet), ['left', 'right', 'left']),
+    fullPedalBlock(sheet),
+    ...groups.map((group) => cycleBlock(sheet, group)),
+    block('Drive unit and vehicle', wholeDesignRows(sheet), ['left', 'right', 'left']),
+    block('Requirements', requirementRows(sheet), ['left', 'left', 'right', 'left']),
+    block(
+      'Warnings',
+      warnings.map((warning) => [warning]),
+    ),
+    cautionLine,
+  ];
+  return parts.filter((part) => part !== '').join('\n\n');
+}
+
+function block(title: string, rows: readonly (readonly string[])[], align: readonly Align[] = []): string {
+  return rows.length === 0 ? '' : `${ink('bold', title)}\n${columns(rows, { indent: 2, align })}`;
+}
+
+function whichDesign(sheet: DesignSheet): string {
+  const base = sheet.number === 0 ? "Design 0, the reference: the study's own figures" : `Design ${count(sheet.number)} of the search`;
+  const names = sheet.settings.map((setting) => setting.name);
+  return names.length === 0 ? base : `${base}, with ${names.join(', ')} set`;
+}
+
+function inputRows(sheet: DesignSheet): string[][] {
+  if (sheet.study.axes.length === 0 && sheet.settings.length === 0) return [];
+  return sheet.inputs.map((input) => {
+    const decimals = neededDecimals(input.value, input, sheet.study);
+    return [visibleText(input.name), ...figureCells(input.value, { quantity: input.quantity, decimals }, sheet.study)];
+  });
+}
+
+/** Each trial's conditions, and under them its results, aligned over all trials. */
+function fullPedalBlock(sheet: DesignSheet): string {
+  const trials = sheet.study.trials.filter((trial) => trial.kind !== 'cycle');
+  const rows = trials.flatMap((trial) => resultsOf(sheet, trial).map((metric) => resultRow(sheet, metric)));
+  if (rows.length === 0) return '';
+  const lines = columns(rows, { indent: 4, align: ['left', 'right', 'left', 'left'] }).split('\n');
+  const body = trials.flatMap((trial) => [
+    `  ${ink('bold', visibleText(trial.name))}: ${trialConditions(sheet.study, trial)}`,
+    ...lines.splice(0, resultsOf(sheet, trial).length),
+  ]);
+  return [ink('bold', 'Full-pedal trials'), ...body].join('\n');
+}
+
+function resultsOf(sheet: DesignSheet, trial: Trial): SheetMetric[] {
+  return sheet.metrics.filter(({ column }) => column.trial === trial.name);
+}
+
+function resultRow(sheet: DesignSheet, { column, value, limit }: SheetMetric): string[] {
+  return [column.row.label, ...figureCells(value, column.row, sheet.study), limitText(limit, !Number.isNaN(value))];
+}
+
+/** Cycles side by side: one line per metric that at least one of them has. */
+function cycleBlock(sheet: DesignSheet, cycles: readonly Trial[]): string {
+  const results = cycles.map((trial) => resultsOf(sheet, trial));
+  const rows = (results[0] ?? []).flatMap(({ column }, at) => {
+    const metrics = results.map((metricsOfOne) => metricsOfOne[at] as SheetMetric);
+    if (metrics.every((metric) => Number.isNaN(metric.value) && metric.limit === '')) return [];
+    const label = column.row.name.startsWith('energy.') ? `  to ${column.row.label}` : column.row.label;
+    return [[label, unitWord(column.row.quantity, sheet.study), ...metrics.map((metric) => cycleCell(sheet, metric))]];
+  });
+  const head = ['', '', ...cycles.map((trial) => visibleText(trial.name))];
+  const align: Align[] = ['left', 'left', ...cycles.map((): Align => 'right')];
+  const conditions = cycles.map((trial) => `  ${ink('bold', visibleText(trial.name))}: ${trialConditions(sheet.study, trial)}`);
+  return [ink('bold', 'Cycles'), ...conditions, columns([head, ...rows], { indent: 4, align })].join('\n');
+}
+
+function cycleCell(sheet: DesignSheet, { column, value, limit }: SheetMetric): string {
+  return Number.isNaN(value) && limit !== '' ? limit : figureCells(value, column.row, sheet.study)[0];
+}
+
+function wholeDesignRows(sheet: DesignSheet): string[][] {
+  return sheet.metrics
+    .filter(({ column, value }) => column.trial === null && !Number.isNaN(value))
+    .map(({ column, value }) => [column.row.label, ...figureCells(value, column.row, sheet.study)]);
+}
+
+function requirementRows(sheet: DesignSheet): string[][] {
+  const { study } = sheet;
+  const byName = new Map(sheet.metrics.map((metric) => [metric.column.name, metric]));
+  return study.requirements.map((requirement) => {
+    const { column, value } = byName.get(requirement.metric) as SheetMetric;
+    const verdict = verdictText(value, requirement, column.row, study);
+    const coloured = meets(value, requirement) ? ink('green', verdict) : ink('red', verdict);
+    return [requirement.metric, boundText(requirement, column.row, study), valueBesideLimit(value, requirement, column.row, study), coloured];
+  });
+}
