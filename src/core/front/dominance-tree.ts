@@ -1,8 +1,8 @@
 /**
- * A fixed set of points that answers one question fast: does any of you dominate this one? A k-d tree (Bentley,
- * Multidimensional binary search trees, Communications of the ACM 18(9), 1975; from memory) whose nodes know the best
- * and the worst corner of their points: a node whose best corner is beaten anywhere holds no dominator, and a node
- * whose worst corner dominates is full of them. Only comparisons, so infinities are ordinary values.
+ * A fixed set of points that answers one question fast: does any of them dominate this one? A k-d tree (Bentley,
+ * Multidimensional binary search trees used for associative searching, Communications of the ACM 18(9), 1975; from
+ * memory) whose nodes know the best corner of their points: where that corner does not dominate the asking point,
+ * nothing in the node does. Only comparisons, so infinities are ordinary values.
  */
 const leafSize = 12;
 
@@ -23,9 +23,8 @@ export class DominanceTree implements PointRows {
   private readonly firstLeaf: number;
   /** Leaf k holds the points from leafStart[k] to before leafStart[k + 1]. */
   private readonly leafStart: Uint32Array;
-  /** Corners by node, in heap order: the children of node i are 2i + 1 and 2i + 2. */
-  private readonly best: Float64Array;
-  private readonly worst: Float64Array;
+  /** The best value of each objective by node, in heap order: the children of node i are 2i + 1 and 2i + 2. */
+  private readonly corners: Float64Array;
   private readonly stack = new Int32Array(64);
   private lastDominator = 0;
 
@@ -46,21 +45,20 @@ export class DominanceTree implements PointRows {
       for (let j = 0; j < width; j++) this.rows[i * width + j] = points.rows[from + j]!;
       this.numbers[i] = points.numbers[order[i]!]!;
     }
-    this.best = new Float64Array((2 * leaves - 1) * width).fill(Number.POSITIVE_INFINITY);
-    this.worst = new Float64Array((2 * leaves - 1) * width).fill(Number.NEGATIVE_INFINITY);
+    this.corners = new Float64Array((2 * leaves - 1) * width).fill(Number.POSITIVE_INFINITY);
     this.findCorners(leaves);
   }
 
   /** True when a point of the tree dominates the point `x` (`width` values, none of them NaN). */
   dominates(x: Float64Array): boolean {
     // Neighbouring designs often fall to the same dominator.
-    if (this.rowDominates(this.lastDominator, x)) return true;
+    if (dominatesAt(this.rows, this.lastDominator, x)) return true;
     const { stack, firstLeaf } = this;
     let depth = 0;
     stack[depth++] = 0;
     while (depth > 0) {
       const node = stack[--depth]!;
-      if (!this.cornerReaches(this.best, node, x)) continue;
+      if (!dominatesAt(this.corners, node, x)) continue;
       if (node >= firstLeaf) {
         if (this.leafDominates(node - firstLeaf, x)) return true;
       } else {
@@ -74,30 +72,12 @@ export class DominanceTree implements PointRows {
   private leafDominates(leaf: number, x: Float64Array): boolean {
     const end = this.leafStart[leaf + 1]!;
     for (let i = this.leafStart[leaf]!; i < end; i++) {
-      if (this.rowDominates(i, x)) {
+      if (dominatesAt(this.rows, i, x)) {
         this.lastDominator = i;
         return true;
       }
     }
     return false;
-  }
-
-  private rowDominates(i: number, x: Float64Array): boolean {
-    const { rows, width } = this;
-    const at = i * width;
-    let better = false;
-    for (let j = 0; j < width; j++) {
-      const value = rows[at + j]!;
-      if (value > x[j]!) return false;
-      if (value < x[j]!) better = true;
-    }
-    return better;
-  }
-
-  private cornerReaches(corners: Float64Array, node: number, x: Float64Array): boolean {
-    const at = node * this.width;
-    for (let j = 0; j < this.width; j++) if (corners[at + j]! > x[j]!) return false;
-    return true;
   }
 
   /** Halves the points along one objective after another until the leaves are small; fills leafStart. */
@@ -121,22 +101,34 @@ export class DominanceTree implements PointRows {
 
   private findCorners(leaves: number): void {
     for (let leaf = 0; leaf < leaves; leaf++) {
-      for (let i = this.leafStart[leaf]!; i < this.leafStart[leaf + 1]!; i++) this.widen(this.firstLeaf + leaf, this.rows, this.rows, i);
+      for (let i = this.leafStart[leaf]!; i < this.leafStart[leaf + 1]!; i++) this.widen(this.firstLeaf + leaf, this.rows, i);
     }
     for (let node = this.firstLeaf - 1; node >= 0; node--) {
-      this.widen(node, this.best, this.worst, 2 * node + 1);
-      this.widen(node, this.best, this.worst, 2 * node + 2);
+      this.widen(node, this.corners, 2 * node + 1);
+      this.widen(node, this.corners, 2 * node + 2);
     }
   }
 
-  private widen(node: number, low: Float64Array, high: Float64Array, index: number): void {
+  /** Takes row `index` of `rows` into the corner of a node. */
+  private widen(node: number, rows: Float64Array, index: number): void {
     for (let j = 0; j < this.width; j++) {
-      const at = node * this.width + j;
-      const from = index * this.width + j;
-      if (low[from]! < this.best[at]!) this.best[at] = low[from]!;
-      if (high[from]! > this.worst[at]!) this.worst[at] = high[from]!;
+      const value = rows[index * this.width + j]!;
+      if (value < this.corners[node * this.width + j]!) this.corners[node * this.width + j] = value;
     }
   }
+}
+
+/** Whether row `index` of `rows` dominates `x`; a row equal to it does not, which also skips whole nodes of equal points. */
+function dominatesAt(rows: Float64Array, index: number, x: Float64Array): boolean {
+  const width = x.length;
+  const at = index * width;
+  let better = false;
+  for (let j = 0; j < width; j++) {
+    const value = rows[at + j]!;
+    if (value > x[j]!) return false;
+    if (value < x[j]!) better = true;
+  }
+  return better;
 }
 
 /**

@@ -7,7 +7,7 @@
  */
 import { DominanceTree, type PointRows } from './dominance-tree.ts';
 
-const waitingCapacity = 512;
+const waitingCapacity = 256;
 const mostObjectives = 8;
 
 /** A front in ascending design number: one column per objective, less is better. */
@@ -98,9 +98,10 @@ function mergePoints(older: DominanceTree, newer: DominanceTree): PointRows {
   const { width } = older;
   const rows = new Float64Array((older.count + newer.count) * width);
   const numbers = new Float64Array(older.count + newer.count);
+  const point = new Float64Array(width);
   let count = 0;
   for (let i = 0; i < older.count; i++) {
-    const point = older.rows.subarray(i * width, (i + 1) * width);
+    for (let j = 0; j < width; j++) point[j] = older.rows[i * width + j]!;
     if (newer.dominates(point)) continue;
     rows.set(point, count * width);
     numbers[count++] = older.numbers[i]!;
