@@ -110,7 +110,10 @@ export const parameters: readonly ParameterRow[] = [
   row('motor.continuous.torque', 'share', 0, 'continuous torque', 'Continuous torque as a share of peak torque.', { above: 0, atMost: 1 }),
   row('motor.continuous.power', 'share', 0, 'continuous power', 'Continuous power as a share of peak power.', { above: 0, atMost: 1 }),
   row('motor.standstill', 'share', 0, 'standstill torque', 'Share of peak torque that the motor gives at a hill start.', { above: 0, atMost: 1, default: 1 }),
-  row('motor.inertia', 'inertia', 4, 'rotor inertia', 'Moment of inertia of the rotor and all that turns with it.', { ...notNegative, default: 0, atMost: 100 }),
+  row('motor.inertia', 'inertia', 4, 'rotor inertia', 'Moment of inertia of the rotor and all that turns with it.', {
+    ...notNegative,
+    atMost: 100,
+  }),
   row('motor.inertia.perTorque', 'inertiaPerTorque', 6, 'rotor inertia per torque', 'Rotor inertia per newton metre of peak torque.', {
     ...notNegative,
     atMost: 0.01,
@@ -152,7 +155,7 @@ export const parameters: readonly ParameterRow[] = [
   }),
   row('gearing.dragTorque.perSpeed', 'torquePerSpeed', 5, 'gearing drag rise', 'Rise of that drag torque with motor speed.', { ...coefficient, atMost: 10 }),
   row('battery.voltage', 'voltage', 0, 'battery voltage', 'Open-circuit voltage of the pack, taken as constant.', { above: 10, atMost: 2000 }),
-  row('battery.resistance', 'resistance', 3, 'battery resistance', 'Internal resistance of the pack.', { ...notNegative, default: 0, atMost: 10 }),
+  row('battery.resistance', 'resistance', 3, 'battery resistance', 'Internal resistance of the pack.', { ...notNegative, atMost: 10 }),
   row(
     'battery.resistance.perEnergy',
     'resistanceEnergy',

@@ -79,9 +79,8 @@ export interface Study {
   /**
    * The reference design: every number given or defaulted, SI, by dotted name; `trials.<name>.<key>` for the trials' own.
    * A default stands here only where it plays a part: none of air.temperature and air.altitude beside air.density, of
-   * vehicle.wheelInertia beside massFactor, of rolling beside coastDown, of motor.inertia beside its perTorque, of
-   * battery.resistance beside its perEnergy, of motor.losses without that section, of a trial's payload beside laden;
-   * massAndCost terms of drive unit or battery only where one term of that group is given (its metric exists then).
+   * vehicle.wheelInertia beside massFactor, of rolling beside coastDown, of motor.losses without that section, of a trial's
+   * payload beside laden; massAndCost terms of drive unit or battery only where one term of that group is given (its metric exists then).
    * A trial's headWind, grade, trailer.mass and trailer.dragArea always stand, 0 unless given. From elsewhere come
    * vehicle.wheelRadius (tyre size), vehicle.regeneration.share (driven axle), motor.peakTorque and baseSpeed (full-load curve).
    */

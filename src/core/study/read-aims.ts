@@ -1,0 +1,254 @@
+/** Reads `requirements` and `tradeOff`: limits and objectives on metrics that the study's trials give. */
+import { nearestName } from '../units/nearest-name.ts';
+import { readQuantity } from '../units/read-quantity.ts';
+import { clip, type IssueList } from './issue.ts';
+import type { Located, LocatedMap } from './located-text.ts';
+import { metricColumns } from './metric-columns.ts';
+import type { MetricColumn } from './metrics.ts';
+import type { TrialFound } from './read-trials.ts';
+import type { Objective, Requirement } from './study.ts';
+
+/** What aims are checked against. */
+export interface AimsContext {
+  readonly issues: IssueList;
+  readonly trials: readonly TrialFound[];
+  /** Names of trials that have mistakes of their own: their metrics are not judged. */
+  readonly broken: ReadonlySet<string>;
+  /** Every name that the study states, and what each trial adds. */
+  readonly stands: ReadonlyMap<string, number>;
+}
+
+/** Figures without which a metric exists for no design: one name of the list must stand (or begin a name that stands). */
+const metricNeeds: Readonly<Record<string, readonly string[]>> = {
+  gridEnergy: ['battery.chargingEfficiency'],
+  range: ['battery.usable'],
+  torqueLoad: ['motor.continuous.torque'],
+  lossLoad: ['motor.continuous.torque'],
+  worstLossLoad: ['motor.continuous.torque'],
+  outsideMap: ['motor.map'],
+  'driveUnit.mass': ['massAndCost.mass.motor', 'massAndCost.mass.inverter', 'massAndCost.mass.gearing'],
+  'driveUnit.cost': ['massAndCost.cost.motor', 'massAndCost.cost.inverter', 'massAndCost.cost.gearing'],
+  'battery.mass': ['massAndCost.mass.battery'],
+  'battery.cost': ['massAndCost.cost.battery'],
+};
+
+type Bound = Requirement['bound'];
+const BOUNDS: readonly Bound[] = ['atLeast', 'atMost'];
+
+/** Reads `requirements` (may be absent) and adds the implied one of every cycle: it is followed, unless the file limits that metric itself. */
+export function readRequirements(part: Located | undefined, context: AimsContext): Requirement[] {
+  const written = part === undefined ? [] : readWritten(part, context);
+  const own = new Set(written.map(({ metric }) => metric));
+  const cycles = context.trials.filter(({ kind }) => kind === 'cycle').map(({ name }) => `${name}.offTrace`);
+  const implied = cycles.filter((metric) => !own.has(metric)).map((metric): Requirement => ({ metric, bound: 'atMost', limit: 0, implied: true }));
+  return [...written, ...implied];
+}
+
+function readWritten(part: Located, context: AimsContext): Requirement[] {
+  const { issues } = context;
+  if (part.kind !== 'map') {
+    issues.error(part.at, 'requirements', {
+      expected: 'limits by metric',
+      found: part.kind === 'list' ? 'a list' : clip(part.text) || 'nothing',
+      hint: 'Write "requirements: { ramp.grade: { atLeast: 20 % } }", or remove it.',
+    });
+    return [];
+  }
+  return part.entries.flatMap(({ key, at, value }) => {
+    const column = findMetric(key, at, `requirements.${key}`, context);
+    if (column === null) return [];
+    if (value.kind === 'map') return readLimits(column, value, issues);
+    const found = value.kind === 'list' ? 'a list' : clip(value.text) || 'nothing';
+    const bound = column.row.better === 'more' ? 'atLeast' : 'atMost';
+    issues.error(value.at, `requirements.${key}`, {
+      expected: 'atLeast, atMost or both',
+      found,
+      hint: `Write "${key}: { ${bound}: ${value.kind === 'text' && value.text !== '' ? clip(value.text) : '…'} }".`,
+    });
+    return [];
+  });
+}
+
+function readLimits(column: MetricColumn, map: LocatedMap, issues: IssueList): Requirement[] {
+  const path = `requirements.${column.name}`;
+  if (map.entries.length === 0) issues.error(map.at, path, { expected: 'atLeast, atMost or both', found: 'no limit', hint: 'Add a limit or remove the line.' });
+  const limits = map.entries.flatMap(({ key, at, value }): Requirement[] => {
+    if (key !== 'atLeast' && key !== 'atMost') {
+      const near = nearestName(key, BOUNDS);
+      issues.error(at, `${path}.${key}`, { expected: 'atLeast or atMost', found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
+      return [];
+    }
+    const limit = readLimit(column, value, `${path}.${key}`, issues);
+    return limit === null ? [] : [{ metric: column.name, bound: key, limit, implied: false }];
+  });
+  const [least, most] = BOUNDS.map((bound) => limits.find((limit) => limit.bound === bound)?.limit);
+  if (least !== undefined && most !== undefined && least > most) {
+    issues.error(map.at, path, { expected: 'atLeast below atMost', found: 'nothing between the two', hint: 'Exchange the two limits, or correct one.' });
+  }
+  return limits;
+}
+
+/** A limit, SI, in a unit of the metric's quantity. */
+function readLimit(column: MetricColumn, value: Located, path: string, issues: IssueList): number | null {
+  if (value.kind !== 'text') {
+    issues.error(value.at, path, { expected: 'one figure', found: value.kind === 'list' ? 'a list' : 'a section', hint: column.row.sentence });
+    return null;
+  }
+  const read = readQuantity(value.text, column.row.quantity);
+  if (read.ok) return read.value;
+  issues.error(value.at, path, read);
+  return null;
+}
+
+/** The metric of a name; null with an issue that says which there are. */
+function findMetric(name: string, at: number, path: string, context: AimsContext): MetricColumn | null {
+  const { issues, trials, broken } = context;
+  const trial = name.slice(0, Math.max(0, name.indexOf('.')));
+  if (broken.has(trial)) return null;
+  const columns = metricColumns({ trials });
+  const column = columns.find((candidate) => candidate.name === name);
+  if (column !== undefined) return canExist(column, at, path, context) ? column : null;
+  const withUnit = columns.find(({ key }) => key === name);
+  const ofTrial = columns.filter((candidate) => candidate.trial === trial).map((candidate) => candidate.name.slice(trial.length + 1));
+  const near = nearestName(
+    name,
+    columns.map((candidate) => candidate.name),
+  );
+  const expected = 'a metric of this study: <trial>.<metric>, or one of the whole design';
+  const hint =
+    withUnit !== undefined
+      ? `Write ${withUnit.name}: the figure carries the unit.`
+      : near !== null
+        ? `Did you mean ${near}?`
+        : ofTrial.length > 0
+          ? `${trial} gives ${ofTrial.join(', ')}.`
+          : `Trials of this study: ${trials.map((found) => found.name).join(', ') || 'none'}.`;
+  issues.error(at, path, { expected, found: clip(name), hint });
+  return null;
+}
+
+function canExist(column: MetricColumn, at: number, path: string, { issues, trials, stands }: AimsContext): boolean {
+  const short = column.trial === null ? column.name : column.name.slice(column.trial.length + 1);
+  const wanted = metricNeeds[short];
+  if (wanted === undefined) return true;
+  const added = trials.find(({ name }) => name === column.trial)?.withStands ?? new Map<string, number>();
+  const there = [...stands.keys(), ...added.keys()].some((name) => wanted.some((need) => name === need || name.startsWith(`${need}.`)));
+  if (!there) {
+    issues.error(at, path, {
+      expected: 'a metric that this study can give',
+      found: `${column.name}, which no design has`,
+      hint: `It needs ${wanted.join(' or ')}: add that, or remove this line.`,
+    });
+  }
+  return there;
+}
+
+/** Reads `tradeOff`. */
+export function readTradeOff(part: Located | undefined, context: AimsContext): { objectives: Objective[]; keep: string[] } {
+  const nothing = { objectives: [], keep: [] };
+  if (part === undefined) return nothing;
+  const { issues } = context;
+  if (part.kind !== 'map') {
+    issues.error(part.at, 'tradeOff', {
+      expected: 'minimise, maximise, resolution, keep',
+      found: part.kind === 'list' ? 'a list' : clip(part.text) || 'nothing',
+      hint: 'Write "tradeOff: { minimise: [ … ] }", or remove it.',
+    });
+    return nothing;
+  }
+  const keys = ['minimise', 'maximise', 'resolution', 'keep'];
+  for (const { key, at } of part.entries) {
+    if (keys.includes(key)) continue;
+    const near = nearestName(key, keys);
+    issues.error(at, `tradeOff.${key}`, { expected: keys.join(', '), found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
+  }
+  const entry = (name: string) => part.entries.find(({ key }) => key === name)?.value;
+  const aimed = [...readMetricList(entry('minimise'), 'minimise', context), ...readMetricList(entry('maximise'), 'maximise', context)];
+  const once = aimed.filter((metric, index) => isFirst(metric, index, aimed, issues));
+  if (aimed.length === 0 && !issues.failed) {
+    issues.error(part.at, 'tradeOff', { expected: 'at least one objective', found: 'none', hint: 'List metrics under minimise or maximise.' });
+  }
+  const sizes = readResolution(entry('resolution'), once, issues);
+  const objectives = once.map(({ column, list }) => ({ metric: column.name, aim: list as Objective['aim'], resolution: sizes.get(column.name) ?? 0 }));
+  return { objectives, keep: [...new Set(readMetricList(entry('keep'), 'keep', context).map(({ column }) => column.name))] };
+}
+
+interface ListedMetric {
+  readonly column: MetricColumn;
+  readonly list: string;
+  readonly at: number;
+}
+
+function isFirst(metric: ListedMetric, index: number, all: readonly ListedMetric[], issues: IssueList): boolean {
+  const first = all.findIndex(({ column }) => column.name === metric.column.name);
+  if (first === index) return true;
+  const other = all[first] as ListedMetric;
+  const found =
+    other.list === metric.list
+      ? `${metric.column.name} twice`
+      : `${metric.column.name} under ${other.list} (line ${issues.lineOf(other.at)}) and ${metric.list}`;
+  issues.error(metric.at, `tradeOff.${metric.list}`, { expected: 'each objective once', found, hint: 'Keep one of the two.' });
+  return false;
+}
+
+function readMetricList(value: Located | undefined, list: string, context: AimsContext): ListedMetric[] {
+  if (value === undefined) return [];
+  const path = `tradeOff.${list}`;
+  if (value.kind !== 'list') {
+    const found = value.kind === 'map' ? 'a section' : clip(value.text) || 'nothing';
+    context.issues.error(value.at, path, {
+      expected: 'a list of metrics',
+      found,
+      hint: `Write "${list}: [${value.kind === 'text' && value.text !== '' ? clip(value.text) : ' … '}]".`,
+    });
+    return [];
+  }
+  return value.items.flatMap((item) => {
+    if (item.kind !== 'text') {
+      context.issues.error(item.at, path, {
+        expected: 'the name of a metric',
+        found: item.kind === 'map' ? 'a section' : 'a list',
+        hint: 'Write names alone; sizes stand under resolution.',
+      });
+      return [];
+    }
+    const column = findMetric(item.text, item.at, path, context);
+    return column === null ? [] : [{ column, list, at: item.at }];
+  });
+}
+
+function readResolution(value: Located | undefined, objectives: readonly ListedMetric[], issues: IssueList): Map<string, number> {
+  const sizes = new Map<string, number>();
+  if (value === undefined) return sizes;
+  if (value.kind !== 'map') {
+    issues.error(value.at, 'tradeOff.resolution', {
+      expected: 'sizes by objective',
+      found: value.kind === 'list' ? 'a list' : clip(value.text) || 'nothing',
+      hint: 'Write "resolution: { stops.batteryEnergy: 2 Wh/km }".',
+    });
+    return sizes;
+  }
+  for (const { key, at, value: size } of value.entries) {
+    const path = `tradeOff.resolution.${key}`;
+    const objective = objectives.find(({ column }) => column.name === key);
+    if (objective === undefined) {
+      const names = objectives.map(({ column }) => column.name);
+      const near = nearestName(key, names);
+      issues.error(at, path, {
+        expected: `an objective: ${names.join(', ') || 'none yet'}`,
+        found: clip(key),
+        hint: near === null ? 'Add it to minimise or maximise, or remove it here.' : `Did you mean ${near}?`,
+      });
+      continue;
+    }
+    const read = readLimit(objective.column, size, path, issues);
+    if (read !== null && !(read > 0))
+      issues.error(size.at, path, {
+        expected: 'a size above zero',
+        found: clip(size.kind === 'text' ? size.text : ''),
+        hint: 'Leave the line out to see every design.',
+      });
+    else if (read !== null) sizes.set(key, read);
+  }
+  return sizes;
+}

@@ -1,0 +1,252 @@
+/** Reads `vary`: ranges and lists of a number to the points of an axis; and `search`. */
+import { nearestName } from '../units/nearest-name.ts';
+import { fromSi, toSi, type Unit } from '../units/units.ts';
+import { asWritten } from './check-rules.ts';
+import { clip, type IssueList } from './issue.ts';
+import type { Located, LocatedEntry, LocatedMap } from './located-text.ts';
+import { findParameter, type ParameterRow } from './parameters.ts';
+import { type Figure, readFigure } from './read-places.ts';
+import { ruledOutBy } from './rules.ts';
+import type { Axis, Search } from './study.ts';
+
+/** More points than a person would list on one axis. */
+const MOST_POINTS = 100_000;
+/** A design's number must fit an unsigned 32-bit integer. */
+const MOST_DESIGNS = 4e9;
+const KEYS = ['from', 'to', 'steps', 'step', 'oneOf'];
+const METHODS_TO_COME = ['sobol', 'latin hypercube', 'random', 'genetic'];
+
+/** What the axes are checked against. */
+export interface AxesContext {
+  readonly issues: IssueList;
+  /** The reference design: a varied number must have a figure in it. */
+  readonly values: Readonly<Record<string, number>>;
+  /** Every name that the study states, trials included. */
+  readonly stands: ReadonlyMap<string, number>;
+}
+
+/** Reads `vary`. */
+export function readAxes(part: Located, context: AxesContext): Axis[] {
+  const { issues } = context;
+  if (part.kind !== 'map') {
+    const found = part.kind === 'list' ? 'a list' : clip(part.text) || 'nothing';
+    issues.error(part.at, 'vary', {
+      expected: 'numbers by dotted name',
+      found,
+      hint: 'Write "vary: { gearing.ratio: { from: 7, to: 12, steps: 11 } }", or remove vary.',
+    });
+    return [];
+  }
+  const axes = part.entries.flatMap((entry) => readAxis(entry, context) ?? []);
+  const designs = axes.reduce((product, axis) => product * axis.points.length, 1);
+  if (designs > MOST_DESIGNS) {
+    const found = `${axes.map(({ points }) => points.length).join(' × ')} designs`;
+    issues.error(part.at, 'vary', { expected: 'at most 4 000 000 000 designs', found, hint: 'Use fewer steps, or vary fewer numbers.' });
+  }
+  return axes;
+}
+
+function readAxis({ key, at, value }: LocatedEntry, context: AxesContext): Axis | null {
+  const path = `vary.${key}`;
+  const row = findParameter(key);
+  if (row === undefined || !hasReference(key, context)) {
+    context.issues.error(at, path, noReference(key, row, value, context));
+    return null;
+  }
+  if (value.kind !== 'map') {
+    const found = value.kind === 'list' ? 'a list' : clip(value.text) || 'nothing';
+    const hint = value.kind === 'list' ? `Write "${key}: { oneOf: […] }".` : `Write "${key}: { from: …, to: …, steps: … }".`;
+    context.issues.error(value.at, path, { expected: 'a range with from, to and steps, or oneOf with a list', found, hint });
+    return null;
+  }
+  return readAxisMap(key, row, value, context.issues);
+}
+
+function hasReference(name: string, { values, stands }: AxesContext): boolean {
+  return values[name] !== undefined && ruledOutBy(name, stands.keys()) === undefined;
+}
+
+function noReference(name: string, row: ParameterRow | undefined, value: Located, { issues, values, stands }: AxesContext) {
+  const expected = 'a number of this study by its dotted name';
+  const other = ruledOutBy(name, stands.keys());
+  if (row !== undefined && other !== undefined) {
+    const found = `${name}, which plays no part beside ${other.by} on line ${issues.lineOf(stands.get(other.by) ?? 0)}`;
+    return { expected, found, hint: `Vary ${other.by}, or state ${name} instead: ${other.alternative.why}.` };
+  }
+  const near = nearestName(name, Object.keys(values));
+  const known = row !== undefined && !name.startsWith('trials.');
+  if (known)
+    return {
+      expected: 'a number that has a figure in the study',
+      found: `${name} without a figure`,
+      hint: `State ${name} in its section first: that figure is the reference design.`,
+    };
+  const section =
+    value.kind === 'map' && !value.entries.some(({ key }) => KEYS.includes(key))
+      ? 'Write the whole name in one piece, with dots, such as gearing.ratio.'
+      : null;
+  return {
+    expected,
+    found: clip(name),
+    hint: near !== null ? `Did you mean ${near}?` : (section ?? 'Names are those of the file, section by section, with dots between.'),
+  };
+}
+
+function readAxisMap(name: string, row: ParameterRow, map: LocatedMap, issues: IssueList): Axis | null {
+  const path = `vary.${name}`;
+  const entry = (key: string) => map.entries.find((candidate) => candidate.key === key);
+  for (const { key, at } of map.entries) {
+    if (KEYS.includes(key)) continue;
+    const near = nearestName(key, KEYS);
+    issues.error(at, `${path}.${key}`, { expected: KEYS.join(', '), found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
+    return null;
+  }
+  const list = entry('oneOf');
+  if (list !== undefined && map.entries.length > 1) {
+    issues.error(map.at, path, { expected: 'a range or oneOf', found: 'both', hint: 'Keep one of the two.' });
+    return null;
+  }
+  return list !== undefined ? readList(name, row, list, issues) : readRange(name, row, map, issues);
+}
+
+function readList(name: string, row: ParameterRow, { value }: LocatedEntry, issues: IssueList): Axis | null {
+  const path = `vary.${name}.oneOf`;
+  if (value.kind !== 'list' || value.items.length === 0) {
+    const found = value.kind === 'list' ? 'an empty list' : value.kind === 'map' ? 'a section' : clip(value.text) || 'nothing';
+    issues.error(value.at, path, { expected: 'a list of figures', found, hint: `Write "oneOf: [ …, … ]": ${row.sentence}` });
+    return null;
+  }
+  if (value.items.length > MOST_POINTS) return tooMany(value.at, path, value.items.length, issues);
+  const figures = value.items.map((item) => readFigure(item, row, path, issues));
+  const seen = new Map<number, Figure>();
+  for (const figure of figures) {
+    const first = figure === null ? undefined : seen.get(figure.value);
+    if (figure !== null && first !== undefined)
+      issues.error(figure.at, path, { expected: 'each figure once', found: `${asWritten(figure)} again`, hint: 'Remove one of the two.' });
+    else if (figure !== null) seen.set(figure.value, figure);
+  }
+  if (figures.includes(null) || seen.size < figures.length) return null;
+  return { name, sets: [name], points: figures.map((figure) => [(figure as Figure).value]), labels: null, range: null };
+}
+
+function readRange(name: string, row: ParameterRow, map: LocatedMap, issues: IssueList): Axis | null {
+  const path = `vary.${name}`;
+  const entry = (key: string) => map.entries.find((candidate) => candidate.key === key)?.value;
+  const [fromEntry, toEntry, stepsEntry, stepEntry] = ['from', 'to', 'steps', 'step'].map(entry);
+  if (fromEntry === undefined || toEntry === undefined) {
+    const found = map.entries.map(({ key }) => key).join(', ') || 'nothing';
+    issues.error(map.at, path, { expected: 'from, to and steps; or oneOf', found, hint: `Write "${name}: { from: …, to: …, steps: … }".` });
+    return null;
+  }
+  const [from, to] = [readFigure(fromEntry, row, `${path}.from`, issues), readFigure(toEntry, row, `${path}.to`, issues)];
+  const steps = stepsEntry === undefined ? null : readSteps(stepsEntry, `${path}.steps`, issues);
+  if ((stepsEntry === undefined) === (stepEntry === undefined)) {
+    const found = stepsEntry === undefined ? 'a range without either' : 'both';
+    issues.error(map.at, path, {
+      expected: 'steps: a number of points, or step: a distance between them',
+      found,
+      hint: 'A grid needs its points: add "steps: 11", or keep one of the two.',
+    });
+    return null;
+  }
+  if (from === null || to === null || (stepsEntry !== undefined && steps === null)) return null;
+  if (from.value >= to.value) {
+    issues.error(to.at, `${path}.to`, { expected: `to above from (${asWritten(from)})`, found: asWritten(to), hint: 'Exchange the two, or correct one.' });
+    return null;
+  }
+  const count = steps ?? countOf(from, to, stepEntry as Located, row, `${path}.step`, issues);
+  if (count === null) return null;
+  if (count > MOST_POINTS) return tooMany(map.at, path, count, issues);
+  return { name, sets: [name], points: gridPoints(from, to, count), labels: null, range: { from: from.value, to: to.value, stepped: true } };
+}
+
+/**
+ * Points of a range, computed in the unit of `from` and rounded to 15 significant digits before they go to SI, so that a point
+ * that a person could type has the very bits of the typed figure; the last is `to` itself.
+ */
+function gridPoints(from: Figure, to: Figure, count: number): number[][] {
+  const end = writtenIn(to, from.unit);
+  return Array.from({ length: count }, (_, index) => {
+    if (index === count - 1) return [to.value];
+    const written = from.written + (index * (end - from.written)) / (count - 1);
+    return [toSi(Number(written.toPrecision(15)), from.unit)];
+  });
+}
+
+function writtenIn(figure: Figure, unit: Unit): number {
+  return figure.unit === unit ? figure.written : fromSi(figure.value, unit);
+}
+
+function readSteps(value: Located, path: string, issues: IssueList): number | null {
+  const text = value.kind === 'text' ? value.text.trim() : '';
+  const steps = /^\d{1,12}$/u.test(text) ? Number(text) : Number.NaN;
+  if (steps >= 2) return steps;
+  const found = value.kind === 'text' ? clip(text) || 'nothing' : 'no number';
+  const hint = text === '1' ? 'A single point is no range: remove it from vary.' : 'The points lie evenly from from to to, both included.';
+  issues.error(value.at, path, { expected: 'a whole number of at least 2', found, hint });
+  return null;
+}
+
+/** Points of a range with a step size; the step must lead exactly to the end. */
+function countOf(from: Figure, to: Figure, stepEntry: Located, row: ParameterRow, path: string, issues: IssueList): number | null {
+  const unbounded: ParameterRow = { name: row.name, quantity: row.quantity, label: row.label, sentence: row.sentence, decimals: row.decimals };
+  const step = readFigure(stepEntry, unbounded, path, issues);
+  if (step === null) return null;
+  // A step is a difference: offsets of units (°C) play no part.
+  const size = (step.written * step.unit.factor) / step.unit.divisor / (from.unit.factor / from.unit.divisor);
+  const extent = writtenIn(to, from.unit) - from.written;
+  const intervals = Math.round(extent / size);
+  if (!(size > 0)) {
+    issues.error(step.at, path, { expected: 'a step above zero', found: asWritten(step), hint: 'The range runs upwards from from to to.' });
+    return null;
+  }
+  if (intervals >= 1 && Math.abs(extent / size - intervals) <= 1e-9 * intervals) return intervals + 1;
+  const whole = Math.max(1, Math.floor(extent / size));
+  const ends = [whole, whole + 1].map((many) => asWritten({ written: Number((from.written + many * size).toPrecision(12)), unit: from.unit }));
+  issues.error(step.at, path, {
+    expected: `a step that leads from ${asWritten(from)} to ${asWritten(to)}`,
+    found: asWritten(step),
+    hint: `End the range at ${ends.join(' or ')}, or write steps instead.`,
+  });
+  return null;
+}
+
+function tooMany(at: number, path: string, count: number, issues: IssueList): null {
+  issues.error(at, path, { expected: `at most ${MOST_POINTS} points on one axis`, found: String(count), hint: 'Use fewer steps.' });
+  return null;
+}
+
+/** Reads `search`; so far designs are a grid. */
+export function readSearch(part: Located | undefined, issues: IssueList): Search {
+  const grid: Search = { method: 'grid' };
+  if (part === undefined) return grid;
+  if (part.kind !== 'map') {
+    issues.error(part.at, 'search', {
+      expected: 'a method',
+      found: part.kind === 'text' ? clip(part.text) || 'nothing' : 'a list',
+      hint: 'Write "search: { method: grid }", or remove search.',
+    });
+    return grid;
+  }
+  for (const { key, at } of part.entries) {
+    if (key === 'method') continue;
+    const sampling = key === 'designs' || key === 'seed';
+    const near = nearestName(key, ['method', 'designs', 'seed']);
+    const hint = sampling ? 'Remove it: a grid evaluates every point of vary.' : near === null ? 'Remove it.' : `Did you mean ${near}?`;
+    issues.error(at, `search.${key}`, { expected: 'method alone', found: clip(key), hint });
+  }
+  const method = part.entries.find(({ key }) => key === 'method')?.value;
+  const text = method?.kind === 'text' ? method.text : '';
+  if (text === 'grid') return grid;
+  if (METHODS_TO_COME.includes(text)) {
+    issues.error(method?.at ?? part.at, 'search.method', { expected: 'grid', found: `${text}, which is not available yet`, hint: 'Use grid for now.' });
+  } else {
+    const near = nearestName(text, ['grid', ...METHODS_TO_COME]);
+    issues.error(method?.at ?? part.at, 'search.method', {
+      expected: 'grid',
+      found: clip(text) || 'no method',
+      hint: near === null ? 'Write "method: grid".' : `Did you mean ${near}?`,
+    });
+  }
+  return grid;
+}

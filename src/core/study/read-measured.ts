@@ -1,0 +1,128 @@
+/** The measured curve and map that a study names: reads the files, and settles what they cover and which motor they state. */
+import type { FullLoadCurve } from '../vehicle/full-load-curve.ts';
+import type { LossMap } from '../vehicle/loss-map.ts';
+import { clip, type IssueList } from './issue.ts';
+import { type Covering, type MapData, type ReferenceMotor, readFullLoad, readLossMap } from './read-motor-data.ts';
+import type { Found } from './read-places.ts';
+import type { StudySources } from './read-trials.ts';
+
+/** A measured map with what it brings along. */
+export interface MeasuredMap {
+  readonly data: MapData['map'];
+  readonly motorAlone: boolean;
+  readonly stated: Partial<ReferenceMotor>;
+  readonly bestEfficiency: number;
+  readonly at: number;
+}
+
+/** The full-load curve of a study, or null where it has none or cannot be read. */
+export function readStudyFullLoad(found: Found, sources: StudySources, issues: IssueList): FullLoadCurve | null {
+  const text = fileText('motor.fullLoad', found, sources, issues);
+  if (text === null) return null;
+  const read = readFullLoad(text.csv, text.name, statedMotor('motor.fullLoad', found));
+  if (read.ok) return read.curve;
+  issues.take(read.problems);
+  return null;
+}
+
+/** The map of a study; what it covers is put among the names that stand, so that losses beside it are told. */
+export function readStudyMap(found: Found, sources: StudySources, issues: IssueList): MeasuredMap | null {
+  const text = fileText('motor.map', found, sources, issues);
+  if (text === null) return null;
+  const read = readLossMap(text.csv, text.name);
+  if (!read.ok) {
+    issues.take(read.problems);
+    return null;
+  }
+  const covers = coveringOf(read.data, found, text, issues);
+  if (covers === null) return null;
+  found.stands.set(covers === 'motor' ? 'motor.map.motorAlone' : 'motor.map.wholeDrive', text.at);
+  if (covers === 'motor') checkInverterLosses(found, text.at, issues);
+  return {
+    data: read.data.map,
+    motorAlone: covers === 'motor',
+    stated: statedMotor('motor.map', found),
+    bestEfficiency: read.data.bestEfficiency,
+    at: text.at,
+  };
+}
+
+/** The map at its reference motor: what it states, else the study's own before anything is varied. */
+export function lossMapOf(measured: MeasuredMap, values: Readonly<Record<string, number>>): LossMap {
+  const { data, motorAlone, stated } = measured;
+  const referencePeakTorqueNm = stated.peakTorqueNm ?? (values['motor.peakTorque'] as number);
+  const referenceBaseSpeedRadPerS = stated.baseSpeedRadPerS ?? (values['motor.baseSpeed'] as number);
+  return { ...data, motorAlone, referencePeakTorqueNm, referenceBaseSpeedRadPerS };
+}
+
+interface NamedText {
+  readonly csv: string;
+  readonly name: string;
+  readonly at: number;
+}
+
+function fileText(path: string, found: Found, sources: StudySources, issues: IssueList): NamedText | null {
+  const at = found.stands.get(path);
+  if (at === undefined) return null;
+  const named = found.texts.get(`${path}.file`);
+  if (named === undefined) {
+    if (!found.stands.has(`${path}.file`))
+      issues.error(at, `${path}.file`, { expected: 'the name of a CSV file', found: 'no file', hint: 'Add "file: data/some-file.csv".' });
+    return null;
+  }
+  const file = sources.file(named.text);
+  if ('text' in file) return { csv: file.text, name: named.text, at: named.at };
+  issues.error(named.at, `${path}.file`, {
+    expected: 'a CSV file',
+    found: `${clip(named.text)}: ${file.problem}`,
+    hint: 'Paths start at the folder of the study file.',
+  });
+  return null;
+}
+
+function statedMotor(path: string, { figures }: Found): Partial<ReferenceMotor> {
+  const peakTorqueNm = figures.get(`${path}.peakTorque`)?.value;
+  const baseSpeedRadPerS = figures.get(`${path}.baseSpeed`)?.value;
+  return { ...(peakTorqueNm === undefined ? {} : { peakTorqueNm }), ...(baseSpeedRadPerS === undefined ? {} : { baseSpeedRadPerS }) };
+}
+
+function coveringOf(data: MapData, found: Found, { name, at }: NamedText, issues: IssueList): Covering | null {
+  const inStudy = found.texts.get('motor.map.covers');
+  const expected = 'what the map covers: motor, or motor and inverter';
+  if (data.covers === 'unknown') {
+    issues.error(at, 'motor.map', {
+      expected,
+      found: `other words after "# covers:" in ${name}`,
+      hint: 'Write "# covers: motor" or "# covers: motor and inverter" in the CSV file.',
+    });
+    return null;
+  }
+  if (inStudy !== undefined && data.covers !== null && inStudy.text !== data.covers) {
+    issues.error(inStudy.at, 'motor.map.covers', {
+      expected: `${data.covers}, as ${name} says of itself`,
+      found: inStudy.text,
+      hint: 'Correct one of the two.',
+    });
+    return null;
+  }
+  const covers = data.covers ?? (inStudy?.text as Covering | undefined);
+  if (covers !== undefined) return covers;
+  if (found.stands.has('motor.map.covers')) return null;
+  const hint = `Write "map: { file: ${clip(name)}, covers: motor and inverter }", or "# covers: motor and inverter" above the head of the CSV file.`;
+  if (!data.plain) {
+    issues.error(at, 'motor.map', { expected, found: 'no word of it', hint });
+    return null;
+  }
+  issues.warn(at, 'motor.map', { expected, found: 'no word of it: the losses are taken as those of motor and inverter together', hint });
+  return 'motor and inverter';
+}
+
+function checkInverterLosses({ stands }: Found, at: number, issues: IssueList): void {
+  const own = ['inverterFixed', 'inverterLinear', 'inverterSquare'];
+  if (own.some((key) => stands.has(`motor.losses.${key}`))) return;
+  issues.error(at, 'motor.losses', {
+    expected: `the inverter's losses beside a map of the motor alone: ${own.join(', ')}`,
+    found: 'none',
+    hint: 'Add them under motor: "losses: { inverterFixed: …, inverterLinear: …, inverterSquare: … }".',
+  });
+}
