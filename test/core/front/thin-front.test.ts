@@ -10,7 +10,10 @@ const boxOf = (row: readonly number[], sizes: readonly number[]): number[] => ro
 /** The same, box by box and pair by pair; for finite values and at least one box side above 0. */
 function plainThinning(rows: readonly (readonly number[])[], sizes: readonly number[]): number[] {
   const boxes = rows.map((row) => boxOf(row, sizes));
-  const away = (i: number): number => rows[i]!.reduce((sum, value, j) => (sizes[j] === 0 ? sum : sum + (value / sizes[j]! - boxes[i]![j]!) ** 2), 0);
+  const away = (i: number): number => {
+    const sides = rows[i]!.map((value, j) => (sizes[j] === 0 ? 0 : value / sizes[j]! - boxes[i]![j]!));
+    return sides.reduce((sum, side) => sum + side * side, 0);
+  };
   return [...rows.keys()].filter((i) => {
     if (boxes.some((box) => plainlyDominates(box, boxes[i]!))) return false;
     const shared = [...rows.keys()].filter((k) => boxes[k]!.every((side, j) => side === boxes[i]![j]));
