@@ -1,0 +1,42 @@
+/** Two ratios on a cycle: which of them takes each step. */
+import { mostPowerW } from '../vehicle/battery.ts';
+import { motorSpeedRadPerS } from '../vehicle/gearing.ts';
+import type { Vehicle } from '../vehicle/vehicle.ts';
+import type { CompiledCycle } from './compiled-cycle.ts';
+import { isOverspeed } from './drive-step.ts';
+import type { DrivenSteps } from './driven-steps.ts';
+
+/** Puts the steps that the higher gear takes into `lower`, which then holds the steps as driven. */
+export function chooseGears(vehicle: Vehicle, cycle: CompiledCycle, lower: DrivenSteps, higher: DrivenSteps): void {
+  const mostW = mostPowerW(vehicle.battery) - vehicle.auxiliariesW;
+  for (let k = 0; k < cycle.speedMPerS.length; k++) {
+    if (takesHigherGear(vehicle, cycle.speedMPerS[k], mostW, k, lower, higher)) copyStep(higher, lower, k);
+  }
+}
+
+/**
+ * Of the gears that follow the step, the one that draws less, the lower on a tie; when neither follows, the one within its
+ * speed that delivers more force, and the higher gear when both are above theirs. A gear whose losses ask more than the
+ * pack can ever give (`mostW` without the auxiliaries) does not follow.
+ */
+function takesHigherGear(vehicle: Vehicle, speedMPerS: number, mostW: number, k: number, lower: DrivenSteps, higher: DrivenSteps): boolean {
+  const lowerW = lower.shaftW[k] + lower.lossW[k];
+  const higherW = higher.shaftW[k] + higher.lossW[k];
+  const lowerFollows = lower.missed[k] === 0 && lowerW <= mostW;
+  const higherFollows = higher.missed[k] === 0 && higherW <= mostW;
+  if (lowerFollows && higherFollows) return higherW < lowerW;
+  if (lowerFollows || higherFollows) return higherFollows;
+  // The higher gear turns the motor more slowly: it is above its speed only where the lower gear is too.
+  if (isOverspeed(vehicle.motor, motorSpeedRadPerS(vehicle, 0, speedMPerS))) return true;
+  return higher.gearedN[k] > lower.gearedN[k];
+}
+
+function copyStep(from: DrivenSteps, to: DrivenSteps, k: number): void {
+  to.demandN[k] = from.demandN[k];
+  to.gearedN[k] = from.gearedN[k];
+  to.torqueNm[k] = from.torqueNm[k];
+  to.shaftW[k] = from.shaftW[k];
+  to.lossW[k] = from.lossW[k];
+  to.missed[k] = from.missed[k];
+  to.gear[k] = from.gear[k];
+}

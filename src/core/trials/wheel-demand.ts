@@ -1,0 +1,62 @@
+/** The force that a trace asks for at the wheels, step by step, and what the road takes over the whole trace. */
+import { airResistanceN } from '../vehicle/road-load.ts';
+import type { RoadLoad, Vehicle } from '../vehicle/vehicle.ts';
+import type { CompiledCycle } from './compiled-cycle.ts';
+
+/** Writes F = m_e a + R(v̄) (N) of every moving step to `demandN`, with the effective mass of one gear. */
+export function writeDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, demandN: Float64Array): void {
+  if (cycle.evenSlope && road.headWindMPerS === 0) writeCalmDemand(road, effectiveMassKg, cycle, demandN);
+  else writeOpenDemand(road, effectiveMassKg, cycle, demandN);
+}
+
+/** One slope and no wind: the resistance is one polynomial of speed. */
+function writeCalmDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, demandN: Float64Array): void {
+  const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = cycle;
+  const constant = cosSlope[0] * road.rollingN + road.weightN * sinSlope[0];
+  const linear = road.airLinearNSPerM;
+  const square = cosSlope[0] * road.rollingPerSpeed2NS2PerM2 + road.airSquareNS2PerM2 + road.dragNS2PerM2;
+  for (let k = 0; k < speedMPerS.length; k++) {
+    const v = speedMPerS[k];
+    demandN[k] = effectiveMassKg * accelerationMPerS2[k] + (constant + v * (linear + v * square));
+  }
+}
+
+function writeOpenDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, demandN: Float64Array): void {
+  const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = cycle;
+  const { rollingN, rollingPerSpeed2NS2PerM2, airLinearNSPerM, airSquareNS2PerM2, dragNS2PerM2, headWindMPerS, weightN } = road;
+  for (let k = 0; k < speedMPerS.length; k++) {
+    const v = speedMPerS[k];
+    const airspeed = v + headWindMPerS;
+    const air = dragNS2PerM2 * airspeed * Math.abs(airspeed) + v * (airLinearNSPerM + airSquareNS2PerM2 * v);
+    const rolling = cosSlope[k] * (rollingN + rollingPerSpeed2NS2PerM2 * v * v);
+    demandN[k] = effectiveMassKg * accelerationMPerS2[k] + (rolling + air + weightN * sinSlope[k]);
+  }
+}
+
+/** Energy (J) lost to rolling resistance over the trace. */
+export function rollingEnergyJ(road: RoadLoad, { moments }: CompiledCycle): number {
+  return road.rollingN * moments.cosV + road.rollingPerSpeed2NS2PerM2 * moments.cosV3;
+}
+
+/** Energy (J) lost to the air over the trace. */
+export function airEnergyJ(road: RoadLoad, cycle: CompiledCycle): number {
+  const { moments, speedMPerS, durationS } = cycle;
+  if (road.headWindMPerS === 0) return road.airLinearNSPerM * moments.v2 + (road.airSquareNS2PerM2 + road.dragNS2PerM2) * moments.v3;
+  let energyJ = 0;
+  for (let k = 0; k < speedMPerS.length; k++) energyJ += airResistanceN(road, speedMPerS[k]) * speedMPerS[k] * durationS[k];
+  return energyJ;
+}
+
+/** Energy (J) spent on climbing, net. */
+export function gradeEnergyJ(road: RoadLoad, { moments }: CompiledCycle): number {
+  return road.weightN * moments.sinV;
+}
+
+/** Energy (J) left in the moving mass, net: exactly zero on a closed trace in one gear. */
+export function inertiaEnergyJ({ effectiveMassKg, gearing }: Vehicle, cycle: CompiledCycle): number {
+  if (gearing.ratioCount === 1) return effectiveMassKg[0] * cycle.kineticJPerKg;
+  const { speedMPerS, accelerationMPerS2, durationS, driven } = cycle;
+  let energyJ = 0;
+  for (let k = 0; k < speedMPerS.length; k++) energyJ += effectiveMassKg[driven.gear[k]] * accelerationMPerS2[k] * speedMPerS[k] * durationS[k];
+  return energyJ;
+}
