@@ -71,7 +71,7 @@ function batteryBreaksRadPerS(vehicle: Vehicle, rating: DrivingRating, limitBrea
   const torqueLines = [0, ...(map === null ? [] : map.torquesNm.filter((torque) => torque > 0))];
   const toTorque = map === null ? 1 : motor.peakTorqueNm / map.referencePeakTorqueNm;
   const bends = torqueLines.flatMap((line) => lineCrossings(vehicle, rating, line * toTorque, stretches));
-  const binds = (speed: number) => beyond(speed) >= -1e-9 * motor.peakTorqueNm;
+  const binds = (speed: number) => batteryTorqueLimitNm(vehicle, speed) <= torqueLimitNm(motor, speed, rating) * (1 + 1e-9);
   return [...starts, ...lossBreaks.filter(binds), ...bends];
 }
 
