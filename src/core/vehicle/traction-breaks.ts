@@ -3,7 +3,7 @@ import { signChanges } from '../numerics/roots.ts';
 import { adhesionLimitN } from './adhesion.ts';
 import { batteryTorqueLimitNm, dischargeLimitW } from './battery.ts';
 import { type Gear, motorSpeedRadPerS } from './gearing.ts';
-import { continuousRatingNm, motorLossW, peakTorqueLimitNm } from './motor.ts';
+import { continuousRatingNm, mapScale, motorLossW, peakTorqueLimitNm } from './motor.ts';
 import type { Slope } from './road-load.ts';
 import { driveForceN, type Rating, torqueLimitNm } from './traction.ts';
 import type { Motor, Vehicle } from './vehicle.ts';
@@ -12,7 +12,7 @@ import type { Motor, Vehicle } from './vehicle.ts';
 export type DrivingRating = Extract<Rating, 'peak' | 'continuous'>;
 
 /** Pieces in which a smooth stretch is searched for crossings; dips between them are followed further. */
-const PIECES = 8;
+const PIECES = 4;
 /** Breaks closer than this share of their speed are one. */
 const SAME = 1e-11;
 
@@ -32,7 +32,34 @@ export function tractionBreakSpeeds(vehicle: Vehicle, gear: Gear, rating: Drivin
 /** Motor speeds at which the torque that motor and battery allow changes its law. */
 function torqueBreaksRadPerS(vehicle: Vehicle, rating: DrivingRating, from: number, to: number): number[] {
   const limitBreaks = limitBreaksRadPerS(vehicle.motor, rating, from, to);
-  return dischargeLimitW(vehicle.battery) === Infinity ? limitBreaks : [...limitBreaks, ...batteryBreaksRadPerS(vehicle, rating, limitBreaks, from, to)];
+  return mayBind(vehicle, rating, to) ? [...limitBreaks, ...batteryBreaksRadPerS(vehicle, rating, limitBreaks, from, to)] : limitBreaks;
+}
+
+/** Could the battery bind at a motor speed up to `to`? No where it has room for the most power and the most loss at once. */
+function mayBind({ motor, battery, auxiliariesW }: Vehicle, rating: DrivingRating, to: number): boolean {
+  const mostNm = rating === 'peak' ? largestTorqueNm(motor) : motor.continuousTorqueShare * motor.peakTorqueNm;
+  const mostW = rating === 'peak' ? largestPowerW(motor) : motor.continuousPowerShare * motor.peakPowerW;
+  return mostW + largestLossW(motor, mostNm, to) + auxiliariesW > dischargeLimitW(battery);
+}
+
+function largestTorqueNm(motor: Motor): number {
+  if (motor.fullLoad === null) return motor.peakTorqueNm;
+  return Math.max(...motor.fullLoad.torquesNm) * (motor.peakTorqueNm / motor.fullLoad.referencePeakTorqueNm);
+}
+
+/** Largest power (W) of the peak limit, or more: the larger torque of each stretch of a curve at its higher speed. */
+function largestPowerW(motor: Motor): number {
+  if (motor.fullLoad === null) return motor.peakPowerW;
+  const { speedsRadPerS, torquesNm, referencePeakTorqueNm, referenceBaseSpeedRadPerS } = motor.fullLoad;
+  const most = Math.max(...speedsRadPerS.map((speed, k) => speed * Math.max(torquesNm[k], torquesNm[Math.max(k - 1, 0)])));
+  return (most * motor.peakPowerW) / (referencePeakTorqueNm * referenceBaseSpeedRadPerS);
+}
+
+/** Largest loss (W) up to a torque and a speed, or more: losses by coefficients rise with both, a map has its largest anywhere. */
+function largestLossW(motor: Motor, torqueNm: number, speedRadPerS: number): number {
+  if (motor.lossMap === null) return motorLossW(motor, torqueNm, speedRadPerS);
+  const measuredW = Math.max(...motor.lossMap.lossesW) * mapScale(motor, motor.lossMap);
+  return motor.lossMap.motorAlone ? measuredW + motorLossW({ ...motor, lossMap: null }, torqueNm, speedRadPerS) : measuredW;
 }
 
 /** Motor speeds at which the torque limit of the rating changes its law. */
@@ -42,7 +69,7 @@ function limitBreaksRadPerS(motor: Motor, rating: DrivingRating, from: number, t
   const corner = (motor.baseSpeedRadPerS * motor.continuousPowerShare) / motor.continuousTorqueShare;
   const stretches = [from, ...rising([...branches, corner], from, to), to];
   const above = (speed: number) => continuousRatingNm(motor, speed) - peakTorqueLimitNm(motor, speed);
-  const meeting = crossings(stretches, above, PIECES / 2);
+  const meeting = crossings(stretches, above, PIECES);
   const near = (speed: number) => 1e-9 * peakTorqueLimitNm(motor, speed);
   const peakHolds = branches.filter((speed) => speed === motor.maxSpeedRadPerS || above(speed) >= -near(speed));
   return rising([...peakHolds, ...meeting, ...(above(corner) <= near(corner) ? [corner] : [])], from, to);
@@ -68,35 +95,37 @@ function batteryBreaksRadPerS(vehicle: Vehicle, rating: DrivingRating, limitBrea
     return Math.max(limitNm - batteryTorqueLimitNm(vehicle, speed), -limitNm);
   };
   const starts = crossings(stretches, beyond, PIECES);
-  const torqueLines = [0, ...(map === null ? [] : map.torquesNm.filter((torque) => torque > 0))];
-  const toTorque = map === null ? 1 : motor.peakTorqueNm / map.referencePeakTorqueNm;
-  const bends = torqueLines.flatMap((line) => lineCrossings(vehicle, rating, line * toTorque, stretches));
   const binds = (speed: number) => batteryTorqueLimitNm(vehicle, speed) <= torqueLimitNm(motor, speed, rating) * (1 + 1e-9);
-  return [...starts, ...lossBreaks.filter(binds), ...bends];
+  const bound = pairsOf([from, ...rising([...limitBreaks, ...lossBreaks, ...starts], from, to), to]).filter(([a, b]) => beyond(0.5 * (a + b)) > 0);
+  return [...starts, ...lossBreaks.filter(binds), ...bound.flatMap(([a, b]) => lineCrossings(vehicle, a, b))];
 }
 
-/** Motor speeds at which the battery's torque passes `torqueNm`, a grid line of the map (or 0), below the motor's limit. */
-function lineCrossings(vehicle: Vehicle, rating: DrivingRating, torqueNm: number, stretches: readonly number[]): number[] {
+/** Motor speeds in (from, to) at which the battery's torque becomes 0 or passes a torque line of the loss map. */
+function lineCrossings(vehicle: Vehicle, from: number, to: number): number[] {
+  const { motor } = vehicle;
+  const map = motor.lossMap;
   const allowedW = dischargeLimitW(vehicle.battery) - vehicle.auxiliariesW;
-  const excessW = (speed: number) => torqueNm * speed + motorLossW(vehicle.motor, torqueNm, speed) - allowedW;
-  return crossings(stretches, excessW, 2).filter((speed) => torqueNm <= torqueLimitNm(vehicle.motor, speed, rating));
+  const lines = map === null ? [] : map.torquesNm.map((torque) => torque * (motor.peakTorqueNm / map.referencePeakTorqueNm));
+  const positive = lines.filter((torqueNm) => torqueNm > 0);
+  return [0, ...positive].flatMap((torqueNm) => signChanges((speed) => torqueNm * speed + motorLossW(motor, torqueNm, speed) - allowedW, from, to, 2));
 }
 
 /** Speeds at which adhesion starts or stops to bind; `stretches` are smooth for the drive force. */
 function adhesionBreaksMPerS(vehicle: Vehicle, gear: Gear, rating: DrivingRating, slope: Slope, stretches: readonly number[]): number[] {
   const grip = (speed: number) => adhesionLimitN(vehicle, speed, slope.cos);
   const { motor, gearing, wheelRadiusM } = vehicle;
-  const mostNm = motor.fullLoad === null ? motor.peakTorqueNm : Math.max(...branchEndsRadPerS(motor).map((speed) => peakTorqueLimitNm(motor, speed)));
-  const mostN = (mostNm * gearing.ratios[gear] * gearing.efficiencies[gear]) / wheelRadiusM;
+  const mostN = (largestTorqueNm(motor) * gearing.ratios[gear] * gearing.efficiencies[gear]) / wheelRadiusM;
   // Adhesion rises or falls throughout with speed: it is least at one of the ends.
   if (Math.min(grip(stretches[0]), grip(stretches[stretches.length - 1])) > mostN) return [];
   return crossings(stretches, (speed) => driveForceN(vehicle, gear, speed, rating) - grip(speed), PIECES);
 }
 
 function crossings(stretches: readonly number[], f: (x: number) => number, pieces: number): number[] {
-  const found: number[] = [];
-  for (let k = 1; k < stretches.length; k++) found.push(...signChanges(f, stretches[k - 1], stretches[k], pieces));
-  return found;
+  return pairsOf(stretches).flatMap(([a, b]) => signChanges(f, a, b, pieces));
+}
+
+function pairsOf(points: readonly number[]): [number, number][] {
+  return points.slice(1).map((to, k) => [points[k], to]);
 }
 
 /** The values strictly inside (from, to), rising, near-equal ones taken as one. */

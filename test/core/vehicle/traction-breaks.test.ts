@@ -88,6 +88,20 @@ describe('tractionBreakSpeeds', () => {
     );
   });
 
+  it('bends the force at a break but never makes it jump, up to maximum motor speed', () => {
+    fc.assert(
+      fc.property(vehicles, gears, ratings, (vehicle, gear, rating) => {
+        // Rough maps may have two torques that use the battery up, and then the lowest may jump.
+        fc.pre(vehicle.motor.lossMap === null);
+        const end = maxVehicleSpeedMPerS(vehicle, gear);
+        const forceN = (v: number) => tractiveForceN(vehicle, gear, v, rating, flat);
+        for (const v of tractionBreakSpeeds(vehicle, gear, rating, flat, 0, end)) {
+          expect(Math.abs(forceN(v * (1 + 1e-9)) - forceN(v * (1 - 1e-9)))).toBeLessThan(1e-7 * Math.abs(forceN(0)) + 1e-4);
+        }
+      }),
+    );
+  });
+
   it('leaves force and resistance so smooth between them that 32 Gauss points integrate them to 1e-10', () => {
     const rule = gaussLegendre(32);
     const worst = (vehicle: Vehicle, gear: 0 | 1, rating: DrivingRating, grade: number) => {
