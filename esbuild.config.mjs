@@ -1,4 +1,4 @@
-// Builds the three hosts of one core into dist: the command line, the thread, and the report's page as one text.
+// Builds the three hosts of one core into dist: the command line, the thread, and the report's page as one script and one style sheet.
 import { cpSync, rmSync } from 'node:fs';
 import { build } from 'esbuild';
 
@@ -10,7 +10,7 @@ await Promise.all([
   build({ ...node, entryPoints: { layshaft: 'src/cli/layshaft.ts' }, banner: { js: '#!/usr/bin/env node' } }),
   build({ ...node, entryPoints: { thread: 'workers/thread.ts' } }),
   build({
-    entryPoints: { page: 'src/page/page.ts' },
+    entryPoints: { page: 'src/page/page.ts', style: 'src/page/report.css' },
     bundle: true,
     platform: 'browser',
     format: 'iife',
@@ -19,7 +19,6 @@ await Promise.all([
     charset: 'utf8',
     legalComments: 'none',
     outdir: 'dist',
-    loader: { '.css': 'text' },
     logLevel: 'warning',
   }),
 ]);

@@ -53,7 +53,7 @@ export function axisScale(values: readonly number[], axis: ChartAxis, from: numb
 /** Ticks of an axis along `length` pixels; `lying` when texts stand side by side, otherwise one above the other. */
 export function axisTicks(scale: ScaleLinear<number, number>, axis: ChartAxis, length: number, size: number, lying: boolean): Tick[] {
   if (axis.names !== null) return nameTicks(axis.names, length, size, lying);
-  for (let count = Math.max(2, Math.floor(length / (lying ? 70 : 44))); count > 1; count--) {
+  for (let count = Math.max(2, Math.floor(length / (lying ? 70 : 56))); count > 1; count--) {
     const ticks = numberTicks(scale, count);
     const widest = Math.max(0, ...ticks.map(({ text }) => textWidth(text, size)));
     const apart = ticks.length < 2 ? length : Math.abs(scale(ticks[1]!.value) - scale(ticks[0]!.value));

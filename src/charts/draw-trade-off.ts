@@ -40,7 +40,7 @@ export function drawTradeOff(svg: Selection<SVGSVGElement, unknown, null, undefi
 
 /** Type size of a view, px. */
 function typeSize(view: TradeOffView): number {
-  return view.words === null ? 12.5 : 14;
+  return view.words === null ? 13 : 14;
 }
 
 function planChart(view: TradeOffView): Plan {

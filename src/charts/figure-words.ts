@@ -48,19 +48,32 @@ export function withCurrency(text: string, quantity: Quantity, study: Study): st
   return quantity === 'money' && currency !== '' ? `${text}\u202f${currency}` : text;
 }
 
-/** A value of a column: the option's name, or a figure with its unit. */
+/** A value of a column: the option's name, or a figure with its unit; an input in no more decimals than it needs. */
 export function valueText(value: number | null, column: ResultColumn, study: Study): string {
-  if (column.labels === null) return figureText(value, column, study);
-  return value === null ? '—' : shortText(column.labels[value] ?? '—', 60);
+  if (column.labels !== null) return value === null ? '—' : shortText(column.labels[value] ?? '—', 60);
+  if (column.role === 'metric' || value === null) return figureText(value, column, study);
+  return figureText(value, { quantity: column.quantity, decimals: neededDecimals(value, column, study) }, study);
 }
 
-/** The size of a difference between two SI values, in decimals enough that a difference never reads as none; percentages differ by percentage points. */
+/** The fewest decimals that show a value exactly, to twelve digits, and never more than are usual for it. */
+export function neededDecimals(value: number, { quantity, decimals }: Measured, study: Study): number {
+  const written = Number(fromSi(value, readingUnit(quantity, study.report.units)).toPrecision(12));
+  for (let fewer = 0; fewer < decimals; fewer++) if (Number(written.toFixed(fewer)) === written) return fewer;
+  return decimals;
+}
+
+/** The size of a difference between two SI values, in decimals enough that a difference never reads as none; percentages differ by %-points. */
 export function differenceText(difference: number, measured: Measured, study: Study): string {
-  const unit = readingUnit(measured.quantity, study.report.units);
+  const unit = unitWord(measured.quantity, study);
+  const figure = differenceFigure(difference, measured, study);
+  return unit === '' ? figure : `${figure}\u202f${unit === '%' ? '%-points' : unit}`;
+}
+
+/** The same without its unit, for a place beside the value itself. */
+export function differenceFigure(difference: number, { quantity, decimals }: Measured, study: Study): string {
+  const unit = readingUnit(quantity, study.report.units);
   const size = Math.abs((difference * unit.divisor) / unit.factor);
-  const figure = size !== 0 && Number(size.toFixed(measured.decimals)) === 0 ? size.toPrecision(1) : formatFigure(size, measured.decimals);
-  const word = unit.symbol === '%' ? 'percentage points' : unitWord(measured.quantity, study);
-  return word === '' ? figure : `${figure}\u202f${word}`;
+  return size !== 0 && Number(size.toFixed(decimals)) === 0 ? size.toPrecision(1) : formatFigure(size, decimals);
 }
 
 /** A value in the unit people read, as a plain number; for options the index. */

@@ -1,0 +1,79 @@
+/** How the figures came about: the trials, the study's figures, the model in words, what it leaves out, the cautions, the run. */
+import { figureText, neededDecimals } from '../charts/figure-words.ts';
+import type { ReportData } from '../charts/report-data.ts';
+import { cautions, leftOut } from '../core/study/cautions.ts';
+import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
+import type { Study, Trial } from '../core/study/study.ts';
+import { trialKindRow } from '../core/study/trial-kinds.ts';
+import { formatFigure } from '../core/units/format-quantity.ts';
+import { html, type Markup } from './markup.ts';
+import { modelSentences } from './model-words.ts';
+
+/** Section 6, the last. */
+export function methodSection(data: ReportData): Markup {
+  const { study } = data;
+  return html`<section aria-labelledby="method">
+<h2 id="method">How it was computed, and cautions</h2>
+<div class="body">
+<h3>Cautions</h3>
+<ul class="cautions">${cautions.map((caution) => html`<li>${caution}</li>`)}</ul>
+<h3>What every design was put through</h3>
+<dl class="trials">${study.trials.map((trial) => html`<div><dt>${trial.name}</dt><dd>${trialKindRow(trial.kind).sentence} <span class="hint">${trialSettings(trial, study)}</span></dd></div>`)}</dl>
+<h3>The model in words</h3>
+<ul>${modelSentences(study).map((sentence) => html`<li>${sentence}</li>`)}</ul>
+<h3>What the model leaves out</h3>
+<dl class="left-out">${leftOut.map(({ subject, sentence }) => html`<div><dt>${subject}</dt><dd>${sentence}</dd></div>`)}</dl>
+<h3>The run</h3>
+${runWords(data)}
+<details><summary>Every figure of the reference design</summary>${figureList(study)}</details>
+<details><summary>The study as written, ${data.studyFile}</summary><pre tabindex="0">${data.studyText}</pre></details>
+</div>
+</section>`;
+}
+
+/** The conditions of a trial as the study states them. */
+export function trialSettings(trial: Trial, study: Study): string {
+  const kind = trialKindRow(trial.kind);
+  const own = kind.takes.flatMap((key) => {
+    const row: ParameterRow = trialParameters[key];
+    const value = study.values[`trials.${trial.name}.${key}`];
+    return value === undefined || value === row.default ? [] : [`${row.label} ${shortFigure(value, row, study)}`];
+  });
+  const replaced = Object.entries(trial.with).map(([name, value]) => {
+    const row = findParameter(name);
+    return row === undefined ? name : `${row.label} ${shortFigure(value, row, study)}`;
+  });
+  return [
+    ...(trial.trace === null ? [] : [`trace ${trial.trace.name}`]),
+    ...(trial.road === null ? [] : [`road ${trial.road.name}`]),
+    ...own,
+    ...(kind.rating === null ? [] : [`${trial.rating} rating`]),
+    ...(replaced.length === 0 ? [] : [`for this trial ${replaced.join(', ')}`]),
+  ].join(', ');
+}
+
+function shortFigure(value: number, row: ParameterRow, study: Study): string {
+  return figureText(value, { quantity: row.quantity, decimals: neededDecimals(value, row, study) }, study);
+}
+
+function runWords({ study, provenance, counts }: ReportData): Markup {
+  const { version, node, started, seconds, workers, digests } = provenance;
+  const traces = [...new Map(study.trials.flatMap(({ trace }) => (trace === null ? [] : [[trace.name, trace] as const]))).values()];
+  return html`<dl class="run">
+<div><dt>Designs</dt><dd>${formatFigure(counts.designs, 0)}, chosen by ${study.search.method}</dd></div>
+<div><dt>Computed</dt><dd>${started}, in ${formatFigure(seconds, 1)} s by ${workers} ${workers === 1 ? 'worker' : 'workers'}</dd></div>
+<div><dt>Versions</dt><dd>layshaft ${version}, Node ${node}</dd></div>
+${traces.map(({ name, timesS, notes }) => html`<div><dt>Speed trace ${name}</dt><dd>${formatFigure((timesS.at(-1) ?? 0) - (timesS[0] ?? 0), 0)} s. ${notes.join(' ')}</dd></div>`)}
+${digests.map(({ name, sha256 }) => html`<div><dt>SHA-256 of ${name}</dt><dd class="digest">${sha256}</dd></div>`)}
+</dl>`;
+}
+
+function figureList(study: Study): Markup {
+  const rows = Object.entries(study.values).flatMap(([name, value]) => {
+    const row = findParameter(name);
+    return row === undefined
+      ? []
+      : [html`<tr><th scope="row">${name}</th><td class="figure">${figureText(value, row, study)}</td><td>${row.sentence}</td></tr>`];
+  });
+  return html`<div class="scroll" tabindex="0" role="region" aria-label="Every figure of the reference design"><table><thead><tr><th scope="col">Name</th><th scope="col" class="figure">Figure</th><th scope="col">What it is</th></tr></thead><tbody>${rows}</tbody></table></div>`;
+}
