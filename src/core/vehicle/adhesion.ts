@@ -23,3 +23,15 @@ export function adhesionLimitN(vehicle: Vehicle, speedMPerS: number, cos: number
   const rearN = (adhesion * ((1 - frontShare) * weightN - transferredN)) / growth;
   return Math.max(0, Math.min(adhesion * weightN, rearN));
 }
+
+/**
+ * Speeds (m/s) at which that law changes: the rear axle, unloaded by growing rolling resistance, stops to carry the whole weight or to carry
+ * any. None for other drives, nor where rolling resistance does not grow.
+ */
+export function adhesionBreakSpeedsMPerS({ axles, road, carriedMassKg }: Vehicle): number[] {
+  const leverShare = axles.centreHeightM / axles.wheelbaseM;
+  if (axles.driven !== 'rear' || !(axles.adhesion * leverShare < 1) || !(road.carriedRollingPerSpeed2NS2PerM2 > 0)) return [];
+  const weightN = carriedMassKg * GRAVITY_M_PER_S2;
+  const rollingN = [(axles.adhesion - axles.frontShare / leverShare) * weightN, ((1 - axles.frontShare) / leverShare) * weightN];
+  return rollingN.map((whole) => Math.sqrt((whole - road.carriedRollingN) / road.carriedRollingPerSpeed2NS2PerM2)).filter((speed) => speed > 0);
+}

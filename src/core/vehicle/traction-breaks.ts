@@ -1,6 +1,6 @@
 /** Speeds at which the law of tractive force or road load changes: between them both are smooth. */
 import { signChanges } from '../numerics/roots.ts';
-import { adhesionLimitN } from './adhesion.ts';
+import { adhesionBreakSpeedsMPerS, adhesionLimitN } from './adhesion.ts';
 import { batteryTorqueLimitNm, dischargeLimitW } from './battery.ts';
 import { type Gear, motorSpeedRadPerS } from './gearing.ts';
 import { continuousRatingNm, mapScale, motorLossW, peakTorqueLimitNm } from './motor.ts';
@@ -18,13 +18,14 @@ const SAME = 1e-11;
 
 /**
  * Speeds (m/s) strictly inside (from, to), rising, at which F(v) or R(v) changes its law: ends of the motor's branches, points of a
- * measured curve, the continuous corner, where continuous and peak limit, battery or adhesion start or stop to bind, grid lines of a loss
- * map while the battery binds, maximum motor speed, and the air standing still against a tail wind. Between them both are smooth.
+ * measured curve, the continuous corner, where continuous and peak limit, battery or adhesion start or stop to bind, where a rear axle stops to
+ * carry the whole weight, grid lines of a loss map while the battery binds, maximum motor speed, and where a tail wind and the vehicle are
+ * level. Between them both are smooth.
  */
 export function tractionBreakSpeeds(vehicle: Vehicle, gear: Gear, rating: DrivingRating, slope: Slope, fromMPerS: number, toMPerS: number): number[] {
   const perSpeed = motorSpeedRadPerS(vehicle, gear, 1);
   const drive = torqueBreaksRadPerS(vehicle, rating, fromMPerS * perSpeed, toMPerS * perSpeed).map((speedRadPerS) => speedRadPerS / perSpeed);
-  const breaks = rising([...drive, -vehicle.road.headWindMPerS], fromMPerS, toMPerS);
+  const breaks = rising([...drive, -vehicle.road.headWindMPerS, ...adhesionBreakSpeedsMPerS(vehicle)], fromMPerS, toMPerS);
   const gripping = adhesionBreaksMPerS(vehicle, gear, rating, slope, [fromMPerS, ...breaks, toMPerS]);
   return gripping.length === 0 ? breaks : rising([...breaks, ...gripping], fromMPerS, toMPerS);
 }
@@ -44,22 +45,29 @@ function mayBind({ motor, battery, auxiliariesW }: Vehicle, rating: DrivingRatin
 
 function largestTorqueNm(motor: Motor): number {
   if (motor.fullLoad === null) return motor.peakTorqueNm;
-  return Math.max(...motor.fullLoad.torquesNm) * (motor.peakTorqueNm / motor.fullLoad.referencePeakTorqueNm);
+  return largest(motor.fullLoad.torquesNm) * (motor.peakTorqueNm / motor.fullLoad.referencePeakTorqueNm);
 }
 
 /** Largest power (W) of the peak limit, or more: the larger torque of each stretch of a curve at its higher speed. */
 function largestPowerW(motor: Motor): number {
   if (motor.fullLoad === null) return motor.peakPowerW;
   const { speedsRadPerS, torquesNm, referencePeakTorqueNm, referenceBaseSpeedRadPerS } = motor.fullLoad;
-  const most = Math.max(...speedsRadPerS.map((speed, k) => speed * Math.max(torquesNm[k], torquesNm[Math.max(k - 1, 0)])));
+  const most = largest(speedsRadPerS.map((speed, k) => speed * Math.max(torquesNm[k], torquesNm[Math.max(k - 1, 0)])));
   return (most * motor.peakPowerW) / (referencePeakTorqueNm * referenceBaseSpeedRadPerS);
 }
 
 /** Largest loss (W) up to a torque and a speed, or more: losses by coefficients rise with both, a map has its largest anywhere. */
 function largestLossW(motor: Motor, torqueNm: number, speedRadPerS: number): number {
   if (motor.lossMap === null) return motorLossW(motor, torqueNm, speedRadPerS);
-  const measuredW = Math.max(...motor.lossMap.lossesW) * mapScale(motor, motor.lossMap);
+  const measuredW = largest(motor.lossMap.lossesW) * mapScale(motor, motor.lossMap);
   return motor.lossMap.motorAlone ? measuredW + motorLossW({ ...motor, lossMap: null }, torqueNm, speedRadPerS) : measuredW;
+}
+
+/** The largest of values that are not negative; measured grids may be too long to be spread as arguments. */
+function largest(values: readonly number[]): number {
+  let most = 0;
+  for (const value of values) if (value > most) most = value;
+  return most;
 }
 
 /** Motor speeds at which the torque limit of the rating changes its law. */
@@ -132,7 +140,8 @@ function pairsOf(points: readonly number[]): [number, number][] {
 function rising(values: readonly number[], from: number, to: number): number[] {
   const kept: number[] = [];
   let last = from;
-  for (const value of values.slice().sort((a, b) => a - b)) {
+  const inside = values.filter((value) => value > from && value < to);
+  for (const value of inside.sort((a, b) => a - b)) {
     if (value - last <= SAME * value || to - value <= SAME * to) continue;
     kept.push(value);
     last = value;

@@ -1,7 +1,7 @@
 /** Adhesion: the closed form against the balance of axle loads that it solves. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { adhesionLimitN } from '../../../src/core/vehicle/adhesion.ts';
+import { adhesionBreakSpeedsMPerS, adhesionLimitN } from '../../../src/core/vehicle/adhesion.ts';
 import { sampleAxles, sampleRoad, sampleVehicle } from './sample-vehicle.ts';
 
 const numbers = (min: number, max: number) => fc.double({ min, max, noNaN: true });
@@ -81,5 +81,30 @@ describe('adhesionLimitN', () => {
 
   it('is not looked at where no adhesion is stated', () => {
     expect(adhesionLimitN(sampleVehicle({ axles: sampleAxles({ adhesion: Number.NaN }) }), 10, 1)).toBe(Infinity);
+  });
+});
+
+describe('adhesionBreakSpeedsMPerS', () => {
+  const tall = vehicleOf({ driven: 'rear', adhesion: 1.2, frontShare: 0.4, centreHeightM: 1.04, wheelbaseM: 3 });
+
+  it('is where a rear axle stops to carry the whole weight', () => {
+    const wholeN = 1.2 * 2800 * 9.80665;
+    const [speed] = adhesionBreakSpeedsMPerS(tall);
+    expect(adhesionLimitN(tall, speed * 0.999, 1)).toBe(wholeN);
+    expect(adhesionLimitN(tall, speed * 1.001, 1)).toBeLessThan(wholeN);
+    expect(adhesionLimitN(tall, speed * (1 + 1e-9), 1) / wholeN).toBeCloseTo(1, 9);
+  });
+
+  it('is where it stops to carry any', () => {
+    const light = vehicleOf({ driven: 'rear', adhesion: 0.5, frontShare: 0.99, centreHeightM: 1, wheelbaseM: 3 });
+    const [speed] = adhesionBreakSpeedsMPerS(light);
+    expect(adhesionLimitN(light, speed * 0.999, 1)).toBeGreaterThan(0);
+    expect(adhesionLimitN(light, speed * 1.001, 1)).toBe(0);
+  });
+
+  it('is nowhere for other drives and without a rise of rolling resistance', () => {
+    expect(adhesionBreakSpeedsMPerS(vehicleOf({ driven: 'front', adhesion: 1.2, frontShare: 0.4, centreHeightM: 1.04, wheelbaseM: 3 }))).toEqual([]);
+    expect(adhesionBreakSpeedsMPerS({ ...tall, road: { ...tall.road, carriedRollingPerSpeed2NS2PerM2: 0 } })).toEqual([]);
+    expect(adhesionBreakSpeedsMPerS(sampleVehicle({ axles: sampleAxles({ driven: 'rear', adhesion: Number.NaN }) }))).toEqual([]);
   });
 });
