@@ -2,6 +2,7 @@
 import type { Study } from '../study/study.ts';
 import { standardDensityKgPerM3 } from '../vehicle/air.ts';
 import { type Budget, type BudgetTerms, driveBudget } from '../vehicle/budget.ts';
+import { curveMaxSpeedRadPerS } from '../vehicle/full-load-curve.ts';
 import { roadLoadFromCoastDown, roadLoadFromCoefficients } from '../vehicle/road-load.ts';
 import type { Battery, Gearing, Motor, RoadLoad, Vehicle } from '../vehicle/vehicle.ts';
 
@@ -38,10 +39,7 @@ export function motorReader(study: Study, read: ReadCell): (figures: Float64Arra
     motor.peakTorqueNm = figures[torque];
     motor.baseSpeedRadPerS = figures[base];
     motor.peakPowerW = motor.peakTorqueNm * motor.baseSpeedRadPerS;
-    motor.maxSpeedRadPerS =
-      fullLoad === null
-        ? figures[top]
-        : fullLoad.speedsRadPerS[fullLoad.speedsRadPerS.length - 1] * (motor.baseSpeedRadPerS / fullLoad.referenceBaseSpeedRadPerS);
+    motor.maxSpeedRadPerS = fullLoad === null ? figures[top] : curveMaxSpeedRadPerS(fullLoad, motor.baseSpeedRadPerS);
     motor.constantPowerToRadPerS = orElse(figures[constantTo], motor.maxSpeedRadPerS);
     motor.continuousTorqueShare = figures[torqueShare];
     motor.continuousPowerShare = figures[powerShare];
