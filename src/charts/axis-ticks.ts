@@ -6,6 +6,9 @@ import type { ChartAxis } from './trade-off-view.ts';
 /** Mean width of a character as a share of the type size; on the wide side of common sans-serif faces. */
 const meanCharacter = 0.62;
 
+/** Extent of an axis below which its values count as one, as a share of their size. */
+const leastExtent = 1e-9;
+
 /** Width of a line of text, estimated: the same on every machine. */
 export function textWidth(text: string, size: number): number {
   return Array.from(text).length * size * meanCharacter;
@@ -36,7 +39,7 @@ export interface Tick {
   readonly text: string;
 }
 
-/** The scale over what is shown with a little room at both ends; a single value gets room of its own. */
+/** The scale over what is shown with a little room at both ends; values that differ by rounding alone get room as one. */
 export function axisScale(values: readonly number[], axis: ChartAxis, from: number, to: number): ScaleLinear<number, number> {
   if (axis.names !== null) return scaleLinear([-0.5, axis.names.length - 0.5], [from, to]);
   let low = Number.POSITIVE_INFINITY;
@@ -46,7 +49,9 @@ export function axisScale(values: readonly number[], axis: ChartAxis, from: numb
     high = Math.max(high, value);
   }
   if (low > high) return scaleLinear([0, 1], [from, to]);
-  const room = high > low ? (high - low) * 0.05 : Math.max(Math.abs(high) * 0.05, 1e-9);
+  const size = Math.max(Math.abs(low), Math.abs(high));
+  // Values that differ only by rounding are one value: no tick could tell them apart.
+  const room = high - low > Math.max(size, 0.01) * leastExtent ? (high - low) * 0.05 : Math.max(size * 0.05, leastExtent);
   return scaleLinear([low - room, high + room], [from, to]);
 }
 

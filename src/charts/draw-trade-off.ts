@@ -65,14 +65,14 @@ function planChart(view: TradeOffView): Plan {
     top,
   );
   const yTicks = axisTicks(y, view.y, bottom - top, type, false);
-  const left = edge + Math.ceil(Math.max(0, ...yTicks.map((tick) => textWidth(tick.text, type))) + 8);
-  const right = view.width - edge - 4;
-  const x = axisScale(
-    shown.map((point) => point.x),
-    view.x,
-    left,
-    right,
-  );
+  const beside = Math.ceil(Math.max(0, ...yTicks.map((tick) => textWidth(tick.text, type))) + 8);
+  // The outermost texts under the frame reach half their width beyond it, so they are known before the frame is.
+  const xValues = shown.map((point) => point.x);
+  const trial = axisScale(xValues, view.x, beside, across);
+  const half = Math.min(across / 6, Math.max(4, ...axisTicks(trial, view.x, across - beside, type, true).map((tick) => textWidth(tick.text, type) / 2)));
+  const left = edge + Math.max(beside, half);
+  const right = view.width - edge - half;
+  const x = axisScale(xValues, view.x, left, right);
   const xTicks = axisTicks(x, view.x, right - left, type, true);
   return { frame: { x: left, y: top, width: right - left, height: bottom - top }, x, y, type, xTicks, yTicks, xTitle, yTitle, yTitleTop, keyTop };
 }
@@ -95,9 +95,7 @@ function drawAxes(svg: SvgParent, view: TradeOffView, plan: Plan): void {
   for (const { value, text: words } of plan.xTicks) {
     const at = x(value);
     crispLine(svg, at, frame.y, at, bottom, ink.line);
-    // The outermost texts keep inside the drawing.
-    const half = textWidth(words, type) / 2;
-    text(svg, Math.min(Math.max(at, half), view.width - half), bottom + type * 1.3, words, { 'font-size': type, fill: ink.quiet, 'text-anchor': 'middle' });
+    text(svg, at, bottom + type * 1.3, words, { 'font-size': type, fill: ink.quiet, 'text-anchor': 'middle' });
   }
   for (const { value, text: words } of plan.yTicks) {
     const at = y(value);

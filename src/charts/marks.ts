@@ -19,7 +19,7 @@ export function fixed(value: number): number {
 /** A line of text with its look as attributes. */
 export function text(parent: SvgParent, x: number, y: number, words: string, look: Readonly<Record<string, string | number>>): void {
   const element = parent.append('text').attr('x', fixed(x)).attr('y', fixed(y));
-  for (const [name, value] of Object.entries(look)) element.attr(name, value);
+  for (const [name, value] of Object.entries(look)) element.attr(name, typeof value === 'number' ? fixed(value) : value);
   element.text(words);
 }
 
