@@ -4,6 +4,9 @@
  * memory) whose nodes know the best corner of their points: where that corner does not dominate the asking point,
  * nothing in the node does. Only comparisons, so infinities are ordinary values.
  */
+import { rowDominates } from './dominance.ts';
+
+// The fastest by trial on fronts of 500 to 100,000 designs in four objectives; 8 and 20 are within a few per cent.
 const leafSize = 12;
 
 /** Points in rows: `rows[i * width + j]` is objective j of point i, whose design number is `numbers[i]`. */
@@ -52,13 +55,14 @@ export class DominanceTree implements PointRows {
   /** True when a point of the tree dominates the point `x` (`width` values, none of them NaN). */
   dominates(x: Float64Array): boolean {
     // Neighbouring designs often fall to the same dominator.
-    if (dominatesAt(this.rows, this.lastDominator, x)) return true;
+    if (rowDominates(this.rows, this.lastDominator, x)) return true;
     const { stack, firstLeaf } = this;
     let depth = 0;
     stack[depth++] = 0;
     while (depth > 0) {
       const node = stack[--depth]!;
-      if (!dominatesAt(this.corners, node, x)) continue;
+      // A corner equal to the point does not dominate it, so whole nodes of equal points are passed by as well.
+      if (!rowDominates(this.corners, node, x)) continue;
       if (node >= firstLeaf) {
         if (this.leafDominates(node - firstLeaf, x)) return true;
       } else {
@@ -72,7 +76,7 @@ export class DominanceTree implements PointRows {
   private leafDominates(leaf: number, x: Float64Array): boolean {
     const end = this.leafStart[leaf + 1]!;
     for (let i = this.leafStart[leaf]!; i < end; i++) {
-      if (dominatesAt(this.rows, i, x)) {
+      if (rowDominates(this.rows, i, x)) {
         this.lastDominator = i;
         return true;
       }
@@ -116,19 +120,6 @@ export class DominanceTree implements PointRows {
       if (value < this.corners[node * this.width + j]!) this.corners[node * this.width + j] = value;
     }
   }
-}
-
-/** Whether row `index` of `rows` dominates `x`; a row equal to it does not, which also skips whole nodes of equal points. */
-function dominatesAt(rows: Float64Array, index: number, x: Float64Array): boolean {
-  const width = x.length;
-  const at = index * width;
-  let better = false;
-  for (let j = 0; j < width; j++) {
-    const value = rows[at + j]!;
-    if (value > x[j]!) return false;
-    if (value < x[j]!) better = true;
-  }
-  return better;
 }
 
 /**

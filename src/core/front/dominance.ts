@@ -12,3 +12,19 @@ export function dominates(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
   }
   return better;
 }
+
+/**
+ * The same for row `index` of points stored row by row (`rows[index * x.length + j]`) and the point `x`, neither with
+ * a NaN; the form that the inner loops use.
+ */
+export function rowDominates(rows: Float64Array, index: number, x: Float64Array): boolean {
+  const width = x.length;
+  const at = index * width;
+  let better = false;
+  for (let j = 0; j < width; j++) {
+    const value = rows[at + j]!;
+    if (value > x[j]!) return false;
+    if (value < x[j]!) better = true;
+  }
+  return better;
+}

@@ -5,6 +5,7 @@
  * Algorithms 1, 1980; from memory). The front is a property of the set: the order and the sizes of the batches, and
  * where the store happens to be emptied, change only the time it takes.
  */
+import { rowDominates } from './dominance.ts';
 import { DominanceTree, type PointRows } from './dominance-tree.ts';
 
 const waitingCapacity = 256;
@@ -118,10 +119,11 @@ function frontOfFew(points: PointRows): PointRows {
   const rows = new Float64Array(count * width);
   const numbers = new Float64Array(count);
   let kept = 0;
+  const point = new Float64Array(width);
   for (const i of order) {
-    const at = i * width;
-    if (anyDominates(rows, kept, points.rows, at, width)) continue;
-    for (let j = 0; j < width; j++) rows[kept * width + j] = points.rows[at + j]!;
+    for (let j = 0; j < width; j++) point[j] = points.rows[i * width + j]!;
+    if (anyDominates(rows, kept, point)) continue;
+    rows.set(point, kept * width);
     numbers[kept++] = points.numbers[i]!;
   }
   return { count: kept, width, rows, numbers };
@@ -135,16 +137,7 @@ function compareRows(rows: Float64Array, a: number, b: number, width: number): n
   return 0;
 }
 
-function anyDominates(kept: Float64Array, count: number, rows: Float64Array, at: number, width: number): boolean {
-  for (let k = 0; k < count; k++) {
-    let better = false;
-    let j = 0;
-    for (; j < width; j++) {
-      const value = kept[k * width + j]!;
-      if (value > rows[at + j]!) break;
-      if (value < rows[at + j]!) better = true;
-    }
-    if (j === width && better) return true;
-  }
+function anyDominates(rows: Float64Array, count: number, point: Float64Array): boolean {
+  for (let k = 0; k < count; k++) if (rowDominates(rows, k, point)) return true;
   return false;
 }

@@ -67,12 +67,12 @@ function exclusiveVolume(row: Row, others: readonly Row[], reference: Row, width
   return box - volume(shared, reference, width);
 }
 
-/** The rows that none other dominates in the first `width` objectives, each once. */
+/** The rows that none other dominates in the first `width` objectives. */
 function standing(rows: readonly Row[], width: number): Row[] {
   const ordered = rows.map((row) => row.slice(0, width)).sort(compareRows);
   const kept: Row[] = [];
   for (const row of ordered) {
-    if (!kept.some((other) => dominates(other, row) || compareRows(other, row) === 0)) kept.push(row);
+    if (!kept.some((other) => dominates(other, row))) kept.push(row);
   }
   return kept;
 }
@@ -122,7 +122,7 @@ class Staircase {
   /** Adds a point inside the reference corner. */
   add(x: number, y: number): void {
     const from = this.firstAtOrAfter(x);
-    if ((from > 0 && this.ys[from - 1]! <= y) || (this.xs[from] === x && this.ys[from]! <= y)) return;
+    if (from > 0 && this.ys[from - 1]! <= y) return;
     let height = from > 0 ? this.ys[from - 1]! : this.topY;
     let left = x;
     let k = from;

@@ -16,11 +16,10 @@ export function balancedDesign(objectives: readonly Float64Array[]): number {
  */
 export function bestInEach(objectives: readonly Float64Array[]): number[] {
   const scaled = scaledColumns(objectives);
-  return objectives.map((column, j) => {
+  return objectives.map((column) => {
     const best = extent(column).low;
-    const others = scaled.filter((_, k) => k !== j);
-    // With a single objective there are no others: the first of the best.
-    return others.length === 0 ? column.indexOf(best) : leastSum(others, (i) => column[i] === best);
+    // The objective itself counts 0 for each of its best.
+    return leastSum(scaled, (i) => column[i] === best);
   });
 }
 

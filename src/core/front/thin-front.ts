@@ -7,7 +7,7 @@ import { FrontFilter } from './front-filter.ts';
  * index); boxes that another box dominates are left out, and so are designs with a NaN. In an objective of resolution
  * 0 every value is a box of its own; when all resolutions are 0 there are no boxes and equal designs all stay.
  * Epsilon-dominance: Laumanns, Thiele, Deb, Zitzler, Combining convergence and diversity in evolutionary
- * multiobjective optimization, Evolutionary Computation 10(3), 2002, section 4 (additive boxes).
+ * multiobjective optimization, Evolutionary Computation 10(3), 2002 (from memory), here with boxes of constant sides.
  */
 export function thinFront(objectives: readonly Float64Array[], resolutions: readonly number[]): Uint32Array {
   const count = objectives[0]?.length ?? 0;

@@ -191,6 +191,16 @@ describe('thinFront', () => {
     ).toEqual([3, 4]);
   });
 
+  test('measures nearness in the finite objectives where another is infinite', () => {
+    const endless = Number.POSITIVE_INFINITY;
+    const rows = [
+      [1.9, endless],
+      [1.1, endless],
+      [1.5, endless],
+    ];
+    expect(thin(rows, [1, 1])).toEqual([1]);
+  });
+
   test('thins a large front to a number that the box sides bound', () => {
     const random = randomStream(11);
     const rows = [...Array(20_000)].map(() => random()).map((x) => [x, 1 - Math.sqrt(x)]);

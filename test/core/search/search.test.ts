@@ -108,6 +108,13 @@ describe('the grid', () => {
     expect(at(8_589_934_592)).toEqual([1, 65_535, 65_535]);
   });
 
+  test('stays exact where the rest after the last axis overflows 32 bits', () => {
+    const axis = (name: string) => numberAxis(name, [...Array(65_536).keys()]);
+    const points = new Int32Array(3);
+    gridOf([axis('a'), axis('b'), numberAxis('c', [7, 8])]).points(8_589_934_592, points);
+    expect([...points]).toEqual([65_535, 65_535, 1]);
+  });
+
   test('is empty without axes: the reference design is not one of the search', () => {
     expect(gridOf([]).count).toBe(0);
   });
