@@ -53,11 +53,13 @@ export function sumSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
     const demand = demandN[k];
     const geared = gearedN[k];
     const torque = torqueNm[k];
-    let terminal = shaftW[k] + lossW[k] + auxiliariesW;
+    const shaft = shaftW[k];
+    const loss = lossW[k];
+    let terminal = shaft + loss + auxiliariesW;
     lossBeforeJ[k] = lossJ;
-    lossJ += lossW[k] * stepS;
+    lossJ += loss * stepS;
     torqueSquareN2M2S += torque * torque * stepS;
-    gearingJ += shaftW[k] * stepS - geared * lengthM;
+    gearingJ += shaft * stepS - geared * lengthM;
     if (geared > demand) brakesJ += (geared - demand) * lengthM;
     else unmetJ += (geared - demand) * lengthM;
     if (demand >= 0) demandJ += demand * lengthM;
