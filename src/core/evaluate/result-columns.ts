@@ -2,7 +2,7 @@
 import { type MetricColumn, type MetricRow, machineKey } from '../study/metrics.ts';
 import { findParameter, type ParameterRow } from '../study/parameters.ts';
 import type { Study } from '../study/study.ts';
-import type { Quantity } from '../units/units.ts';
+import { fromSi, machineUnit, type Quantity } from '../units/units.ts';
 
 /** One stored column. `option` columns hold the index of the point on their axis, whose names are `labels`. */
 export interface ResultColumn {
@@ -35,6 +35,17 @@ export function resultColumns(study: Study, metrics: readonly MetricColumn[]): R
     const { quantity, decimals } = parameter;
     return { key: machineKey(axis.name, quantity), name: axis.name, role: 'input', quantity, decimals, label, better: null, labels: null };
   }
+}
+
+/**
+ * A stored value as machine output gives it: in the machine unit of its quantity, an option by its name, null where it does not
+ * exist. Inputs are rounded to 15 digits, so that a figure typed in that unit comes back as typed; metrics keep every bit.
+ */
+export function machineValue({ role, quantity, labels }: Pick<ResultColumn, 'role' | 'quantity' | 'labels'>, si: number): number | string | null {
+  if (role === 'option') return labels?.[si] ?? null;
+  if (Number.isNaN(si)) return null;
+  const written = fromSi(si, machineUnit(quantity));
+  return role === 'input' ? Number(written.toPrecision(15)) : written;
 }
 
 /** The label people read for a metric: the trial in front of it. */

@@ -54,13 +54,23 @@ export class FrontFilter {
 
   /** The front of everything added so far, as copies; more may be added afterwards. */
   front(): Front {
-    this.plant();
-    while (this.trees.length > 1) this.mergeNewest();
-    const tree = this.trees[0];
+    const tree = this.settle();
     if (tree === undefined) return { numbers: new Float64Array(0), objectives: Array.from({ length: this.width }, () => new Float64Array(0)) };
     const order = Uint32Array.from(tree.numbers.keys()).sort((a, b) => tree.numbers[a]! - tree.numbers[b]!);
     const column = (j: number): Float64Array => Float64Array.from(order, (i) => tree.rows[i * this.width + j]!);
     return { numbers: Float64Array.from(order, (i) => tree.numbers[i]!), objectives: Array.from({ length: this.width }, (_, j) => column(j)) };
+  }
+
+  /** How many designs are on the front of everything added so far. */
+  get size(): number {
+    return this.settle()?.count ?? 0;
+  }
+
+  /** All points in one tree; undefined where there are none. */
+  private settle(): DominanceTree | undefined {
+    this.plant();
+    while (this.trees.length > 1) this.mergeNewest();
+    return this.trees[0];
   }
 
   /** Copies design i into `point`; false when one of its objectives does not exist. */

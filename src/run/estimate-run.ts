@@ -1,0 +1,71 @@
+/** What a run would cost and bring, from a small sample: for `check`. */
+import { availableParallelism } from 'node:os';
+import { hashNumber } from '../core/numerics/hash.ts';
+import { createDesignEvaluator, studyColumns } from '../core/search/evaluate-designs.ts';
+import type { Study } from '../core/study/study.ts';
+import { PartRows, partBytes } from './part-file.ts';
+import { RunAccount } from './run-account.ts';
+
+/** Designs in the sample, at most, and the time spent on it, at most. */
+const sampleDesigns = 400;
+const sampleMs = 2_000;
+/** Bytes that a run writes beside its parts: report, charts, front. */
+const besidesBytes = 2_000_000;
+
+/** An estimate; times in s, sizes in bytes. */
+export interface RunEstimate {
+  readonly designs: number;
+  readonly sampled: number;
+  readonly feasible: number;
+  readonly secondsPerDesign: number;
+  readonly workers: number;
+  /** With that many workers, start-up included. */
+  readonly seconds: number;
+  readonly bytes: number;
+  /** Per requirement of the study: sampled designs that miss it. */
+  readonly failing: readonly number[];
+}
+
+/** Evaluates a sample spread over all design numbers by hash, in this thread. */
+export function estimateRun(study: Study, workers = availableParallelism()): RunEstimate {
+  const columns = studyColumns(study);
+  const designs = createDesignEvaluator(study, columns);
+  const account = new RunAccount(study, columns);
+  const numbers = sampleNumbers(designs.count);
+  const rows = new PartRows(numbers.length, columns.length);
+  const row = new Float64Array(columns.length);
+  // The first designs run slower than all others: the compiler is still at work.
+  for (const number of numbers.slice(0, 20)) designs.evaluate(number, row, 0, 1);
+  const began = performance.now();
+  let sampled = 0;
+  for (const number of numbers) {
+    designs.evaluate(number, row, 0, 1);
+    const single = columns.map((_, k) => row.subarray(k, k + 1));
+    rows.append(number, 0, 1, single, account.add(number, 1, single));
+    sampled++;
+    if (performance.now() - began > sampleMs) break;
+  }
+  const secondsPerDesign = (performance.now() - began) / 1000 / sampled;
+  const bytesPerDesign = partBytes(rows, columns).length / sampled;
+  return {
+    designs: designs.count,
+    sampled,
+    feasible: account.feasible,
+    secondsPerDesign,
+    workers,
+    seconds: 1 + (secondsPerDesign * designs.count) / workers,
+    bytes: Math.ceil(bytesPerDesign * designs.count) + besidesBytes,
+    failing: account.tally.result().requirements.map(({ failing }) => failing),
+  };
+}
+
+/** Distinct numbers of 1…count, ascending: all of a small search, else one hashed pick from each of equal stretches. */
+function sampleNumbers(count: number): number[] {
+  if (count <= sampleDesigns) return Array.from({ length: count }, (_, k) => k + 1);
+  const stretch = count / sampleDesigns;
+  return Array.from({ length: sampleDesigns }, (_, k) => {
+    const first = Math.floor(k * stretch);
+    const width = Math.floor((k + 1) * stretch) - first;
+    return first + 1 + (hashNumber(k) % width);
+  });
+}

@@ -1,0 +1,49 @@
+/** A part of the results as Parquet: a fixed run of designs, every stored column in its machine unit. */
+import { type ColumnSource, parquetWriteBuffer } from 'hyparquet-writer';
+import { machineValue, type ResultColumn } from '../core/evaluate/result-columns.ts';
+
+/** Designs per part, whatever the workers and tasks, so that the same study gives the same files. */
+export const designsPerPart = 50_000;
+
+/** Name of part k, counted from 0. */
+export function partName(part: number): string {
+  return `part-${String(part).padStart(5, '0')}.parquet`;
+}
+
+/** Rows of one part, gathered batch by batch. */
+export class PartRows {
+  readonly numbers: Float64Array;
+  readonly columns: readonly Float64Array[];
+  readonly feasible: Uint8Array;
+  count = 0;
+
+  constructor(capacity: number, width: number) {
+    this.numbers = new Float64Array(capacity);
+    this.columns = Array.from({ length: width }, () => new Float64Array(capacity));
+    this.feasible = new Uint8Array(capacity);
+  }
+
+  /** Appends designs first…first + count − 1 of a batch, from its row `from` on. */
+  append(first: number, from: number, count: number, columns: readonly Float64Array[], feasible: Uint8Array): void {
+    for (let i = 0; i < count; i++) this.numbers[this.count + i] = first + from + i;
+    for (const [k, column] of columns.entries()) this.columns[k].set(column.subarray(from, from + count), this.count);
+    this.feasible.set(feasible.subarray(from, from + count), this.count);
+    this.count += count;
+  }
+}
+
+/** The bytes of a part: number, the result columns (missing values null, options by name), feasible. */
+export function partBytes(rows: PartRows, columns: readonly ResultColumn[]): Uint8Array {
+  const { count } = rows;
+  const columnData: ColumnSource[] = [
+    { name: 'number', data: BigInt64Array.from(rows.numbers.subarray(0, count), BigInt), type: 'INT64', nullable: false },
+    ...columns.map((column, k): ColumnSource => dataColumn(column, rows.columns[k].subarray(0, count))),
+    { name: 'feasible', data: Array.from(rows.feasible.subarray(0, count), (flag) => flag === 1), type: 'BOOLEAN', nullable: false },
+  ];
+  return new Uint8Array(parquetWriteBuffer({ columnData }));
+}
+
+function dataColumn(column: ResultColumn, values: Float64Array): ColumnSource {
+  const data = Array.from(values, (value) => machineValue(column, value));
+  return { name: column.key, data, type: column.role === 'option' ? 'STRING' : 'DOUBLE', nullable: true };
+}
