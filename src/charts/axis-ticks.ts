@@ -51,7 +51,7 @@ export function axisScale(values: readonly number[], axis: ChartAxis, from: numb
   if (low > high) return scaleLinear([0, 1], [from, to]);
   const size = Math.max(Math.abs(low), Math.abs(high));
   // Values that differ only by rounding are one value: no tick could tell them apart.
-  const room = high - low > Math.max(size, 0.01) * leastExtent ? (high - low) * 0.05 : Math.max(size * 0.05, leastExtent);
+  const room = high - low > Math.max(size, 0.01) * leastExtent ? (high - low) * 0.07 : Math.max(size * 0.05, leastExtent);
   return scaleLinear([low - room, high + room], [from, to]);
 }
 

@@ -25,7 +25,7 @@ export function renderTradeOffSvg(data: ReportData, xColumn: number, yColumn: nu
   if (window === null) throw new Error('a chart needs a document that belongs to a window');
   const element = document.createElementNS('http://www.w3.org/2000/svg', 'svg');
   const height = 660 + 20 * data.proposals.length;
-  const view = tradeOffView(data, xColumn, yColumn, { width: 960, height, ink: fileInk, showRemoved: true }, fileWords(data, xColumn, yColumn));
+  const view = tradeOffView(data, xColumn, yColumn, { width: 960, height, ink: fileInk, removed: true, wide: false }, fileWords(data, xColumn, yColumn));
   const svg = select(element).attr('width', view.width).attr('height', view.height).attr('role', 'img');
   drawTradeOff(svg, view);
   return `${new window.XMLSerializer().serializeToString(element)}\n`;

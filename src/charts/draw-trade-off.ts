@@ -77,11 +77,11 @@ function planChart(view: TradeOffView): Plan {
   return { frame: { x: left, y: top, width: right - left, height: bottom - top }, x, y, type, xTicks, yTicks, xTitle, yTitle, yTitleTop, keyTop };
 }
 
-/** The frame fits what can be chosen; removed designs that lie outside of it are not drawn, unless there is nothing else. */
+/** The frame fits what there is to choose from; other designs are drawn as far as they lie inside. Where nothing passes it fits all there is. */
 function framedPoints(view: TradeOffView): ChartPoint[] {
   const named = [...view.lettered, view.reference, view.closest].filter((point) => point !== null);
-  const passing = [...view.front, ...view.feasible];
-  return passing.length > 0 ? [...passing, ...named] : [...view.removed, ...named];
+  if (view.front.length === 0) return [...view.feasible, ...view.removed, ...named];
+  return [...view.front, ...(view.wide ? view.feasible : []), ...named];
 }
 
 function titleWords(axis: ChartAxis): string {
@@ -135,7 +135,7 @@ function drawDesigns(svg: SvgParent, view: TradeOffView, { frame, x, y }: Plan):
   const place = (point: ChartPoint) => ({ x: x(point.x), y: y(point.y) });
   const inside = ({ x: px, y: py }: { x: number; y: number }) => px >= frame.x && px <= frame.x + frame.width && py >= frame.y && py <= frame.y + frame.height;
   strokes(svg, view.removed.map(place).filter(inside), ink.removed);
-  dots(svg, view.feasible.map(place), ink.feasible);
+  dots(svg, view.feasible.map(place).filter(inside), ink.feasible);
   const front = svg.append('g').attr('fill', ink.front).attr('stroke', ink.paper).attr('stroke-width', 0.8);
   const lettered = new Set(view.lettered.map(({ number }) => number));
   for (const point of view.front) if (!lettered.has(point.number)) circle(front, place(point), 3.6);

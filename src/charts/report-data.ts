@@ -23,7 +23,7 @@ export interface RequirementCount {
   readonly failingAlone: number;
   /** The limit at which the first more design would pass with the others kept; null: no limit on this metric alone lets one pass. */
   readonly relaxedTo: number | null;
-  /** Per objective: the best that designs failing this alone would bring, its design, and the limit it needs; null where none. */
+  /** Per objective: the best that designs failing this alone would bring (the metric's own value, not turned), where it beats every feasible design; its design, and the limit it needs; null where none. */
   readonly relaxedBest: readonly ({ readonly number: number; readonly objective: number; readonly limit: number } | null)[];
 }
 

@@ -41,6 +41,8 @@ export interface TradeOffView {
   readonly width: number;
   readonly height: number;
   readonly ink: ChartInk;
+  /** Frames all designs that pass; otherwise the front, the reference and those put forward. */
+  readonly wide: boolean;
   readonly x: ChartAxis;
   readonly y: ChartAxis;
   readonly removed: readonly ChartPoint[];
@@ -59,7 +61,10 @@ export interface ChartLook {
   readonly width: number;
   readonly height: number;
   readonly ink: ChartInk;
-  readonly showRemoved: boolean;
+  /** Draw removed designs too. */
+  readonly removed: boolean;
+  /** Frame all designs that pass, not only the front, the reference and those put forward. */
+  readonly wide: boolean;
 }
 
 /** The letter of a proposal by its place in the list. */
@@ -84,9 +89,10 @@ export function tradeOffView(data: ReportData, xColumn: number, yColumn: number,
     width: look.width,
     height: look.height,
     ink: look.ink,
+    wide: look.wide,
     x: chartAxis(x, study),
     y: chartAxis(y, study),
-    removed: look.showRemoved || data.counts.feasible === 0 ? points('removed') : [],
+    removed: look.removed || data.counts.feasible === 0 ? points('removed') : [],
     feasible: points('feasible'),
     front: points('front'),
     reference: points('reference')[0] ?? null,

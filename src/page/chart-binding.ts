@@ -25,8 +25,8 @@ export function bindChart(host: HTMLElement, reading: HTMLElement, data: ReportD
   function draw(): void {
     const width = Math.max(280, Math.round(host.clientWidth));
     const height = Math.round(Math.min(640, Math.max(400, width * 0.72)));
-    const { x, y, showRemoved } = state.choices;
-    view = tradeOffView(data, x, y, { width, height, ink: pageInk, showRemoved });
+    const { x, y, wide } = state.choices;
+    view = tradeOffView(data, x, y, { width, height, ink: pageInk, removed: wide, wide });
     places = drawTradeOff(svg.attr('width', width).attr('height', height) as Parameters<typeof drawTradeOff>[0], view);
     host.setAttribute('aria-label', `${view.y.title} over ${view.x.title}. Arrow keys walk along the front, Enter shows a design in full.`);
     host.setAttribute('aria-valuemax', String(Math.max(0, walk().length - 1)));

@@ -1,8 +1,9 @@
 /** One design in full: every metric of every trial with what limits it, as the page computed it. */
-import { capitalised, figureText, neededDecimals } from '../charts/figure-words.ts';
+import { capitalised, figureText, type Measured, neededDecimals } from '../charts/figure-words.ts';
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
-import type { LimitWord } from '../core/evaluate/evaluator.ts';
+import { type MetricColumn, trialMetrics } from '../core/study/metrics.ts';
 import { findParameter } from '../core/study/parameters.ts';
+import type { Trial } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import type { ComputedDesign } from './design-bench.ts';
 import { html, type Markup, type Piece } from './markup.ts';
@@ -14,7 +15,7 @@ export function designInFull(design: ComputedDesign, name: string, data: ReportD
   const { study } = data;
   const trials = study.trials.map(
     (trial) =>
-      html`<section class="trial"><h4>${trial.name}</h4><p class="hint">${capitalised(trial.kind)}, ${trialSettings(trial, study)}</p>${metricList(design, trial.name, data)}</section>`,
+      html`<section class="trial"><h4>${trial.name}</h4><p class="hint">${capitalised(trial.kind)}, ${trialSettings(trial, study)}</p>${metricList(design, trial, data)}</section>`,
   );
   return html`<h3 id="design-heading" tabindex="-1">Design ${formatFigure(design.number, 0)}${name !== '' && `, ${name}`}: all figures</h3>
 <dl class="inputs row">${inputRows(design, data)}</dl>
@@ -31,26 +32,36 @@ function inputRows(design: ComputedDesign, { study }: ReportData): Piece[] {
   });
 }
 
-function metricList(design: ComputedDesign, trial: string | null, data: ReportData): Markup {
-  const own = design.metrics.filter(({ column, value }) => column.trial === trial && (trial !== null || !Number.isNaN(value)));
-  return html`<dl>${own.map(({ column, value, limit }) => {
-    const asked = data.requirements.filter(({ metric }) => metric === column.name);
-    return html`<div><dt>${column.row.label}</dt><dd>${shownValue(value, column.row, asked[0], data)}${limitPiece(limit, !Number.isNaN(value), column.row.limited === true)}${asked.map((requirement) => verdict(value, requirement, data))}</dd></div>`;
+/** Metrics of one trial, or of the whole design (null), which are left out where the study has no figures for them. */
+function metricList(design: ComputedDesign, trial: Trial | null, data: ReportData): Markup {
+  const own = design.metrics.filter(({ column, value }) => column.trial === (trial?.name ?? null) && isOfUse(column, value, data));
+  return html`<dl>${own.map((metric) => {
+    const { column, value } = metric;
+    const asked = data.requirements.filter((requirement) => requirement.metric === column.name);
+    const notes = [limitNote(metric, trial), ...asked.map((requirement) => verdict(value, requirement, data))].filter((note) => note !== null);
+    return html`<div><dt>${column.row.label}</dt><dd>${shownValue(value, column.row, asked[0], data)}${notes}</dd></div>`;
   })}</dl>`;
 }
 
-function shownValue(value: number, row: Parameters<typeof figureText>[1], asked: RequirementCount | undefined, data: ReportData): string {
+function isOfUse({ trial, row }: MetricColumn, value: number, { study }: ReportData): boolean {
+  if (!Number.isNaN(value)) return true;
+  return trial !== null && (row !== trialMetrics.outsideMap || study.lossMap !== null);
+}
+
+function shownValue(value: number, row: Measured, asked: RequirementCount | undefined, data: ReportData): string {
   if (asked === undefined || Number.isNaN(value)) return figureText(value, row, data.study);
   return valueAgainst(value, asked, metricColumn(data, asked.metric).column, data.study);
 }
 
-function limitPiece(limit: LimitWord, exists: boolean, limited: boolean): Piece {
-  if (limit === '') return exists || limited ? null : html` <small>does not exist here</small>`;
-  return html` <small>${exists && limit !== 'beyond 45°' ? `limited by ${limit}` : limit}</small>`;
+/** What limits a result, or why there is none. */
+function limitNote({ value, limit }: ComputedDesign['metrics'][number], trial: Trial | null): Markup | null {
+  const exists = !Number.isNaN(value);
+  if (limit === '') return exists || trial === null || trial.kind === 'cycle' ? null : html`<small>not reached</small>`;
+  return html`<small>${exists && limit !== 'beyond 45°' ? `limited by ${limit}` : limit}</small>`;
 }
 
 function verdict(value: number, requirement: RequirementCount, data: ReportData): Markup {
   const bound = boundWords(requirement, metricColumn(data, requirement.metric).column, data.study);
   const met = meets(Number.isNaN(value) ? null : value, requirement);
-  return met ? html` <small>met: ${bound}</small>` : html` <small class="missed">missed: ${bound}</small>`;
+  return met ? html`<small>met: ${bound}</small>` : html`<small class="missed">missed: ${bound}</small>`;
 }

@@ -5,7 +5,8 @@ export interface PageChoices {
   /** Columns on the axes of the chart. */
   readonly x: number;
   readonly y: number;
-  readonly showRemoved: boolean;
+  /** The chart frames all that passes and shows what was removed. */
+  readonly wide: boolean;
   /** Design shown in full; null: none. */
   readonly pinned: number | null;
 }

@@ -23,7 +23,7 @@ function element<Kind extends HTMLElement = HTMLElement>(id: string): Kind {
 
 function start(): void {
   const data = JSON.parse(element('report-data').textContent ?? '') as ReportData;
-  const state = createState({ ...firstAxes(data), showRemoved: false, pinned: null });
+  const state = createState({ ...firstAxes(data), wide: false, pinned: null });
   for (const hidden of document.querySelectorAll<HTMLElement>('#chart-controls, #choose-design, [data-design][hidden]')) hidden.hidden = false;
   bindControls(state);
   bindDesign(data, state);
@@ -40,10 +40,10 @@ function start(): void {
 function bindControls(state: PageState): void {
   const across = element<HTMLSelectElement>('axis-x');
   const upwards = element<HTMLSelectElement>('axis-y');
-  const removed = element<HTMLInputElement>('show-removed');
+  const wide = element<HTMLInputElement>('wide-view');
   across.addEventListener('change', () => state.change({ x: Number(across.value) }));
   upwards.addEventListener('change', () => state.change({ y: Number(upwards.value) }));
-  removed.addEventListener('change', () => state.change({ showRemoved: removed.checked }));
+  wide.addEventListener('change', () => state.change({ wide: wide.checked }));
 }
 
 /** Computes the chosen design and shows it in full; offers the same to programs. */

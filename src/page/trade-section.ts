@@ -22,7 +22,7 @@ export function tradeSection(data: ReportData): Markup {
 <div id="chart-controls" class="controls" hidden>
 <label>Across <select id="axis-x">${axisOptions(data, x)}</select></label>
 <label>Upwards <select id="axis-y">${axisOptions(data, y)}</select></label>
-<label class="tick"><input type="checkbox" id="show-removed"> show removed designs</label>
+<label class="tick"><input type="checkbox" id="wide-view"> wider, with removed designs</label>
 </div>
 <div class="chart-and-reading">
 <div id="chart" class="chart"></div>
