@@ -13,7 +13,7 @@ export default function evaluateTask({ first, count }: DesignTask): TaskResult {
     evaluator ??= createDesignEvaluator(study, columns);
     const values = new Float64Array(count * columns.length);
     for (; at < count; at++) evaluator.evaluate(first + at, values, at, count);
-    return { values: move(values) as unknown as Float64Array };
+    return move(values) as unknown as Float64Array;
   } catch (error) {
     // A custom error would lose its fields on the way to the main thread.
     return { fault: error instanceof Error ? (error.stack ?? error.message) : String(error), designNumber: first + at };

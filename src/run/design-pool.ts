@@ -16,8 +16,8 @@ export interface DesignTask {
   readonly count: number;
 }
 
-/** Column-major values: column k of design i at `values[k × count + i]`; or a fault of ours at one design. */
-export type TaskResult = { readonly values: Float64Array } | { readonly fault: string; readonly designNumber: number };
+/** Column-major values, moved over: column k of design i at `k × count + i`; or a fault of ours at one design. */
+export type TaskResult = Float64Array | { readonly fault: string; readonly designNumber: number };
 
 /** Results of one task. */
 export interface DesignBatch extends DesignTask {
@@ -71,6 +71,6 @@ async function awaitBatch(task: DesignTask, result: Promise<TaskResult>, width: 
     );
   });
   if ('fault' in done) throw new Error(`design ${done.designNumber}: ${done.fault}`);
-  const columns = Array.from({ length: width }, (_, k) => done.values.subarray(k * task.count, (k + 1) * task.count));
+  const columns = Array.from({ length: width }, (_, k) => done.subarray(k * task.count, (k + 1) * task.count));
   return { ...task, columns };
 }
