@@ -66,7 +66,7 @@ function fileWords(data: ReportData, xColumn: number, yColumn: number) {
   const letters = data.proposals.map((proposal, index) => {
     const design = designs.find(({ number }) => number === proposal.number);
     const figures = inputs.map(({ column, index: at }) => `${columnPhrase(column, study)} ${valueText(design?.values[at] ?? null, column, study)}`);
-    return `${proposalLetter(index)}  ${proposalRules(proposal, data).join(', ')}: ${figures.join(', ')} (design ${formatFigure(proposal.number, 0)})`;
+    return `${proposalLetter(index)}: ${proposalRules(proposal, data).join(', ')} – ${figures.join(', ')} (design ${formatFigure(proposal.number, 0)})`;
   });
   const passing =
     counts.feasible === 0

@@ -32,15 +32,20 @@ function inputRows(design: ComputedDesign, { study }: ReportData): Piece[] {
   });
 }
 
-/** Metrics of one trial, or of the whole design (null), which are left out where the study has no figures for them. */
+/** Metrics of one trial, or of the whole design (null); those the study has no figures for are left out, energy by sink stands apart. */
 function metricList(design: ComputedDesign, trial: Trial | null, data: ReportData): Markup {
   const own = design.metrics.filter(({ column, value }) => column.trial === (trial?.name ?? null) && isOfUse(column, value, data));
-  return html`<dl>${own.map((metric) => {
-    const { column, value } = metric;
-    const asked = data.requirements.filter((requirement) => requirement.metric === column.name);
-    const notes = [limitNote(metric, trial), ...asked.map((requirement) => verdict(value, requirement, data))].filter((note) => note !== null);
-    return html`<div><dt>${column.row.label}</dt><dd>${shownValue(value, column.row, asked[0], data)}${notes}</dd></div>`;
-  })}</dl>`;
+  const sinks = own.filter(({ column }) => column.row.name.startsWith('energy.'));
+  const others = own.filter((metric) => !sinks.includes(metric));
+  const list = (metrics: ComputedDesign['metrics']) => html`<dl>${metrics.map((metric) => metricRow(metric, trial, data))}</dl>`;
+  return sinks.length === 0 ? list(others) : html`${list(others)}<p class="sinks">Where the battery energy goes</p>${list(sinks)}`;
+}
+
+function metricRow(metric: ComputedDesign['metrics'][number], trial: Trial | null, data: ReportData): Markup {
+  const { column, value } = metric;
+  const asked = data.requirements.filter((requirement) => requirement.metric === column.name);
+  const notes = [limitNote(metric, trial), ...asked.map((requirement) => verdict(value, requirement, data))];
+  return html`<div><dt>${column.row.label}</dt><dd>${shownValue(value, column.row, asked[0], data)}${notes}</dd></div>`;
 }
 
 function isOfUse({ trial, row }: MetricColumn, value: number, { study }: ReportData): boolean {
