@@ -7,7 +7,8 @@ rmSync('dist', { recursive: true, force: true });
 const node = { bundle: true, platform: 'node', format: 'esm', target: 'node20', packages: 'external', outdir: 'dist', logLevel: 'warning' };
 
 await Promise.all([
-  build({ ...node, entryPoints: { layshaft: 'src/cli/layshaft.ts' }, banner: { js: '#!/usr/bin/env node' } }),
+  // Split, so that threads, charts and page are loaded by the commands that need them only.
+  build({ ...node, entryPoints: { layshaft: 'src/cli/layshaft.ts' }, splitting: true, banner: { js: '#!/usr/bin/env node' } }),
   build({ ...node, entryPoints: { thread: 'workers/thread.ts' } }),
   build({
     entryPoints: { page: 'src/page/page.ts', style: 'src/page/report.css' },

@@ -11,7 +11,7 @@ export const statusSentences: readonly { readonly status: ExitStatus; readonly s
   { status: exitStatus.failed, sentence: 'failed, for example for want of disk space' },
   { status: exitStatus.wrong, sentence: 'the study or the command line is wrong' },
   { status: exitStatus.nothingFeasible, sentence: 'done, but no design meets every requirement' },
-  { status: exitStatus.interrupted, sentence: 'interrupted; the same command resumes a run' },
+  { status: exitStatus.interrupted, sentence: 'interrupted; the same command starts the run again' },
 ];
 
 /** The most serious of several statuses: interrupted, failed, wrong, nothing feasible, done. */

@@ -4,7 +4,7 @@ import { type LimitWord, limitWords } from '../core/evaluate/evaluator.ts';
 import { createSearch } from '../core/search/search.ts';
 import { type MetricColumn, machineKey } from '../core/study/metrics.ts';
 import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
-import type { Axis, Study } from '../core/study/study.ts';
+import type { Study } from '../core/study/study.ts';
 import type { Quantity } from '../core/units/units.ts';
 import { fromSi, machineUnit } from '../core/units/units.ts';
 
@@ -39,13 +39,15 @@ export interface DesignSheet {
   readonly metrics: readonly SheetMetric[];
 }
 
-/** Evaluates a design with some figures set. Throws a RangeError where the search has no design of that number. */
+/**
+ * Evaluates a design of a study that already holds the settings; where one sets a varied number it goes before the design's own.
+ * Throws a RangeError where the search has no design of that number.
+ */
 export function designSheet(study: Study, number: number, settings: readonly Setting[]): DesignSheet {
-  const open = withAxesFor(study, settings);
-  const evaluator = compileStudy(open);
+  const evaluator = compileStudy(study);
   const row = Float64Array.from(evaluator.reference);
   if (number > 0) createSearch(study).inputs(number, row, 0);
-  for (const { name, value } of settings) row[evaluator.inputs.indexOf(name)] = value;
+  for (const [at, name] of evaluator.inputs.entries()) row[at] = settings.find((setting) => setting.name === name)?.value ?? row[at];
   const values = new Float64Array(evaluator.metrics.length);
   const limits = new Uint8Array(values.length);
   evaluator.evaluate(row, 0, values, 0, limits);
@@ -53,7 +55,7 @@ export function designSheet(study: Study, number: number, settings: readonly Set
     study,
     number,
     settings,
-    inputs: evaluator.inputs.length > 0 ? evaluator.inputs.map((name, at) => sheetInput(name, row[at] as number)) : everyNumber(study),
+    inputs: sheetInputs(study, evaluator.inputs, row, settings),
     metrics: evaluator.metrics.map((column, at) => ({
       column,
       value: values[at] as number,
@@ -62,12 +64,10 @@ export function designSheet(study: Study, number: number, settings: readonly Set
   };
 }
 
-/** A number that is set is an input like a varied one, so that measured curves and maps follow it in the same way. */
-function withAxesFor(study: Study, settings: readonly Setting[]): Study {
-  const varied = new Set(study.axes.flatMap((axis) => axis.sets));
-  const names = new Set(settings.map((setting) => setting.name).filter((name) => !varied.has(name)));
-  const axes = [...names].map((name): Axis => ({ name, sets: [name], points: [[Number.NaN]], labels: null, range: null }));
-  return { ...study, axes: [...study.axes, ...axes] };
+function sheetInputs(study: Study, varied: readonly string[], row: Float64Array, settings: readonly Setting[]): SheetInput[] {
+  const set = settings.filter(({ name }) => !varied.includes(name));
+  if (varied.length === 0 && set.length === 0) return everyNumber(study);
+  return [...varied.map((name, at) => sheetInput(name, row[at] as number)), ...set.map(({ name, value }) => sheetInput(name, value))];
 }
 
 function everyNumber(study: Study): SheetInput[] {

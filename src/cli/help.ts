@@ -15,12 +15,13 @@ export function programHelp(commands: readonly CommandRow[]): string {
       'A study file (YAML) states a vehicle, its electric drive, the trials it must pass, what may vary and what the design must meet. ' +
         'layshaft puts every design through the trials, drops those that miss a requirement, and shows which of the rest cannot be bettered.',
     ),
-    section('Start here', ready.map((command) => [command.example, command.sentence]).filter(startsTheJob)),
-    'Usage: layshaft COMMAND [OPTIONS]',
-    section('Commands', ready.map(commandLine)),
-    section('Not available yet', later.map(commandLine)),
+    section('Commands, in the order of first use', ready.map(commandLine)),
+    section(
+      'Not available yet',
+      later.map((command) => [`layshaft ${command.name}`, command.sentence]),
+    ),
     section('Options', [
-      ['--help', 'This text; after a command, that command with all its options and an example of each'],
+      ['--help', 'This text; after a command, its arguments and options with an example of each'],
       ['--version', 'The version of layshaft'],
     ]),
     exitSection(),
@@ -57,12 +58,8 @@ export function flags(option: OptionRow): string {
   return option.value === undefined ? `--${option.name}` : `--${option.name} ${option.value}`;
 }
 
-function startsTheJob(line: readonly string[]): boolean {
-  return ['new', 'check', 'run', 'sheet'].includes((line[0] as string).split(' ')[1] as string);
-}
-
 function commandLine(command: CommandRow): string[] {
-  return [command.name, command.sentence];
+  return [command.example, command.sentence];
 }
 
 function examples(command: CommandRow): string {

@@ -1,12 +1,12 @@
 /** Requirements in words: the bound, the value beside it, and by how much it is met or missed. */
-import { differenceText, figureText, withCurrency } from '../charts/figure-words.ts';
+import { differenceText, figureText, neededDecimals, withCurrency } from '../charts/figure-words.ts';
 import type { MetricRow } from '../core/study/metrics.ts';
 import type { Requirement, Study } from '../core/study/study.ts';
 import { type Format, formatAgainstLimit, formatLimit } from '../core/units/format-quantity.ts';
 
 /** `at least 20 %`. */
 export function boundText({ bound, limit }: Pick<Requirement, 'bound' | 'limit'>, row: MetricRow, study: Study): string {
-  const printed = formatLimit(limit, row.quantity, formatOf(row, study));
+  const printed = formatLimit(limit, row.quantity, formatOf({ decimals: neededDecimals(limit, row, study) }, study));
   return `${bound === 'atLeast' ? 'at least' : 'at most'} ${withCurrency(printed, row.quantity, study)}`;
 }
 
@@ -21,7 +21,7 @@ export function meets(value: number, { bound, limit }: Requirement): boolean {
   return bound === 'atLeast' ? value >= limit : value <= limit;
 }
 
-/** `met, 4.5 percentage points to spare`, `MISSED by 0.53 s`, `MISSED: it does not exist`. */
+/** `met, 4.5 %-points to spare`, `MISSED by 0.53 s`, `MISSED: it does not exist`. */
 export function verdictText(value: number, requirement: Requirement, row: MetricRow, study: Study): string {
   const asked = requirement.implied ? ' (asked of every cycle)' : '';
   if (Number.isNaN(value)) return `MISSED: there is no value${asked}`;
@@ -32,6 +32,6 @@ export function verdictText(value: number, requirement: Requirement, row: Metric
   return Math.abs(margin) <= 1e-9 * Math.abs(requirement.limit) ? 'met, nothing to spare' : `met, ${differenceText(margin, row, study)} to spare`;
 }
 
-function formatOf({ decimals }: MetricRow, study: Study): Format {
+function formatOf({ decimals }: Pick<MetricRow, 'decimals'>, study: Study): Format {
   return { decimals, system: study.report.units };
 }

@@ -71,8 +71,17 @@ function resultsOf(sheet: DesignSheet, trial: Trial): SheetMetric[] {
   return sheet.metrics.filter(({ column }) => column.trial === trial.name);
 }
 
-function resultRow(sheet: DesignSheet, { column, value, limit }: SheetMetric): string[] {
-  return [column.row.label, ...figureCells(value, column.row, sheet.study), limitText(limit, !Number.isNaN(value))];
+function resultRow(sheet: DesignSheet, metric: SheetMetric): string[] {
+  return [metric.column.row.label, ...metricCells(sheet, metric), limitText(metric.limit, !Number.isNaN(metric.value))];
+}
+
+/** Figure and unit; one that misses a requirement in decimals enough not to look as if it met it. */
+function metricCells({ study }: DesignSheet, { column, value }: SheetMetric): [string, string] {
+  const missed = study.requirements.find((requirement) => requirement.metric === column.name && !meets(value, requirement));
+  const [figure, unit] = figureCells(value, column.row, study);
+  if (missed === undefined || Number.isNaN(value)) return [figure, unit];
+  const printed = valueBesideLimit(value, missed, column.row, study);
+  return [unit === '' ? printed : printed.slice(0, -unit.length).trimEnd(), unit];
 }
 
 /** Cycles side by side: one line per metric that at least one of them has. */
@@ -90,14 +99,14 @@ function cycleBlock(sheet: DesignSheet, cycles: readonly Trial[]): string {
   return [ink('bold', 'Cycles'), ...conditions, columns([head, ...rows], { indent: 4, align })].join('\n');
 }
 
-function cycleCell(sheet: DesignSheet, { column, value, limit }: SheetMetric): string {
-  return Number.isNaN(value) && limit !== '' ? limit : figureCells(value, column.row, sheet.study)[0];
+function cycleCell(sheet: DesignSheet, metric: SheetMetric): string {
+  return Number.isNaN(metric.value) && metric.limit !== '' ? metric.limit : metricCells(sheet, metric)[0];
 }
 
 function wholeDesignRows(sheet: DesignSheet): string[][] {
   return sheet.metrics
     .filter(({ column, value }) => column.trial === null && !Number.isNaN(value))
-    .map(({ column, value }) => [column.row.label, ...figureCells(value, column.row, sheet.study)]);
+    .map((metric) => [metric.column.row.label, ...metricCells(sheet, metric)]);
 }
 
 function requirementRows(sheet: DesignSheet): string[][] {

@@ -15,6 +15,11 @@ export function say(text = ''): void {
   process.stderr.write(`${text}\n`);
 }
 
+/** A mistake of the person, in words that say what to do. */
+export function complain(message: string): void {
+  say(`${ink('red', 'error:')} ${message}`);
+}
+
 /** Machine output, as it stands. */
 export function give(text: string): void {
   process.stdout.write(text);

@@ -34,13 +34,13 @@ const verdictOf = (...args: Parameters<typeof verdictText>) => plain(verdictText
 
 describe('requirements in words', () => {
   it('says the bound in the unit of the reader', () => {
-    expect(plain(boundText(grade, trialMetrics.grade, study))).toBe('at least 20.0 %');
+    expect(plain(boundText(grade, trialMetrics.grade, study))).toBe('at least 20 %');
     expect(plain(boundText({ bound: 'atLeast', limit: 100 / 3.6 }, trialMetrics.speed, us))).toBe('at least 62.14 mph');
     expect(plain(boundText({ bound: 'atMost', limit: 2000 }, designMetrics['driveUnit.cost'], study))).toBe('at most 2000 EUR');
   });
 
   it('says by how much a requirement is met or missed, percentages in points', () => {
-    expect(verdictOf(0.245, grade, trialMetrics.grade, study)).toBe('met, 4.5 percentage points to spare');
+    expect(verdictOf(0.245, grade, trialMetrics.grade, study)).toBe('met, 4.5 %-points to spare');
     expect(verdictOf(12.03, time, trialMetrics.time, study)).toBe('MISSED by 0.53 s');
     expect(verdictOf(11.5, time, trialMetrics.time, study)).toBe('met, nothing to spare');
   });
@@ -54,7 +54,7 @@ describe('requirements in words', () => {
   it('tells a requirement that every cycle must be followed apart from written ones', () => {
     const followed: Requirement = { metric: 'town.offTrace', bound: 'atMost', limit: 0, implied: true };
     expect(verdictOf(0, followed, trialMetrics.offTrace, study)).toBe('met (asked of every cycle)');
-    expect(verdictOf(0.0055, followed, trialMetrics.offTrace, study)).toBe('MISSED by 0.55 percentage points (asked of every cycle)');
+    expect(verdictOf(0.0055, followed, trialMetrics.offTrace, study)).toBe('MISSED by 0.55 %-points (asked of every cycle)');
   });
 
   it('never prints a miss as met or with a margin of zero, however small it is', () => {

@@ -1,0 +1,78 @@
+/** The outcome of `check` for people. */
+import { visibleText } from '../charts/visible-text.ts';
+import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
+import type { Axis, Study } from '../core/study/study.ts';
+import type { RunEstimate } from '../run/estimate-run.ts';
+import { type CheckedStudy, requiredColumn } from './checked-study.ts';
+import { count, countOf, durationText, shareText, sizeText } from './figure-text.ts';
+import { warningSentence } from './open-study.ts';
+import { boundText } from './requirement-text.ts';
+import { columns } from './table.ts';
+import { capped, ink } from './terminal.ts';
+import { givenText, trialConditions } from './trial-text.ts';
+
+const mostLines = 40;
+
+/** A valid study: what would run, how long, how large, and what to keep an eye on. */
+export function checkText({ opened, outlook }: Extract<CheckedStudy, { outlook: unknown }>): string {
+  const { study, file } = opened;
+  const warnings = opened.warnings.map((warning) => `  ${warningSentence(warning, opened)}`);
+  const parts = [
+    `${ink('bold', file)} has ${ink('green', 'no mistakes')}. ${visibleText(study.title)}`,
+    block('Trials', trialLines(study)),
+    'needs' in outlook
+      ? `A run needs ${outlook.needs.expected}; this is ${outlook.needs.found}. ${outlook.needs.hint}`
+      : [block('Varied', axisLines(study)), costLine(outlook.estimate), block(sampleTitle(outlook.estimate), sampleLines(outlook.estimate, study))]
+          .filter((part) => part !== '')
+          .join('\n\n'),
+    block(warnings.length === 1 ? 'Warning' : 'Warnings', warnings),
+  ];
+  return parts.filter((part) => part !== '').join('\n\n');
+}
+
+function block(title: string, lines: readonly string[]): string {
+  return lines.length === 0 ? '' : [ink('bold', title), ...capped(lines, mostLines, 'lines')].join('\n');
+}
+
+function trialLines(study: Study): string[] {
+  return lines(study.trials.map((trial) => [visibleText(trial.name), trialConditions(study, trial)]));
+}
+
+function axisLines(study: Study): string[] {
+  return lines(study.axes.map((axis) => [visibleText(axis.name), countOf(axis.points.length, 'value'), axisText(axis, study)]));
+}
+
+function axisText({ name, points, labels }: Axis, study: Study): string {
+  const row = findParameter(name);
+  const words = labels?.map(visibleText) ?? points.map(([value]) => givenText(value as number, row as ParameterRow, study));
+  return words.length <= 4 || labels !== null ? words.slice(0, 12).join(', ') + (words.length > 12 ? ', …' : '') : `${words[0]} to ${words.at(-1)}`;
+}
+
+function costLine({ designs, seconds, workers, bytes, sampled }: RunEstimate): string {
+  const time = `about ${durationText(seconds)} with ${countOf(workers, 'worker')}`;
+  return `A run evaluates ${ink('bold', countOf(designs, 'design'))}: ${time}, about ${sizeText(bytes)} of results (measured on ${countOf(sampled, 'design')}).`;
+}
+
+function sampleTitle({ sampled, designs, feasible }: RunEstimate): string {
+  const sample = sampled === designs ? `All ${countOf(designs, 'design')}` : `Sample of ${countOf(sampled, 'design')}`;
+  const meet = feasible === 0 ? 'none meets' : `${count(feasible)} (${shareText(feasible / sampled)}) meet`;
+  return `${sample}: ${meet} every requirement`;
+}
+
+function sampleLines({ failing, sampled }: RunEstimate, study: Study): string[] {
+  return lines(
+    study.requirements.map((requirement, at) => {
+      const bound = boundText(requirement, requiredColumn(requirement, study).row, study);
+      return [visibleText(requirement.metric), bound, removalText(failing[at] as number, sampled) + (requirement.implied ? ' (asked of every cycle)' : '')];
+    }),
+  );
+}
+
+function removalText(failing: number, sampled: number): string {
+  if (failing === 0) return 'removes nothing';
+  return failing === sampled ? ink('red', 'removes everything') : `removes ${shareText(failing / sampled)}`;
+}
+
+function lines(rows: readonly (readonly string[])[]): string[] {
+  return rows.length === 0 ? [] : columns(rows, { indent: 2 }).split('\n');
+}

@@ -1,0 +1,57 @@
+/** A study as `check` sees it: its mistakes, or the outlook of a run. */
+import { machineValue } from '../core/evaluate/result-columns.ts';
+import { whatRunNeeds } from '../core/study/check-study.ts';
+import { metricColumns } from '../core/study/metric-columns.ts';
+import type { MetricColumn } from '../core/study/metrics.ts';
+import type { Requirement, Study } from '../core/study/study.ts';
+import type { RunEstimate } from '../run/estimate-run.ts';
+import { issueJson, type OpenStudy, readStudy, type WrongStudy } from './open-study.ts';
+
+/** What a run of a study without mistakes would do, or what it still needs. */
+export type Outlook = { readonly needs: NonNullable<ReturnType<typeof whatRunNeeds>> } | { readonly estimate: RunEstimate };
+
+/** A study file after the check. */
+export type CheckedStudy = { readonly opened: WrongStudy } | { readonly opened: OpenStudy; readonly outlook: Outlook };
+
+/** Reads and checks a file; measures a sample of its designs where a run could take it. */
+export async function checkStudyFile(file: string): Promise<CheckedStudy> {
+  const opened = readStudy(file);
+  if (!opened.ok) return { opened };
+  const needs = whatRunNeeds(opened.study);
+  if (needs !== null) return { opened, outlook: { needs } };
+  const { estimateRun } = await import('../run/estimate-run.ts');
+  return { opened, outlook: { estimate: estimateRun(opened.study) } };
+}
+
+/** The column of a required metric. */
+export function requiredColumn({ metric }: Requirement, study: Study): MetricColumn {
+  return metricColumns(study).find((column) => column.name === metric) as MetricColumn;
+}
+
+/** The check for programs. */
+export function checkJson(checked: CheckedStudy): object {
+  if (!('outlook' in checked)) {
+    const { file, unreadable, issues } = checked.opened;
+    return { study: file, valid: false, unreadable, issues: issues.map(issueJson) };
+  }
+  const { opened, outlook } = checked;
+  const { study, file, warnings } = opened;
+  return {
+    study: file,
+    valid: true,
+    warnings: warnings.map(issueJson),
+    trials: study.trials.map(({ name, kind, rating }) => ({ name, kind, rating })),
+    varied: study.axes.map(({ name, points }) => ({ name, values: points.length })),
+    run: 'needs' in outlook ? { possible: false, ...outlook.needs } : { possible: true, ...estimateJson(outlook.estimate, study) },
+  };
+}
+
+function estimateJson(estimate: RunEstimate, study: Study): object {
+  const { designs, sampled, feasible, seconds, workers, bytes, failing } = estimate;
+  const requirements = study.requirements.map((requirement, at) => {
+    const { key, row } = requiredColumn(requirement, study);
+    const limit = machineValue({ role: 'metric', quantity: row.quantity, labels: null }, requirement.limit);
+    return { metric: key, [requirement.bound]: limit, implied: requirement.implied, failing: failing[at] };
+  });
+  return { designs, seconds, workers, bytes, sample: { designs: sampled, feasible, requirements } };
+}
