@@ -6,10 +6,11 @@ import type { CompiledCycle } from './compiled-cycle.ts';
 import { isOverspeed } from './drive-step.ts';
 import type { DrivenSteps } from './driven-steps.ts';
 
-/** Puts the steps that the higher gear takes into `lower`, which then holds the steps as driven. */
-export function chooseGears(vehicle: Vehicle, cycle: CompiledCycle, lower: DrivenSteps, higher: DrivenSteps): void {
+/** Puts those of the moving steps `from` up to, not including, `to` that the higher gear takes into `cycle.driven`. */
+export function chooseGears(vehicle: Vehicle, cycle: CompiledCycle, from: number, to: number): void {
+  const { driven: lower, drivenHigher: higher } = cycle;
   const mostW = mostPowerW(vehicle.battery) - vehicle.auxiliariesW;
-  for (let k = 0; k < cycle.speedMPerS.length; k++) {
+  for (let k = from; k < to; k++) {
     if (takesHigherGear(vehicle, cycle.speedMPerS[k], mostW, k, lower, higher)) copyStep(higher, lower, k);
   }
 }

@@ -81,8 +81,8 @@ export interface CompiledCycle extends MovingSteps {
   readonly drivenHigher: DrivenSteps;
   /** Moving steps near a limit of the drive. */
   readonly nearLimit: Int32Array;
-  /** Motor losses before each moving step, and over all of them. */
-  readonly lossBeforeJ: Float64Array;
+  /** Motor losses up to the end of so many moving steps: one entry more than steps, the first 0. */
+  readonly lossToJ: Float64Array;
 }
 
 /**
@@ -112,7 +112,7 @@ export function compileCycle(trace: SpeedTraceLike, conditions: CycleConditions)
     driven: createDrivenSteps(moving.length),
     drivenHigher: createDrivenSteps(moving.length),
     nearLimit: new Int32Array(moving.length),
-    lossBeforeJ: new Float64Array(moving.length + 1),
+    lossToJ: new Float64Array(moving.length + 1),
   };
 }
 

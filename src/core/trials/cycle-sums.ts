@@ -24,30 +24,38 @@ export interface CycleSums {
   missedS: number;
 }
 
+/** Nothing added up yet. */
+export function emptySums(): CycleSums {
+  return {
+    terminalJ: 0,
+    packHeatJ: 0,
+    demandJ: 0,
+    brakingJ: 0,
+    recoveredJ: 0,
+    gearingJ: 0,
+    lossJ: 0,
+    brakesJ: 0,
+    unmetJ: 0,
+    torqueSquareN2M2S: 0,
+    missedS: 0,
+  };
+}
+
 /**
- * Adds up the steps in `cycle.driven` and the standing time. Terminal power below the charge limit is held there and the
- * excess goes to the friction brakes; beyond V²/(4R) it is held too, the step is missed and the difference is unmet.
+ * Adds the moving steps `from` up to, not including, `to` of `cycle.driven`. Terminal power below the charge limit is held there
+ * and the excess goes to the friction brakes; beyond V²/(4R) it is held too, the step is missed and the difference is unmet.
  */
-export function sumSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
-  const { durationS, speedMPerS, lossBeforeJ } = cycle;
+export function addSteps(vehicle: Vehicle, cycle: CompiledCycle, from: number, to: number, sums: CycleSums): void {
+  const { durationS, speedMPerS, lossToJ } = cycle;
   const { demandN, gearedN, torqueNm, shaftW, lossW, missed } = cycle.driven;
   const { voltageV, resistanceOhm, chargeW } = vehicle.battery;
   const { auxiliariesW } = vehicle;
   const mostW = mostPowerW(vehicle.battery);
   const voltageSquare = voltageV * voltageV;
   const resistance4 = 4 * resistanceOhm;
-  let terminalJ = 0;
+  let { terminalJ, demandJ, brakingJ, recoveredJ, gearingJ, lossJ, brakesJ, unmetJ, torqueSquareN2M2S, missedS } = sums;
   let dropSquareV2S = 0;
-  let demandJ = 0;
-  let brakingJ = 0;
-  let recoveredJ = 0;
-  let gearingJ = 0;
-  let lossJ = 0;
-  let brakesJ = 0;
-  let unmetJ = 0;
-  let torqueSquareN2M2S = 0;
-  let missedS = 0;
-  for (let k = 0; k < speedMPerS.length; k++) {
+  for (let k = from; k < to; k++) {
     const stepS = durationS[k];
     const lengthM = speedMPerS[k] * stepS;
     const demand = demandN[k];
@@ -56,8 +64,8 @@ export function sumSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
     const shaft = shaftW[k];
     const loss = lossW[k];
     let terminal = shaft + loss + auxiliariesW;
-    lossBeforeJ[k] = lossJ;
     lossJ += loss * stepS;
+    lossToJ[k + 1] = lossJ;
     torqueSquareN2M2S += torque * torque * stepS;
     gearingJ += shaft * stepS - geared * lengthM;
     if (geared > demand) brakesJ += (geared - demand) * lengthM;
@@ -77,19 +85,26 @@ export function sumSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
       missed[k] = 1;
     }
     if (missed[k] !== 0) missedS += stepS;
-    // Twice the voltage lost in the pack, 2RI. ∑ V I Δt = ∑ P Δt + ∑ R I² Δt needs no division for the current itself.
+    // Twice the voltage lost in the pack, 2RI. With V I = P + R I² the drawn energy needs no division for I, and no digits of it for a tiny R.
     const drop = voltageV - Math.sqrt(Math.max(0, voltageSquare - resistance4 * terminal));
     terminalJ += terminal * stepS;
     dropSquareV2S += drop * drop * stepS;
   }
-  lossBeforeJ[speedMPerS.length] = lossJ;
-  const packHeatJ = resistanceOhm > 0 ? dropSquareV2S / resistance4 : 0;
-  const sums = { terminalJ, packHeatJ, demandJ, brakingJ, recoveredJ, gearingJ, lossJ, brakesJ, unmetJ, torqueSquareN2M2S, missedS };
-  addStanding(vehicle, cycle.standingS, sums);
-  return sums;
+  if (resistanceOhm > 0) sums.packHeatJ += dropSquareV2S / resistance4;
+  sums.terminalJ = terminalJ;
+  sums.demandJ = demandJ;
+  sums.brakingJ = brakingJ;
+  sums.recoveredJ = recoveredJ;
+  sums.gearingJ = gearingJ;
+  sums.lossJ = lossJ;
+  sums.brakesJ = brakesJ;
+  sums.unmetJ = unmetJ;
+  sums.torqueSquareN2M2S = torqueSquareN2M2S;
+  sums.missedS = missedS;
 }
 
-function addStanding({ battery, auxiliariesW }: Vehicle, standingS: number, sums: CycleSums): void {
+/** Adds the standing time, which draws the auxiliaries alone. */
+export function addStanding({ battery, auxiliariesW }: Vehicle, { standingS }: CompiledCycle, sums: CycleSums): void {
   const mostW = mostPowerW(battery);
   const currentA = packCurrentA(battery, auxiliariesW);
   sums.terminalJ += Math.min(auxiliariesW, mostW) * standingS;

@@ -8,7 +8,7 @@ import { continuousCornerLossW, isOutsideMap } from '../vehicle/motor.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 import { chooseGears } from './choose-gear.ts';
 import type { CompiledCycle } from './compiled-cycle.ts';
-import { type CycleSums, sumSteps } from './cycle-sums.ts';
+import { addStanding, addSteps, type CycleSums, emptySums } from './cycle-sums.ts';
 import { driveInGear } from './drive-in-gear.ts';
 import { highestMeanW } from './loss-window.ts';
 import { airEnergyJ, gradeEnergyJ, inertiaEnergyJ, rollingEnergyJ } from './wheel-demand.ts';
@@ -75,15 +75,16 @@ export function createCycleResult(): CycleResult {
   };
 }
 
+/**
+ * Steps driven at a time. Long loops in the first calls leave V8 with loop code that it entered half-way through a call (on-stack
+ * replacement), measured three times slower and kept for good; short ones let it compile whole functions.
+ */
+const BLOCK = 128;
+
 /** Drives the cycle and fills `result`. The steps as driven stay in `cycle.driven` until the next design. */
 export function runCycle(vehicle: Vehicle, cycle: CompiledCycle, result: CycleResult): void {
-  const { driven, drivenHigher, distanceM, totalS } = cycle;
-  driveInGear(vehicle, 0, cycle, driven);
-  if (vehicle.gearing.ratioCount === 2) {
-    driveInGear(vehicle, 1, cycle, drivenHigher);
-    chooseGears(vehicle, cycle, driven, drivenHigher);
-  }
-  const sums = sumSteps(vehicle, cycle);
+  const { distanceM, totalS } = cycle;
+  const sums = driveSteps(vehicle, cycle);
   const { road } = vehicle;
   result.wheelDemandJPerM = perDistance(sums.demandJ, distanceM);
   result.wheelBrakingJPerM = perDistance(sums.brakingJ, distanceM);
@@ -104,6 +105,22 @@ export function runCycle(vehicle: Vehicle, cycle: CompiledCycle, result: CycleRe
   writeMotorLoads(vehicle, cycle, sums, result);
 }
 
+function driveSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
+  const sums = emptySums();
+  const steps = cycle.speedMPerS.length;
+  for (let from = 0; from < steps; from += BLOCK) {
+    const to = Math.min(from + BLOCK, steps);
+    driveInGear(vehicle, 0, cycle, from, to, cycle.driven);
+    if (vehicle.gearing.ratioCount === 2) {
+      driveInGear(vehicle, 1, cycle, from, to, cycle.drivenHigher);
+      chooseGears(vehicle, cycle, from, to);
+    }
+    addSteps(vehicle, cycle, from, to, sums);
+  }
+  addStanding(vehicle, cycle, sums);
+  return sums;
+}
+
 /** A trace that never moves has no distance to share its energy. */
 function perDistance(energyJ: number, distanceM: number): number {
   return distanceM > 0 ? energyJ / distanceM : Number.NaN;
@@ -121,7 +138,7 @@ function writeMotorLoads({ motor }: Vehicle, cycle: CompiledCycle, sums: CycleSu
   result.rmsTorqueNm = Math.sqrt(sums.torqueSquareN2M2S / cycle.totalS);
   result.torqueLoad = result.rmsTorqueNm / (motor.continuousTorqueShare * motor.peakTorqueNm);
   result.lossLoad = sums.lossJ / cycle.totalS / cornerLossW;
-  result.worstLossLoad = highestMeanW(cycle.windows, cycle.lossBeforeJ) / cornerLossW;
+  result.worstLossLoad = highestMeanW(cycle.windows, cycle.lossToJ) / cornerLossW;
 }
 
 function outsideMapS(vehicle: Vehicle, { durationS, speedMPerS, driven }: CompiledCycle): number {

@@ -1,6 +1,6 @@
 /**
- * The drive on all moving steps of a cycle in one gear. This loop and the sums of cycle.ts are nearly all of the
- * computing time of a run: they read numbers and typed arrays only, call nothing and allocate nothing. Steps near a
+ * The drive on all moving steps of a cycle in one gear. Its loop and the one of cycle-sums.ts are nearly all of the
+ * computing time of a run: they read numbers and typed arrays only, and allocate nothing. Steps near a
  * limit are listed and driven by drive-step.ts afterwards, as are all steps of a motor with measured losses.
  */
 import { interpolateLinear } from '../numerics/interpolation.ts';
@@ -15,50 +15,40 @@ import { writeDemand } from './wheel-demand.ts';
 /** Below this share of a limit the exact test finds nothing to clip, whatever the rounding. */
 const CLEAR = 1 - 1e-12;
 
-/** Drives all moving steps in one gear and writes them to `out`. */
-export function driveInGear(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, out: DrivenSteps): void {
+/** Drives the moving steps `first` up to, not including, `end` in one gear and writes them to `out`. */
+export function driveInGear(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, first: number, end: number, out: DrivenSteps): void {
   const { speedMPerS, nearLimit } = cycle;
-  writeDemand(vehicle.road, vehicle.effectiveMassKg[gear], cycle, out.demandN);
-  out.gear.fill(gear);
+  writeDemand(vehicle.road, vehicle.effectiveMassKg[gear], cycle, first, end, out.demandN);
+  out.gear.fill(gear, first, end);
   if (vehicle.motor.lossMap !== null) {
-    for (let k = 0; k < speedMPerS.length; k++) driveStep(vehicle, gear, speedMPerS[k], k, out);
+    for (let k = first; k < end; k++) driveStep(vehicle, gear, speedMPerS[k], k, out);
     return;
   }
-  out.missed.fill(0);
-  const count = driveClearOfLimits(vehicle, gear, cycle, out);
+  out.missed.fill(0, first, end);
+  const count = driveClearOfLimits(vehicle, gear, cycle, first, end, out);
   for (let i = 0; i < count; i++) driveStep(vehicle, gear, speedMPerS[nearLimit[i]], nearLimit[i], out);
 }
 
 /**
  * The steps of a motor with loss coefficients as if it had no limits; lists those that may touch one in
- * `cycle.nearLimit` and returns their count. The loss law is that of motor.ts with its constants multiplied out:
- * fixed + ω (h + ω (e + ω w)) + (s + a ω²) I² + l I, where I² = T² + field² stands for the square of the current.
+ * `cycle.nearLimit` and returns their count.
  */
-function driveClearOfLimits(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, out: DrivenSteps): number {
+function driveClearOfLimits(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, first: number, end: number, out: DrivenSteps): number {
   const { speedMPerS, perSpeedSPerM, nearLimit } = cycle;
   const { demandN, gearedN, torqueNm, shaftW, lossW } = out;
-  const { peakTorqueNm, peakPowerW, baseSpeedRadPerS, losses } = vehicle.motor;
   const { ratios, efficiencies, dragFixedNm, dragPerSpeedNms } = vehicle.gearing;
   const { share, fromMPerS, fullMPerS } = vehicle.regeneration;
   const turnsRadPerM = ratios[gear] / vehicle.wheelRadiusM;
   const pullingLeverM = 1 / (turnsRadPerM * efficiencies[gear]);
   const brakingLeverM = efficiencies[gear] / turnsRadPerM;
-  const fixed = peakPowerW * losses.inverterFixed;
-  const hysteresis = peakTorqueNm * losses.hysteresis;
-  const eddy = peakTorqueNm * losses.eddyS;
-  const windage = peakTorqueNm * losses.windageS2;
-  const copper = losses.copperWPerNm / peakTorqueNm;
-  const square = copper + (peakPowerW * losses.inverterSquare) / (peakTorqueNm * peakTorqueNm);
-  const acSquare = copper * losses.acCopperS2;
-  const linear = (peakPowerW * losses.inverterLinear) / peakTorqueNm;
-  const fieldNm = losses.fieldWeakening * peakTorqueNm;
-  const baseMPerS = baseSpeedRadPerS / turnsRadPerM;
+  const { fixed, hysteresis, eddy, windage, square, acSquare, linear, fieldNm } = lossLaw(vehicle.motor);
+  const baseMPerS = vehicle.motor.baseSpeedRadPerS / turnsRadPerM;
   const fadePerMPerS = share / (fullMPerS - fromMPerS);
   const { torqueNm: clearNm, powerW: clearW, speedRadPerS: clearRadPerS } = clearOfEnvelope(vehicle.motor);
   const clearDrawnW = dischargeLimitW(vehicle.battery) * CLEAR - vehicle.auxiliariesW;
   let count = 0;
 
-  for (let k = 0; k < speedMPerS.length; k++) {
+  for (let k = first; k < end; k++) {
     const v = speedMPerS[k];
     const demand = demandN[k];
     const omega = v * turnsRadPerM;
@@ -95,6 +85,24 @@ function driveClearOfLimits(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, 
   return count;
 }
 
+/**
+ * The loss law of motor.ts with its constants multiplied out: fixed + ω (hysteresis + ω (eddy + ω windage)) +
+ * (square + acSquare ω²) I² + linear I in W, where I² = T² + F² stands for the current and F, up to `fieldNm`, for its field-weakening part.
+ */
+function lossLaw({ peakTorqueNm, peakPowerW, losses }: Motor) {
+  const copper = losses.copperWPerNm / peakTorqueNm;
+  return {
+    fixed: peakPowerW * losses.inverterFixed,
+    hysteresis: peakTorqueNm * losses.hysteresis,
+    eddy: peakTorqueNm * losses.eddyS,
+    windage: peakTorqueNm * losses.windageS2,
+    square: copper + (peakPowerW * losses.inverterSquare) / (peakTorqueNm * peakTorqueNm),
+    acSquare: copper * losses.acCopperS2,
+    linear: (peakPowerW * losses.inverterLinear) / peakTorqueNm,
+    fieldNm: losses.fieldWeakening * peakTorqueNm,
+  };
+}
+
 /** Torque, power and speed below which the torque limit is surely not reached; together they bound a region under its curve. */
 function clearOfEnvelope(motor: Motor): { torqueNm: number; powerW: number; speedRadPerS: number } {
   if (motor.fullLoad === null) {
@@ -104,7 +112,7 @@ function clearOfEnvelope(motor: Motor): { torqueNm: number; powerW: number; spee
   let torqueNm = interpolateLinear(speedsRadPerS, torquesNm, referenceBaseSpeedRadPerS);
   let powerW = torqueNm * referenceBaseSpeedRadPerS;
   for (let i = 0; i < torquesNm.length; i++) {
-    // Between points torque is linear, so that torque and power are least at an end of each stretch.
+    // Torque is linear between points, so that neither it nor the power is least between them.
     if (speedsRadPerS[i] <= referenceBaseSpeedRadPerS) torqueNm = Math.min(torqueNm, torquesNm[i]);
     else powerW = Math.min(powerW, torquesNm[i] * speedsRadPerS[i]);
   }

@@ -17,7 +17,7 @@ export function isOverspeed(motor: Motor, speedRadPerS: number): boolean {
 }
 
 /** Share of the braking force that the motor takes at a speed: nothing up to `from`, rising evenly, the whole share at `full`. */
-export function regenerationShare({ share, fromMPerS, fullMPerS }: Regeneration, speedMPerS: number): number {
+function regenerationShare({ share, fromMPerS, fullMPerS }: Regeneration, speedMPerS: number): number {
   if (speedMPerS >= fullMPerS) return share;
   return speedMPerS <= fromMPerS ? 0 : share * ((speedMPerS - fromMPerS) / (fullMPerS - fromMPerS));
 }

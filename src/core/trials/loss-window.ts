@@ -46,7 +46,7 @@ export function tenMinuteWindows(timesS: readonly number[], moving: Int32Array):
   return { from: Int32Array.from(from), to: Int32Array.from(to), perS: Float64Array.from(durations, (durationS) => 1 / durationS) };
 }
 
-/** Highest mean power over the runs; `energyJ[i]` is the energy of the moving steps before step i. */
+/** Highest mean power over the runs; `energyJ[i]` is the energy of the first i moving steps. */
 export function highestMeanW(windows: LossWindows, energyJ: Float64Array): number {
   const { from, to, perS } = windows;
   let highest = 0;

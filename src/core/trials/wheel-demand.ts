@@ -3,28 +3,28 @@ import { airResistanceN } from '../vehicle/road-load.ts';
 import type { RoadLoad, Vehicle } from '../vehicle/vehicle.ts';
 import type { CompiledCycle } from './compiled-cycle.ts';
 
-/** Writes F = m_e a + R(v̄) (N) of every moving step to `demandN`, with the effective mass of one gear. */
-export function writeDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, demandN: Float64Array): void {
-  if (cycle.evenSlope && road.headWindMPerS === 0) writeCalmDemand(road, effectiveMassKg, cycle, demandN);
-  else writeOpenDemand(road, effectiveMassKg, cycle, demandN);
+/** Writes F = m_e a + R(v̄) (N) of the moving steps `from` up to, not including, `to` to `demandN`, with the effective mass of one gear. */
+export function writeDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, from: number, to: number, demandN: Float64Array): void {
+  if (cycle.evenSlope && road.headWindMPerS === 0) writeCalmDemand(road, effectiveMassKg, cycle, from, to, demandN);
+  else writeOpenDemand(road, effectiveMassKg, cycle, from, to, demandN);
 }
 
 /** One slope and no wind: the resistance is one polynomial of speed. */
-function writeCalmDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, demandN: Float64Array): void {
+function writeCalmDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, from: number, to: number, demandN: Float64Array): void {
   const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = cycle;
   const constant = cosSlope[0] * road.rollingN + road.weightN * sinSlope[0];
   const linear = road.airLinearNSPerM;
   const square = cosSlope[0] * road.rollingPerSpeed2NS2PerM2 + road.airSquareNS2PerM2 + road.dragNS2PerM2;
-  for (let k = 0; k < speedMPerS.length; k++) {
+  for (let k = from; k < to; k++) {
     const v = speedMPerS[k];
     demandN[k] = effectiveMassKg * accelerationMPerS2[k] + (constant + v * (linear + v * square));
   }
 }
 
-function writeOpenDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, demandN: Float64Array): void {
+function writeOpenDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, from: number, to: number, demandN: Float64Array): void {
   const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = cycle;
   const { rollingN, rollingPerSpeed2NS2PerM2, airLinearNSPerM, airSquareNS2PerM2, dragNS2PerM2, headWindMPerS, weightN } = road;
-  for (let k = 0; k < speedMPerS.length; k++) {
+  for (let k = from; k < to; k++) {
     const v = speedMPerS[k];
     const airspeed = v + headWindMPerS;
     const air = dragNS2PerM2 * airspeed * Math.abs(airspeed) + v * (airLinearNSPerM + airSquareNS2PerM2 * v);

@@ -245,7 +245,7 @@ describe('cycle trial, laws', () => {
       fc.property(drawn, ([vehicle, conditions, name]) => {
         const cycle = compileCycle(scheduleOf(name), conditions);
         const [quick, exact] = [cycle.driven, createDrivenSteps(cycle.speedMPerS.length)];
-        driveInGear(vehicle, 0, cycle, quick);
+        driveInGear(vehicle, 0, cycle, 0, cycle.speedMPerS.length, quick);
         exact.demandN.set(quick.demandN);
         let worst = 0;
         cycle.speedMPerS.forEach((speed, k) => {
