@@ -3,6 +3,7 @@ import { checkRules, type Stated } from './check-rules.ts';
 import { type Issue, IssueList } from './issue.ts';
 import { studyLayout } from './layout.ts';
 import { type Located, type LocatedMap, readLocated } from './located-text.ts';
+import { metricColumns } from './metric-columns.ts';
 import { readRequirements, readTradeOff } from './read-aims.ts';
 import { readAxes, readSearch } from './read-axes.ts';
 import { lossMapOf, readStudyFullLoad, readStudyMap } from './read-measured.ts';
@@ -48,7 +49,7 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
   const stands = new Map([...found.stands, ...trials.flatMap((trial) => [...trial.found.stands])]);
   const vary = found.parts.get('vary');
   const axes = vary === undefined ? [] : readAxes(vary.value, { issues, values, stands });
-  const aims = { issues, trials, broken: brokenTrials(trialsPart?.value, trials), stands: found.stands };
+  const aims = { issues, trials, columns: metricColumns({ trials }), broken: brokenTrials(trialsPart?.value, trials), stands: found.stands };
   const requirements = readRequirements(found.parts.get('requirements')?.value, aims);
   const tradeOff = readTradeOff(found.parts.get('tradeOff')?.value, aims);
   const search = readSearch(found.parts.get('search')?.value, issues);

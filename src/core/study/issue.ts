@@ -1,4 +1,5 @@
 /** Issues: what is wrong in a person's file, where, what was expected, what was found, and what to do; and how they read in print. */
+import { nearestName } from '../units/nearest-name.ts';
 
 /** One issue. Lines and columns count from 1; a file without lines has its issue at 1:1 with an empty source line. */
 export interface Issue {
@@ -25,8 +26,8 @@ export interface IssueWords {
   readonly hint?: string;
 }
 
-/** Beyond this many, further issues are only counted. */
-const MOST_KEPT = 400;
+/** Beyond this many, further issues change nothing but that there are more. */
+const MOST_KEPT = 100;
 /** How many are printed before 'and N more'. */
 const MOST_PRINTED = 40;
 const SOURCE_WIDTH = 120;
@@ -62,7 +63,18 @@ export class IssueList {
 
   /** Takes over issues found in another file. */
   take(others: readonly Issue[]): void {
-    for (const issue of others) this.keep(issue);
+    this.errors += others.filter(({ severity }) => severity === 'error').length;
+    this.issues.push(...others.slice(0, MOST_KEPT));
+  }
+
+  /** Whether further issues are no longer kept: then their words need no care. */
+  get full(): boolean {
+    return this.issues.length >= MOST_KEPT;
+  }
+
+  /** The valid name most likely meant, or null; none is looked for once the list is full. */
+  nearest(wanted: string, names: Iterable<string>): string | null {
+    return this.full ? null : nearestName(wanted, names);
   }
 
   /** The line (from 1) of an offset. */
@@ -83,19 +95,16 @@ export class IssueList {
   }
 
   private add(severity: Issue['severity'], offset: number, path: string, words: IssueWords): void {
+    if (severity === 'error') this.errors += 1;
+    if (this.full) return;
     const line = this.lineOf(offset);
     const start = this.lineStarts[line - 1] as number;
     const column = offset - start + 1;
-    const shown = this.text.slice(start, this.lineStarts[line] ?? this.text.length).replace(/[\r\n]+$/u, '');
+    const shown = this.text.slice(start, this.lineStarts[line] ?? this.text.length).trimEnd();
     const from = shown.length <= SOURCE_WIDTH ? 0 : Math.max(0, Math.min(column - 1 - SOURCE_WIDTH / 2, shown.length - SOURCE_WIDTH));
     const source = printable(shown.slice(from, from + SOURCE_WIDTH));
     const place = { severity, file: this.file, line, column, source, caret: column - 1 - from, path: printable(clip(path, 120)) };
-    this.keep({ ...place, expected: printable(words.expected), found: printable(clip(words.found, 200)), hint: printable(words.hint ?? '') });
-  }
-
-  private keep(issue: Issue): void {
-    if (issue.severity === 'error') this.errors += 1;
-    if (this.issues.length < MOST_KEPT) this.issues.push(issue);
+    this.issues.push({ ...place, expected: printable(words.expected), found: printable(clip(words.found, 200)), hint: printable(words.hint ?? '') });
   }
 }
 
@@ -129,5 +138,6 @@ export function formatIssue(issue: Issue): string {
 export function formatIssues(issues: readonly Issue[]): string {
   const printed = issues.slice(0, MOST_PRINTED).map(formatIssue);
   const left = issues.length - printed.length;
-  return [...printed, ...(left > 0 ? [`and ${left} more`] : [])].join('\n\n');
+  const more = issues.length >= MOST_KEPT ? `and at least ${left} more` : `and ${left} more`;
+  return [...printed, ...(left > 0 ? [more] : [])].join('\n\n');
 }

@@ -36,8 +36,10 @@ export interface LocatedList {
   readonly items: readonly Located[];
 }
 
-const LARGEST_TEXT = 500_000;
+const LARGEST_TEXT = 300_000;
 const DEEPEST = 40;
+/** Far beyond any study by hand; keeps time and memory bounded whatever the text. */
+const MOST_LEXEMES = 60_000;
 const FORBIDDEN_KEYS = new Set(['__proto__', 'constructor', 'prototype']);
 
 /** The tree of a study's text, or null with the reasons in `issues`. */
@@ -82,8 +84,18 @@ function guardText(text: string, issues: IssueList): boolean {
 function tokensOf(text: string, issues: IssueList) {
   const parser = new Parser();
   const tokens = [];
+  let lexemes = 0;
   for (const lexeme of new Lexer().lex(text)) {
     for (const token of parser.next(lexeme)) tokens.push(token);
+    lexemes += 1;
+    if (lexemes > MOST_LEXEMES) {
+      issues.error(parser.offset, '', {
+        expected: 'a study: some hundred entries',
+        found: `more than ${MOST_LEXEMES} signs and words up to here`,
+        hint: 'Check that this is the right file; long lists go into CSV files or ranges.',
+      });
+      return null;
+    }
     if (parser.stack.length <= DEEPEST) continue;
     issues.error(parser.offset, '', {
       expected: 'a study: a few levels of sections',

@@ -1,9 +1,7 @@
 /** Reads `requirements` and `tradeOff`: limits and objectives on metrics that the study's trials give. */
-import { nearestName } from '../units/nearest-name.ts';
 import { readQuantity } from '../units/read-quantity.ts';
 import { clip, type IssueList } from './issue.ts';
 import type { Located, LocatedMap } from './located-text.ts';
-import { metricColumns } from './metric-columns.ts';
 import type { MetricColumn } from './metrics.ts';
 import type { TrialFound } from './read-trials.ts';
 import type { Objective, Requirement } from './study.ts';
@@ -12,6 +10,8 @@ import type { Objective, Requirement } from './study.ts';
 export interface AimsContext {
   readonly issues: IssueList;
   readonly trials: readonly TrialFound[];
+  /** Every metric of the study. */
+  readonly columns: readonly MetricColumn[];
   /** Names of trials that have mistakes of their own: their metrics are not judged. */
   readonly broken: ReadonlySet<string>;
   /** Every name that the study states, and what each trial adds. */
@@ -74,7 +74,7 @@ function readLimits(column: MetricColumn, map: LocatedMap, issues: IssueList): R
   if (map.entries.length === 0) issues.error(map.at, path, { expected: 'atLeast, atMost or both', found: 'no limit', hint: 'Add a limit or remove the line.' });
   const limits = map.entries.flatMap(({ key, at, value }): Requirement[] => {
     if (key !== 'atLeast' && key !== 'atMost') {
-      const near = nearestName(key, BOUNDS);
+      const near = issues.nearest(key, BOUNDS);
       issues.error(at, `${path}.${key}`, { expected: 'atLeast or atMost', found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
       return [];
     }
@@ -102,29 +102,31 @@ function readLimit(column: MetricColumn, value: Located, path: string, issues: I
 
 /** The metric of a name; null with an issue that says which there are. */
 function findMetric(name: string, at: number, path: string, context: AimsContext): MetricColumn | null {
-  const { issues, trials, broken } = context;
+  const { issues, broken, columns } = context;
   const trial = name.slice(0, Math.max(0, name.indexOf('.')));
   if (broken.has(trial)) return null;
-  const columns = metricColumns({ trials });
   const column = columns.find((candidate) => candidate.name === name);
   if (column !== undefined) return canExist(column, at, path, context) ? column : null;
-  const withUnit = columns.find(({ key }) => key === name);
-  const ofTrial = columns.filter((candidate) => candidate.trial === trial).map((candidate) => candidate.name.slice(trial.length + 1));
-  const near = nearestName(
-    name,
-    columns.map((candidate) => candidate.name),
-  );
-  const expected = 'a metric of this study: <trial>.<metric>, or one of the whole design';
-  const hint =
-    withUnit !== undefined
-      ? `Write ${withUnit.name}: the figure carries the unit.`
-      : near !== null
-        ? `Did you mean ${near}?`
-        : ofTrial.length > 0
-          ? `${trial} gives ${ofTrial.join(', ')}.`
-          : `Trials of this study: ${trials.map((found) => found.name).join(', ') || 'none'}.`;
-  issues.error(at, path, { expected, found: clip(name), hint });
+  issues.error(at, path, {
+    expected: 'a metric of this study: <trial>.<metric>, or one of the whole design',
+    found: clip(name),
+    hint: metricHint(name, context),
+  });
   return null;
+}
+
+/** What may be meant by a name that is no metric: the trial is looked for first, then its metric. */
+function metricHint(name: string, { issues, columns }: AimsContext): string {
+  if (issues.full) return '';
+  const withUnit = columns.find(({ key }) => key === name);
+  if (withUnit !== undefined) return `Write ${withUnit.name}: the figure carries the unit.`;
+  const owners = [...new Set(columns.map((column) => column.name.slice(0, column.name.indexOf('.'))))];
+  const [wantedOwner, wantedMetric] = [name.slice(0, Math.max(0, name.indexOf('.'))), name.slice(name.indexOf('.') + 1)];
+  const owner = owners.includes(wantedOwner) ? wantedOwner : issues.nearest(wantedOwner || name, owners);
+  if (owner === null) return `Metrics belong to ${owners.slice(0, 12).join(', ')}${owners.length > 12 ? ' and so on' : ''}.`;
+  const metrics = columns.filter((column) => column.name.startsWith(`${owner}.`)).map((column) => column.name.slice(owner.length + 1));
+  const metric = metrics.includes(wantedMetric) ? wantedMetric : issues.nearest(wantedMetric, metrics);
+  return metric === null ? `${owner} gives ${metrics.join(', ')}.` : `Did you mean ${owner}.${metric}?`;
 }
 
 function canExist(column: MetricColumn, at: number, path: string, { issues, trials, stands }: AimsContext): boolean {
@@ -159,7 +161,7 @@ export function readTradeOff(part: Located | undefined, context: AimsContext): {
   const keys = ['minimise', 'maximise', 'resolution', 'keep'];
   for (const { key, at } of part.entries) {
     if (keys.includes(key)) continue;
-    const near = nearestName(key, keys);
+    const near = issues.nearest(key, keys);
     issues.error(at, `tradeOff.${key}`, { expected: keys.join(', '), found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
   }
   const entry = (name: string) => part.entries.find(({ key }) => key === name)?.value;
@@ -233,7 +235,7 @@ function readResolution(value: Located | undefined, objectives: readonly ListedM
     const objective = objectives.find(({ column }) => column.name === key);
     if (objective === undefined) {
       const names = objectives.map(({ column }) => column.name);
-      const near = nearestName(key, names);
+      const near = issues.nearest(key, names);
       issues.error(at, path, {
         expected: `an objective: ${names.join(', ') || 'none yet'}`,
         found: clip(key),

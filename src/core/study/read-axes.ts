@@ -1,5 +1,4 @@
 /** Reads `vary`: ranges and lists of a number to the points of an axis; and `search`. */
-import { nearestName } from '../units/nearest-name.ts';
 import { fromSi, toSi, type Unit } from '../units/units.ts';
 import { asWritten } from './check-rules.ts';
 import { clip, type IssueList } from './issue.ts';
@@ -73,7 +72,7 @@ function noReference(name: string, row: ParameterRow | undefined, value: Located
     const found = `${name}, which plays no part beside ${other.by} on line ${issues.lineOf(stands.get(other.by) ?? 0)}`;
     return { expected, found, hint: `Vary ${other.by}, or state ${name} instead: ${other.alternative.why}.` };
   }
-  const near = nearestName(name, Object.keys(values));
+  const near = issues.full ? null : issues.nearest(name, Object.keys(values));
   const known = row !== undefined && !name.startsWith('trials.');
   if (known)
     return {
@@ -97,7 +96,7 @@ function readAxisMap(name: string, row: ParameterRow, map: LocatedMap, issues: I
   const entry = (key: string) => map.entries.find((candidate) => candidate.key === key);
   for (const { key, at } of map.entries) {
     if (KEYS.includes(key)) continue;
-    const near = nearestName(key, KEYS);
+    const near = issues.nearest(key, KEYS);
     issues.error(at, `${path}.${key}`, { expected: KEYS.join(', '), found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
     return null;
   }
@@ -231,7 +230,7 @@ export function readSearch(part: Located | undefined, issues: IssueList): Search
   for (const { key, at } of part.entries) {
     if (key === 'method') continue;
     const sampling = key === 'designs' || key === 'seed';
-    const near = nearestName(key, ['method', 'designs', 'seed']);
+    const near = issues.nearest(key, ['method', 'designs', 'seed']);
     const hint = sampling ? 'Remove it: a grid evaluates every point of vary.' : near === null ? 'Remove it.' : `Did you mean ${near}?`;
     issues.error(at, `search.${key}`, { expected: 'method alone', found: clip(key), hint });
   }
@@ -241,7 +240,7 @@ export function readSearch(part: Located | undefined, issues: IssueList): Search
   if (METHODS_TO_COME.includes(text)) {
     issues.error(method?.at ?? part.at, 'search.method', { expected: 'grid', found: `${text}, which is not available yet`, hint: 'Use grid for now.' });
   } else {
-    const near = nearestName(text, ['grid', ...METHODS_TO_COME]);
+    const near = issues.nearest(text, ['grid', ...METHODS_TO_COME]);
     issues.error(method?.at ?? part.at, 'search.method', {
       expected: 'grid',
       found: clip(text) || 'no method',

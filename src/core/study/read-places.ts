@@ -1,5 +1,4 @@
 /** Reads the entries of a section by its layout: figures to SI with their bounds checked, texts with their choices, free parts as they stand. */
-import { nearestName } from '../units/nearest-name.ts';
 import { type ReadFigure, readQuantity } from '../units/read-quantity.ts';
 import type { Unit } from '../units/units.ts';
 import { boundsMissed } from './bounds.ts';
@@ -129,7 +128,7 @@ function readText(value: Located & { kind: 'text' }, row: TextRow, path: string,
   } else if (value.text.length > longest) {
     issues.error(value.at, path, { expected: `at most ${longest} characters`, found: `${value.text.length} characters`, hint: 'Shorten the text.' });
   } else if (choices !== undefined && !choices.includes(value.text)) {
-    const near = nearestName(value.text, choices);
+    const near = issues.nearest(value.text, choices);
     issues.error(value.at, path, { expected: choices.join(', '), found: clip(value.text), hint: near === null ? row.sentence : `Did you mean ${near}?` });
   } else {
     found.texts.set(path, { at: value.at, text: value.text.trim() });
@@ -160,7 +159,7 @@ function readPair(list: LocatedList, place: Place, reading: Reading): void {
 
 function unknownKey(key: string, at: number, value: Located, place: Place, reading: Reading): void {
   const names = [...place.children.keys()].filter((name) => !/^[12]$/u.test(name));
-  const near = nearestName(key, names);
+  const near = reading.issues.nearest(key, names);
   const inside = reading.prefix + place.path;
   const path = inside === '' || inside.endsWith('.') ? inside + key : `${inside}.${key}`;
   const cut = value.kind === 'text' && value.text === '' && /^\d/u.test(key);

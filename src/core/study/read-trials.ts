@@ -1,5 +1,4 @@
 /** Reads the trials of a study: each by the layout of its kind, its `with`, its trace and its road. */
-import { nearestName } from '../units/nearest-name.ts';
 import { clip, type IssueList } from './issue.ts';
 import { requiredKeys, trialLayout, whyNotTaken } from './layout.ts';
 import type { Located, LocatedMap } from './located-text.ts';
@@ -49,11 +48,11 @@ export function readTrials(part: Located, sources: StudySources, issues: IssueLi
     issues.error(part.at, 'trials', { expected: `at most ${MOST_TRIALS} trials`, found: String(part.entries.length), hint: 'Split the study.' });
     return [];
   }
-  const readFile = filesReadOnce(sources);
+  const reading: TrialReading = { sources, issues, readFile: filesReadOnce(sources), traces: new Map(), roads: new Map() };
   return part.entries.flatMap(({ key, at, value }) => {
     const path = `trials.${key}`;
     if (!usableName(key, at, path, issues)) return [];
-    if (value.kind === 'map') return readTrial(key, at, value, { sources, issues, readFile }) ?? [];
+    if (value.kind === 'map') return readTrial(key, at, value, reading) ?? [];
     issues.error(value.at, path, {
       expected: 'a trial with its kind',
       found: value.kind === 'list' ? 'a list' : clip(value.text) || 'nothing',
@@ -88,6 +87,9 @@ interface TrialReading {
   readonly sources: StudySources;
   readonly issues: IssueList;
   readonly readFile: (path: string) => ReturnType<StudySources['file']>;
+  /** Traces and roads as read, so that several trials share one and its mistakes are told once. */
+  readonly traces: Map<string, SpeedTrace | null>;
+  readonly roads: Map<string, RoadProfile | null>;
 }
 
 function readTrial(name: string, at: number, map: LocatedMap, reading: TrialReading): TrialFound | null {
@@ -111,7 +113,7 @@ function kindOf(map: LocatedMap, path: string, issues: IssueList): TrialKind | n
   const entry = map.entries.find(({ key }) => key === 'kind');
   const text = entry?.value.kind === 'text' ? entry.value.text : undefined;
   if (text !== undefined && Object.hasOwn(trialKinds, text)) return text as TrialKind;
-  const near = text === undefined ? null : nearestName(text, kinds);
+  const near = text === undefined ? null : issues.nearest(text, kinds);
   const hint = near === null ? 'Say what the trial does.' : `Did you mean ${near}?`;
   issues.error(entry?.value.at ?? map.at, `${path}.kind`, { expected: `a kind: ${kinds.join(', ')}`, found: clip(text ?? 'no kind'), hint });
   return null;
@@ -150,7 +152,7 @@ function readWith(part: Located, path: string, issues: IssueList): { figures: Ma
   for (const { key, at, value } of part.entries) {
     const row = key.startsWith('trials.') ? undefined : findParameter(key);
     if (row === undefined) {
-      issues.error(at, `${path}.${key}`, { expected: 'a number of the study by its dotted name', found: clip(key), hint: withHint(key, value) });
+      issues.error(at, `${path}.${key}`, { expected: 'a number of the study by its dotted name', found: clip(key), hint: withHint(key, value, issues) });
       continue;
     }
     stands.set(key, at);
@@ -160,19 +162,19 @@ function readWith(part: Located, path: string, issues: IssueList): { figures: Ma
   return { figures, stands };
 }
 
-function withHint(key: string, value: Located): string {
+function withHint(key: string, value: Located, issues: IssueList): string {
   if (key.startsWith('trials.')) return 'Write the numbers of a trial in the trial itself.';
   if (key === 'vehicle.tyre') return 'State wheelRadius under vehicle instead of tyre; a trial may then replace vehicle.wheelRadius.';
   const names = parameters.map(({ name }) => name);
   if (value.kind === 'map') {
     const inside = value.entries[0]?.key ?? '';
-    return `Write the whole name in one piece, such as ${nearestName(`${key}.${inside}`, names) ?? 'vehicle.auxiliaries'}.`;
+    return `Write the whole name in one piece, such as ${issues.nearest(`${key}.${inside}`, names) ?? 'vehicle.auxiliaries'}.`;
   }
-  const near = nearestName(key, names) ?? names.find((name) => name.endsWith(`.${key}`));
+  const near = issues.nearest(key, names) ?? names.find((name) => name.endsWith(`.${key}`));
   return near === undefined ? 'Names are those of the file, section by section, with dots between.' : `Did you mean ${near}?`;
 }
 
-function readCycle(found: Found, at: number, path: string, { sources, issues, readFile }: TrialReading): SpeedTrace | null {
+function readCycle(found: Found, at: number, path: string, { sources, issues, readFile, traces }: TrialReading): SpeedTrace | null {
   const cycle = found.texts.get(`${path}.cycle`);
   if (cycle === undefined) {
     if (!found.stands.has(`${path}.cycle`)) {
@@ -184,10 +186,12 @@ function readCycle(found: Found, at: number, path: string, { sources, issues, re
     }
     return null;
   }
+  const known = traces.get(cycle.text);
+  if (known !== undefined) return known;
   const builtIn = sources.cycleNames.includes(cycle.text);
   const file = builtIn ? { text: sources.cycle(cycle.text) } : readFile(cycle.text);
   if ('problem' in file) {
-    const near = nearestName(cycle.text, sources.cycleNames);
+    const near = issues.nearest(cycle.text, sources.cycleNames);
     const looksLikeFile = /[./\\]/u.test(cycle.text);
     const hint =
       near !== null ? `Did you mean ${near}?` : looksLikeFile ? 'Paths start at the folder of the study file.' : 'layshaft cycles lists the built-in cycles.';
@@ -199,14 +203,16 @@ function readCycle(found: Found, at: number, path: string, { sources, issues, re
     return null;
   }
   const read = readTrace(file.text, cycle.text);
-  if (read.ok) return read.trace;
-  takeOnce(read.problems, issues);
-  return null;
+  if (!read.ok) issues.take(read.problems);
+  traces.set(cycle.text, read.ok ? read.trace : null);
+  return read.ok ? read.trace : null;
 }
 
-function readRoadFile(found: Found, path: string, { issues, readFile }: TrialReading): RoadProfile | null {
+function readRoadFile(found: Found, path: string, { issues, readFile, roads }: TrialReading): RoadProfile | null {
   const road = found.texts.get(`${path}.road`);
   if (road === undefined) return null;
+  const known = roads.get(road.text);
+  if (known !== undefined) return known;
   const file = readFile(road.text);
   if ('problem' in file) {
     issues.error(road.at, `${path}.road`, {
@@ -217,15 +223,9 @@ function readRoadFile(found: Found, path: string, { issues, readFile }: TrialRea
     return null;
   }
   const read = readRoad(file.text, road.text);
-  if (read.ok) return read.road;
-  takeOnce(read.problems, issues);
-  return null;
-}
-
-/** Two trials on one faulty file: its issues are told once. */
-function takeOnce(problems: Parameters<IssueList['take']>[0], issues: IssueList): void {
-  const told = issues.list('error').some(({ file }) => file === problems[0]?.file);
-  if (!told) issues.take(problems);
+  if (!read.ok) issues.take(read.problems);
+  roads.set(road.text, read.ok ? read.road : null);
+  return read.ok ? read.road : null;
 }
 
 function filesReadOnce(sources: StudySources): TrialReading['readFile'] {

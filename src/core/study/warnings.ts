@@ -311,7 +311,7 @@ function seeMotorSpeed({ study, trials }: WarningContext): Sight[] {
     const wanted = speedWanted(study, name, kind, trace, found);
     const most = (top * radius) / wanted;
     if (!(wanted > 0) || ratio.high <= most * (1 + 1e-12)) return [];
-    const where = ratio.low > most ? 'every ratio' : `ratios above ${shown(most, 'number', 2)}`;
+    const where = ratio.low === ratio.high ? 'the ratio of the study' : ratio.low > most ? 'every ratio' : `ratios above ${shown(most, 'number', 2)}`;
     return [
       {
         path: `trials.${name}`,

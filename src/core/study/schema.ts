@@ -1,0 +1,158 @@
+/** The JSON Schema of study files, for editors: made from the layout and the catalogues, so that names, units and sentences are theirs. */
+import { expectedFigure } from '../units/read-quantity.ts';
+import { machineUnit, type Quantity, quantities, quantityRow } from '../units/units.ts';
+import { boundsText } from './bounds.ts';
+import { type Place, studyLayout, trialLayout } from './layout.ts';
+import { type ParameterRow, parameters } from './parameters.ts';
+import { needs } from './rules.ts';
+import { type TrialKind, trialKindRow, trialKinds } from './trial-kinds.ts';
+
+type Schema = Record<string, unknown>;
+
+const sentences: Readonly<Record<string, string>> = {
+  vehicle: 'The vehicle, without what massAndCost adds.',
+  motor: 'Traction motor with its inverter.',
+  gearing: 'What stands between motor and wheels: one ratio, or two with a shift.',
+  battery: 'Traction battery at its terminals; without it nothing limits the power.',
+  massAndCost: 'Masses and costs that follow the design.',
+  air: 'Ambient air: temperature and altitude, or density.',
+  report: 'How people read the results.',
+};
+
+/** The schema as plain JSON (draft 2020-12). Checks between numbers are beyond it; `layshaft check` makes them. */
+export function studyJsonSchema(): object {
+  const root = sectionSchema(studyLayout, freeSchemas);
+  return { $schema: 'https://json-schema.org/draft/2020-12/schema', title: 'layshaft study', ...root, $defs: definitions() };
+}
+
+/** A figure of each quantity, and an axis of each. */
+function definitions(): Schema {
+  const all = Object.keys(quantities) as Quantity[];
+  return Object.fromEntries(
+    all.flatMap((quantity) => [
+      [`figure.${quantity}`, figureDefinition(quantity)],
+      [`axis.${quantity}`, axisDefinition(quantity)],
+    ]),
+  );
+}
+
+function figureDefinition(quantity: Quantity): Schema {
+  const figure = '^\\s*[-+−]?(\\d|\\.\\d)';
+  return quantityRow(quantity).bare === true
+    ? { type: ['number', 'string'], pattern: `${figure}\\S*\\s*$` }
+    : { type: 'string', pattern: `${figure}.*\\D\\s*$` };
+}
+
+function axisDefinition(quantity: Quantity): Schema {
+  const figure = { $ref: `#/$defs/figure.${quantity}` };
+  const range = { type: 'object', additionalProperties: false, properties: { from: figure, to: figure, steps: { type: 'integer', minimum: 2 }, step: figure } };
+  return {
+    anyOf: [
+      { ...range, required: ['from', 'to', 'steps'] },
+      { ...range, required: ['from', 'to', 'step'] },
+      { type: 'object', additionalProperties: false, properties: { oneOf: { type: 'array', items: figure, minItems: 1 } }, required: ['oneOf'] },
+    ],
+  };
+}
+
+function placeSchema(place: Place, free: Readonly<Record<string, Schema>>): Schema {
+  if (place.free !== null) return { description: place.free.sentence, ...free[place.free.name] };
+  const forms: Schema[] = [];
+  if (place.parameter !== null) forms.push(figureSchema(place.parameter));
+  if (place.text !== null) forms.push(textSchema(place));
+  if (place.children.has('1')) forms.push(pairSchema(place));
+  if (place.children.get('file')?.text) forms.push(textSchema(place.children.get('file') as Place));
+  if ([...place.children.keys()].some((key) => !/^[12]$/u.test(key))) forms.push(sectionSchema(place, free));
+  return forms.length === 1 ? (forms[0] as Schema) : { anyOf: forms };
+}
+
+function figureSchema(row: ParameterRow): Schema {
+  const unit = machineUnit(row.quantity);
+  const bounds = boundsText(row, unit);
+  const said =
+    row.default === undefined
+      ? ''
+      : ` Default ${boundsText({ ...row, atLeast: row.default, above: undefined, atMost: undefined, below: undefined }, unit).replace('at least ', '')}.`;
+  const description = `${row.sentence} Write ${expectedFigure(row.quantity)}${bounds === '' ? '' : `, ${bounds}`}.${said}`;
+  return { description, $ref: `#/$defs/figure.${row.quantity}` };
+}
+
+function textSchema({ text }: Place): Schema {
+  const { sentence = '', choices, longest } = text ?? {};
+  return {
+    description: sentence,
+    type: 'string',
+    ...(choices === undefined ? {} : { enum: choices }),
+    ...(longest === undefined ? {} : { maxLength: longest }),
+  };
+}
+
+function pairSchema(place: Place): Schema {
+  const items = ['1', '2'].map((key) => placeSchema(place.children.get(key) as Place, {}));
+  return { type: 'array', prefixItems: items, items: false, minItems: 2 };
+}
+
+function sectionSchema(place: Place, free: Readonly<Record<string, Schema>>): Schema {
+  const children = [...place.children].filter(([key]) => !/^[12]$/u.test(key));
+  const properties = Object.fromEntries(children.map(([key, child]) => [key, placeSchema(child, free)]));
+  const required = children.map(([key]) => key).filter((key) => isRequired(place.path === '' ? key : `${place.path}.${key}`));
+  const description = sentences[place.path];
+  return {
+    type: 'object',
+    ...(description === undefined ? {} : { description }),
+    properties,
+    additionalProperties: false,
+    ...(required.length === 0 ? {} : { required }),
+  };
+}
+
+/** A name without which no study is complete, or a section that holds one. */
+function isRequired(name: string): boolean {
+  return needs.some(({ names, when }) => when === undefined && names.every((needed) => needed === name || needed.startsWith(`${name}.`)));
+}
+
+function trialSchema(kind: TrialKind): Schema {
+  const { properties, ...rest } = sectionSchema(trialLayout(kind), { with: numbersByName((row) => figureSchema(row)) }) as { properties: Schema };
+  const required = [
+    'kind',
+    ...trialKindRow(kind).takes.filter((key) => ['from', 'to', 'distance', 'at'].includes(key)),
+    ...(kind === 'cycle' ? ['cycle'] : []),
+  ];
+  const { sentence } = trialKindRow(kind);
+  return { ...rest, description: sentence, properties: { ...properties, kind: { const: kind, description: sentence } }, required };
+}
+
+function numbersByName(schemaOf: (row: ParameterRow) => Schema, more: Schema = {}): Schema {
+  return { type: 'object', properties: Object.fromEntries(parameters.map((row) => [row.name, schemaOf(row)])), additionalProperties: false, ...more };
+}
+
+const metricName: Schema = { type: 'string', description: 'A metric: <trial>.<metric>, or one of the whole design.' };
+const limit: Schema = { type: ['number', 'string'], description: 'A figure with the unit of the metric.' };
+
+const freeSchemas: Readonly<Record<string, Schema>> = {
+  trials: {
+    type: 'object',
+    minProperties: 1,
+    propertyNames: { pattern: '^[^.]+$' },
+    additionalProperties: { anyOf: (Object.keys(trialKinds) as TrialKind[]).map(trialSchema) },
+  },
+  vary: numbersByName((row) => ({ description: row.sentence, $ref: `#/$defs/axis.${row.quantity}` }), {
+    patternProperties: { '^trials\\.': { type: 'object' } },
+  }),
+  options: { not: {}, description: 'Not available yet.' },
+  search: { type: 'object', properties: { method: { enum: ['grid'], description: 'Every combination of the points of vary.' } }, additionalProperties: false },
+  requirements: {
+    type: 'object',
+    additionalProperties: { type: 'object', properties: { atLeast: limit, atMost: limit }, additionalProperties: false, minProperties: 1 },
+  },
+  tradeOff: {
+    type: 'object',
+    properties: {
+      minimise: { type: 'array', items: metricName, description: 'Metrics of which less is better.' },
+      maximise: { type: 'array', items: metricName, description: 'Metrics of which more is better.' },
+      resolution: { type: 'object', additionalProperties: limit, description: 'Sizes of the boxes in which people see one design, by objective.' },
+      keep: { type: 'array', items: metricName, description: 'Further metrics to store with every design.' },
+    },
+    additionalProperties: false,
+  },
+};
