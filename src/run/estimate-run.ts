@@ -6,9 +6,12 @@ import type { Study } from '../core/study/study.ts';
 import { PartRows, partBytes } from './part-file.ts';
 import { RunAccount } from './run-account.ts';
 
-/** Designs in the sample, at most, and the time spent on it, at most. */
+/** Designs in the sample, at most, the time spent on it, at most, and then on measuring. */
 const sampleDesigns = 400;
 const sampleMs = 2_000;
+const steadyMs = 600;
+/** Seconds for starting the threads, the charts and the report. */
+const aroundS = 1.5;
 /** Bytes that a run writes beside its parts: report, charts, front. */
 const besidesBytes = 2_000_000;
 
@@ -34,8 +37,6 @@ export function estimateRun(study: Study, workers = availableParallelism()): Run
   const numbers = sampleNumbers(designs.count);
   const rows = new PartRows(numbers.length, columns.length);
   const row = new Float64Array(columns.length);
-  // The first designs run slower than all others: the compiler is still at work.
-  for (const number of numbers.slice(0, 20)) designs.evaluate(number, row, 0, 1);
   const began = performance.now();
   let sampled = 0;
   for (const number of numbers) {
@@ -45,7 +46,7 @@ export function estimateRun(study: Study, workers = availableParallelism()): Run
     sampled++;
     if (performance.now() - began > sampleMs) break;
   }
-  const secondsPerDesign = (performance.now() - began) / 1000 / sampled;
+  const secondsPerDesign = steadySeconds(numbers.slice(0, sampled), (number) => designs.evaluate(number, row, 0, 1));
   const bytesPerDesign = partBytes(rows, columns).length / sampled;
   return {
     designs: designs.count,
@@ -53,10 +54,21 @@ export function estimateRun(study: Study, workers = availableParallelism()): Run
     feasible: account.feasible,
     secondsPerDesign,
     workers,
-    seconds: 1 + (secondsPerDesign * designs.count) / workers,
+    seconds: aroundS + (secondsPerDesign * designs.count) / workers,
     bytes: Math.ceil(bytesPerDesign * designs.count) + besidesBytes,
     failing: account.tally.result().requirements.map(({ failing }) => failing),
   };
+}
+
+/** Seconds per design once the compiler has done its work, as in a run: the median pass over the sample until the time is up. */
+function steadySeconds(numbers: readonly number[], evaluate: (number: number) => void): number {
+  const passes: number[] = [];
+  for (const end = performance.now() + steadyMs; performance.now() < end; ) {
+    const began = performance.now();
+    for (const number of numbers) evaluate(number);
+    passes.push((performance.now() - began) / 1000 / numbers.length);
+  }
+  return passes.sort((a, b) => a - b)[passes.length >> 1];
 }
 
 /** Distinct numbers of 1…count, ascending: all of a small search, else one hashed pick from each of equal stretches. */

@@ -17,6 +17,8 @@ export function systemReason(error: unknown): string {
 
 const reasons: Readonly<Record<string, string>> = {
   ENOENT: 'there is no such file or folder',
+  ENAMETOOLONG: 'the name is too long',
+  ELOOP: 'its links lead in a circle',
   EACCES: 'access is not allowed',
   EPERM: 'access is not allowed',
   EROFS: 'the file system is read-only',
