@@ -21,23 +21,29 @@ export function signChange(f: RealFunction, from: number, to: number): number {
 export function signChanges(f: RealFunction, from: number, to: number, intervals: number): number[] {
   const found: number[] = [];
   const step = (to - from) / intervals;
-  let [x0, x1] = [from, from + step];
-  let [f0, f1] = [f(x0), f(x1)];
+  let x0 = from;
+  let x1 = from + step;
+  let f0 = f(x0);
+  let f1 = f(x1);
   if (f0 > 0 !== f1 > 0) found.push(changeBetween(f, x0, f0, x1, f1));
   for (let k = 2; k <= intervals; k++) {
     const x2 = k === intervals ? to : from + k * step;
     const f2 = f(x2);
     if (f0 > 0 === f1 > 0 && f1 > 0 === f2 > 0) {
-      const triple = { a: x0, b: x1, c: x2, fa: f0, fb: f1, fc: f2, upright: f1 > 0 ? 1 : -1 };
-      const below = triple.upright * (f0 - f1);
-      const beyond = triple.upright * (f2 - f1);
-      // A dip is followed from its lowest point alone; at the two ends that may be an outer one.
-      if (below >= 0 && beyond >= 0) followDip(f, triple, x0, x2, found);
-      else if (k === 2 && below < 0) followDip(f, triple, x0, x1, found);
-      else if (k === intervals && beyond < 0) followDip(f, triple, x1, x2, found);
+      const upright = f1 > 0 ? 1 : -1;
+      const risesBefore = upright * (f1 - f0) > 0;
+      const fallsBeyond = upright * (f2 - f1) < 0;
+      // A dip is followed from its lowest point alone; in the first and the last piece that may be an outer one.
+      if ((!risesBefore || k === 2) && (!fallsBeyond || k === intervals)) {
+        const triple = { a: x0, b: x1, c: x2, fa: f0, fb: f1, fc: f2, upright };
+        followDip(f, triple, fallsBeyond ? x1 : x0, risesBefore ? x1 : x2, found);
+      }
     }
     if (f1 > 0 !== f2 > 0) found.push(changeBetween(f, x1, f1, x2, f2));
-    [x0, f0, x1, f1] = [x1, f1, x2, f2];
+    x0 = x1;
+    f0 = f1;
+    x1 = x2;
+    f1 = f2;
   }
   return found;
 }
@@ -66,9 +72,18 @@ function followDip(f: RealFunction, t: Triple, from: number, to: number, found: 
     // A bottom that no longer sinks, far from zero, will not cross it.
     if (Math.abs(fx - t.fb) < 0.01 * Math.abs(t.fb)) return;
     const lower = t.upright * fx < t.upright * t.fb;
-    if (x > t.b === lower) [t.a, t.fa] = lower ? [t.b, t.fb] : [x, fx];
-    else [t.c, t.fc] = lower ? [t.b, t.fb] : [x, fx];
-    if (lower) [t.b, t.fb] = [x, fx];
+    // The higher of the two inner points becomes an end.
+    if (x > t.b === lower) {
+      t.a = lower ? t.b : x;
+      t.fa = lower ? t.fb : fx;
+    } else {
+      t.c = lower ? t.b : x;
+      t.fc = lower ? t.fb : fx;
+    }
+    if (lower) {
+      t.b = x;
+      t.fb = fx;
+    }
   }
 }
 
@@ -83,14 +98,27 @@ function bottom({ a, b, c, fa, fb, fc, upright }: Triple): number {
 function changeBetween(f: RealFunction, from: number, fFrom: number, to: number, fTo: number): number {
   if (fFrom > 0 === fTo > 0) throw new RangeError(`no change of sign between f(${from}) = ${fFrom} and f(${to}) = ${fTo}`);
   const finest = 1e-18 * Math.abs(to - from);
-  let [a, fa, b, fb, c, fc] = [to, fTo, from, fFrom, from, fFrom];
+  let a = to;
+  let fa = fTo;
+  let b = from;
+  let fb = fFrom;
+  let c = from;
+  let fc = fFrom;
   let share = 0.5;
   for (;;) {
     const x = a + share * (b - a);
     const fx = f(x);
-    if (fx > 0 === fa > 0) [c, fc] = [a, fa];
-    else [c, fc, b, fb] = [b, fb, a, fa];
-    [a, fa] = [x, fx];
+    if (fx > 0 === fa > 0) {
+      c = a;
+      fc = fa;
+    } else {
+      c = b;
+      fc = fb;
+      b = a;
+      fb = fa;
+    }
+    a = x;
+    fa = fx;
     const best = Math.abs(fa) < Math.abs(fb) ? a : b;
     const least = (Math.abs(best) * 4.5e-16 + finest) / Math.abs(b - a);
     if (!(least <= 0.5) || fa === 0) return fa === 0 ? a : best;

@@ -24,16 +24,22 @@ const SAME = 1e-11;
  */
 export function tractionBreakSpeeds(vehicle: Vehicle, gear: Gear, rating: DrivingRating, slope: Slope, fromMPerS: number, toMPerS: number): number[] {
   const perSpeed = motorSpeedRadPerS(vehicle, gear, 1);
-  const drive = torqueBreaksRadPerS(vehicle, rating, fromMPerS * perSpeed, toMPerS * perSpeed).map((speedRadPerS) => speedRadPerS / perSpeed);
-  const breaks = rising([...drive, -vehicle.road.headWindMPerS, ...adhesionBreakSpeedsMPerS(vehicle)], fromMPerS, toMPerS);
-  const gripping = adhesionBreaksMPerS(vehicle, gear, rating, slope, [fromMPerS, ...breaks, toMPerS]);
-  return gripping.length === 0 ? breaks : rising([...breaks, ...gripping], fromMPerS, toMPerS);
+  const torqueEnds = torqueStretches(vehicle, rating, fromMPerS * perSpeed, toMPerS * perSpeed);
+  const ends = [fromMPerS, toMPerS];
+  for (let k = 1; k < torqueEnds.length - 1; k++) insert(ends, torqueEnds[k] / perSpeed);
+  insert(ends, -vehicle.road.headWindMPerS);
+  for (const speed of adhesionBreakSpeedsMPerS(vehicle)) insert(ends, speed);
+  insertAdhesion(vehicle, gear, rating, slope, ends);
+  return ends.slice(1, -1);
 }
 
-/** Motor speeds at which the torque that motor and battery allow changes its law. */
-function torqueBreaksRadPerS(vehicle: Vehicle, rating: DrivingRating, from: number, to: number): number[] {
-  const limitBreaks = limitBreaksRadPerS(vehicle.motor, rating, from, to);
-  return mayBind(vehicle, rating, to) ? [...limitBreaks, ...batteryBreaksRadPerS(vehicle, rating, limitBreaks, from, to)] : limitBreaks;
+// Below, a list of ends holds both ends of a range and, rising, what parts it into smooth stretches.
+
+/** Ends (rad/s) of the stretches on which the torque that motor and battery allow is smooth. */
+function torqueStretches(vehicle: Vehicle, rating: DrivingRating, from: number, to: number): number[] {
+  const ends = limitStretches(vehicle.motor, rating, from, to);
+  if (mayBind(vehicle, rating, to)) insertBattery(vehicle, rating, ends);
+  return ends;
 }
 
 /** Could the battery bind at a motor speed up to `to`? No where it has room for the most power and the most loss at once. */
@@ -70,81 +76,97 @@ function largest(values: readonly number[]): number {
   return most;
 }
 
-/** Motor speeds at which the torque limit of the rating changes its law. */
-function limitBreaksRadPerS(motor: Motor, rating: DrivingRating, from: number, to: number): number[] {
-  const branches = rising(branchEndsRadPerS(motor), from, to);
+/** Ends (rad/s) of the stretches on which the torque limit of the rating is smooth. */
+function limitStretches(motor: Motor, rating: DrivingRating, from: number, to: number): number[] {
+  const branches = [from, to];
+  insertBranches(motor, branches);
   if (rating === 'peak') return branches;
   const corner = (motor.baseSpeedRadPerS * motor.continuousPowerShare) / motor.continuousTorqueShare;
-  const stretches = [from, ...rising([...branches, corner], from, to), to];
+  const stretches = branches.slice();
+  insert(stretches, corner);
   const above = (speed: number) => continuousRatingNm(motor, speed) - peakTorqueLimitNm(motor, speed);
-  const meeting = crossings(stretches, above, PIECES);
   const near = (speed: number) => 1e-9 * peakTorqueLimitNm(motor, speed);
-  const peakHolds = branches.filter((speed) => speed === motor.maxSpeedRadPerS || above(speed) >= -near(speed));
-  return rising([...peakHolds, ...meeting, ...(above(corner) <= near(corner) ? [corner] : [])], from, to);
+  const ends = [from, to];
+  insertChanges(stretches, above, ends);
+  if (above(corner) <= near(corner)) insert(ends, corner);
+  for (const speed of branches) if (speed === motor.maxSpeedRadPerS || above(speed) >= -near(speed)) insert(ends, speed);
+  return ends;
 }
 
-/** Motor speeds at which a branch of the peak limit ends, the last maximum speed. */
-function branchEndsRadPerS(motor: Motor): number[] {
-  if (motor.fullLoad === null) return [motor.baseSpeedRadPerS, motor.constantPowerToRadPerS, motor.maxSpeedRadPerS];
+/** Where a branch of the peak limit ends, the last at maximum speed. */
+function insertBranches(motor: Motor, ends: number[]): void {
+  insert(ends, motor.maxSpeedRadPerS);
+  if (motor.fullLoad === null) {
+    insert(ends, motor.baseSpeedRadPerS);
+    insert(ends, motor.constantPowerToRadPerS);
+    return;
+  }
   const stretch = motor.baseSpeedRadPerS / motor.fullLoad.referenceBaseSpeedRadPerS;
-  return [...motor.fullLoad.speedsRadPerS.map((speed) => speed * stretch), motor.maxSpeedRadPerS];
+  for (const speed of motor.fullLoad.speedsRadPerS) insert(ends, speed * stretch);
 }
 
-/** Motor speeds at which the battery starts or stops to bind, and, while it binds, at which its torque changes its law. */
-function batteryBreaksRadPerS(vehicle: Vehicle, rating: DrivingRating, limitBreaks: readonly number[], from: number, to: number): number[] {
+/** Where the battery starts or stops to bind, and, while it binds, where its torque changes its law. */
+function insertBattery(vehicle: Vehicle, rating: DrivingRating, ends: number[]): void {
   const { motor } = vehicle;
-  const map = motor.lossMap;
-  const lossLines = map === null ? [] : map.speedsRadPerS.map((speed) => speed * (motor.baseSpeedRadPerS / map.referenceBaseSpeedRadPerS));
-  const lossBreaks = rising([motor.baseSpeedRadPerS, ...lossLines], from, to);
-  const stretches = [from, ...rising([...limitBreaks, ...lossBreaks], from, to), to];
   // Torque (N·m) that the motor would give beyond the battery's; held where the battery is far from binding, so that it stays finite.
   const beyond = (speed: number) => {
     const limitNm = torqueLimitNm(motor, speed, rating);
     return Math.max(limitNm - batteryTorqueLimitNm(vehicle, speed), -limitNm);
   };
-  const starts = crossings(stretches, beyond, PIECES);
-  const binds = (speed: number) => batteryTorqueLimitNm(vehicle, speed) <= torqueLimitNm(motor, speed, rating) * (1 + 1e-9);
-  const bound = pairsOf([from, ...rising([...limitBreaks, ...lossBreaks, ...starts], from, to), to]).filter(([a, b]) => beyond(0.5 * (a + b)) > 0);
-  return [...starts, ...lossBreaks.filter(binds), ...bound.flatMap(([a, b]) => lineCrossings(vehicle, a, b))];
+  const stretches = ends.slice();
+  insertLossLaw(motor, stretches);
+  insertChanges(stretches, beyond, ends);
+  for (const speed of ends) insert(stretches, speed);
+  let boundBefore = false;
+  for (let k = 1; k < stretches.length; k++) {
+    const bound = beyond(0.5 * (stretches[k - 1] + stretches[k])) > 0;
+    if (bound || boundBefore) insert(ends, stretches[k - 1]);
+    if (bound) insertLineCrossings(vehicle, stretches[k - 1], stretches[k], ends);
+    boundBefore = bound;
+  }
 }
 
-/** Motor speeds in (from, to) at which the battery's torque becomes 0 or passes a torque line of the loss map. */
-function lineCrossings(vehicle: Vehicle, from: number, to: number): number[] {
+/** Where the loss law itself changes: base speed and the speed lines of a map. */
+function insertLossLaw({ baseSpeedRadPerS, lossMap }: Motor, ends: number[]): void {
+  insert(ends, baseSpeedRadPerS);
+  if (lossMap === null) return;
+  const stretch = baseSpeedRadPerS / lossMap.referenceBaseSpeedRadPerS;
+  for (const speed of lossMap.speedsRadPerS) insert(ends, speed * stretch);
+}
+
+/** Where the battery's torque becomes 0 or passes a torque line of the loss map, on a smooth stretch on which it binds. */
+function insertLineCrossings(vehicle: Vehicle, from: number, to: number, ends: number[]): void {
   const { motor } = vehicle;
-  const map = motor.lossMap;
   const allowedW = dischargeLimitW(vehicle.battery) - vehicle.auxiliariesW;
-  const lines = map === null ? [] : map.torquesNm.map((torque) => torque * (motor.peakTorqueNm / map.referencePeakTorqueNm));
-  const positive = lines.filter((torqueNm) => torqueNm > 0);
-  return [0, ...positive].flatMap((torqueNm) => signChanges((speed) => torqueNm * speed + motorLossW(motor, torqueNm, speed) - allowedW, from, to, 2));
+  const insertLine = (torqueNm: number) => insertChanges([from, to], (speed) => torqueNm * speed + motorLossW(motor, torqueNm, speed) - allowedW, ends);
+  insertLine(0);
+  if (motor.lossMap === null) return;
+  const perLine = motor.peakTorqueNm / motor.lossMap.referencePeakTorqueNm;
+  for (const torque of motor.lossMap.torquesNm) if (torque > 0) insertLine(torque * perLine);
 }
 
-/** Speeds at which adhesion starts or stops to bind; `stretches` are smooth for the drive force. */
-function adhesionBreaksMPerS(vehicle: Vehicle, gear: Gear, rating: DrivingRating, slope: Slope, stretches: readonly number[]): number[] {
+/** Where adhesion starts or stops to bind. */
+function insertAdhesion(vehicle: Vehicle, gear: Gear, rating: DrivingRating, slope: Slope, ends: number[]): void {
   const grip = (speed: number) => adhesionLimitN(vehicle, speed, slope.cos);
   const { motor, gearing, wheelRadiusM } = vehicle;
   const mostN = (largestTorqueNm(motor) * gearing.ratios[gear] * gearing.efficiencies[gear]) / wheelRadiusM;
   // Adhesion rises or falls throughout with speed: it is least at one of the ends.
-  if (Math.min(grip(stretches[0]), grip(stretches[stretches.length - 1])) > mostN) return [];
-  return crossings(stretches, (speed) => driveForceN(vehicle, gear, speed, rating) - grip(speed), PIECES);
+  if (Math.min(grip(ends[0]), grip(ends[ends.length - 1])) > mostN) return;
+  insertChanges(ends.slice(), (speed) => driveForceN(vehicle, gear, speed, rating) - grip(speed), ends);
 }
 
-function crossings(stretches: readonly number[], f: (x: number) => number, pieces: number): number[] {
-  return pairsOf(stretches).flatMap(([a, b]) => signChanges(f, a, b, pieces));
-}
-
-function pairsOf(points: readonly number[]): [number, number][] {
-  return points.slice(1).map((to, k) => [points[k], to]);
-}
-
-/** The values strictly inside (from, to), rising, near-equal ones taken as one. */
-function rising(values: readonly number[], from: number, to: number): number[] {
-  const kept: number[] = [];
-  let last = from;
-  const inside = values.filter((value) => value > from && value < to);
-  for (const value of inside.sort((a, b) => a - b)) {
-    if (value - last <= SAME * value || to - value <= SAME * to) continue;
-    kept.push(value);
-    last = value;
+/** Inserts the speeds at which `f`, smooth on each of the stretches, changes sign. */
+function insertChanges(stretches: readonly number[], f: (x: number) => number, ends: number[]): void {
+  for (let k = 1; k < stretches.length; k++) {
+    for (const speed of signChanges(f, stretches[k - 1], stretches[k], PIECES)) insert(ends, speed);
   }
-  return kept;
+}
+
+/** Inserts a value where it belongs, unless it lies outside the ends or as good as on one. */
+function insert(ends: number[], value: number): void {
+  let k = ends.length - 1;
+  while (k >= 0 && ends[k] > value) k--;
+  // NaN finds no place either.
+  if (!(k >= 0 && k < ends.length - 1)) return;
+  if (value - ends[k] > SAME * value && ends[k + 1] - value > SAME * value) ends.splice(k + 1, 0, value);
 }
