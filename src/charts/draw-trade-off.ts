@@ -138,7 +138,7 @@ function drawDesigns(svg: SvgParent, view: TradeOffView, { frame, x, y }: Plan):
   dots(svg, view.feasible.map(place).filter(inside), ink.feasible);
   const front = svg.append('g').attr('fill', ink.front).attr('stroke', ink.paper).attr('stroke-width', 0.8);
   const lettered = new Set(view.lettered.map(({ number }) => number));
-  for (const point of view.front) if (!lettered.has(point.number)) circle(front, place(point), 3.6);
+  for (const point of view.front) if (!lettered.has(point.number)) circle(front, place(point), 4.2);
   if (view.closest !== null) triangle(svg, place(view.closest), ink);
   for (const point of view.lettered) circle(svg, place(point), 6).attr('fill', ink.proposal).attr('stroke', ink.paper).attr('stroke-width', 1.5);
   if (view.reference !== null) square(svg, place(view.reference), ink);

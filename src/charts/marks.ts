@@ -37,7 +37,7 @@ export function circle(parent: SvgParent, { x, y }: Place, radius: number) {
 export function dots(parent: SvgParent, places: readonly Place[], stroke: string): void {
   if (places.length === 0) return;
   const d = places.map(({ x, y }) => `M${fixed(x)} ${fixed(y)}h0`).join('');
-  parent.append('path').attr('d', d).attr('stroke', stroke).attr('stroke-width', 3.6).attr('stroke-linecap', 'round').attr('fill', 'none');
+  parent.append('path').attr('d', d).attr('stroke', stroke).attr('stroke-width', 2.6).attr('stroke-linecap', 'round').attr('fill', 'none');
 }
 
 /** Short slanting strokes as one path: designs that a requirement removes. */

@@ -34,7 +34,7 @@ function choiceWords(data: ReportData): Markup {
   const letters = listWords(data.proposals.map((_, index) => proposalLetter(index)));
   return html`<p class="headline"><b>${formatFigure(feasible, 0)} of ${countWords(formatFigure(designs, 0), 'design')}</b> (${share} %) ${feasible === 1 ? 'meets' : 'meet'} every requirement.
 <b>${formatFigure(front, 0)}</b> ${front === 1 ? 'is' : 'are'} on the trade-off front: what betters one of these in one objective is worse in another${thinned}.
-${data.proposals.length === 1 ? html`The choice is <b>A</b>.` : html`The choice put forward is between <b>${letters}</b>.`}</p>`;
+${data.proposals.length === 1 ? html`The choice is <b>A</b>.` : html`The choice put forward is between <b class="together">${letters}</b>.`}</p>`;
 }
 
 function nothingPasses(data: ReportData): Markup {
@@ -55,9 +55,12 @@ function closestWords(data: ReportData): string {
         `${columnPhrase(column, data.study)} (${valueAgainst(value, requirement, column, data.study)} where ${boundWords(requirement, column, data.study)} is asked)`,
       ];
     });
-  return missed.length === 0
-    ? `Design ${formatFigure(data.closest.number, 0)} comes closest.`
-    : `Design ${formatFigure(data.closest.number, 0)} comes closest; it misses ${listWords(missed)}.`;
+  const absent = data.study.objectives.flatMap(({ metric }) => {
+    const { column, index } = metricColumn(data, metric);
+    return (design?.values[index] ?? null) === null ? [`has no ${columnPhrase(column, data.study)}`] : [];
+  });
+  const reasons = [...(missed.length === 0 ? [] : [`misses ${listWords(missed)}`]), ...absent];
+  return `Design ${formatFigure(data.closest.number, 0)} comes closest${reasons.length === 0 ? '' : `; it ${listWords(reasons)}`}.`;
 }
 
 function card(candidate: Candidate, all: readonly Candidate[], data: ReportData): Markup {

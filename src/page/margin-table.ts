@@ -9,20 +9,28 @@ import { boundWords, meets, metricColumn, relativeMargin, valueAgainst } from '.
 export function marginTable(candidates: readonly Candidate[], data: ReportData): Markup | null {
   if (data.requirements.length === 0 || candidates.length === 0) return null;
   const tightest = candidates.map((candidate) => tightestOf(candidate, data));
-  const rows = data.requirements.map((requirement) => {
-    const { column, index } = metricColumn(data, requirement.metric);
-    const cells = candidates.map(({ design }, at) => marginCell(design.values[index] ?? null, requirement, data, tightest[at] === requirement));
-    return html`<tr><th scope="row" class="stay">${columnPhrase(column, data.study)} <small>${boundWords(requirement, column, data.study)}</small></th>${cells}</tr>`;
-  });
+  const rows = data.requirements
+    .filter((requirement) => !isFollowedByAll(requirement, candidates, data))
+    .map((requirement) => {
+      const { column, index } = metricColumn(data, requirement.metric);
+      const cells = candidates.map(({ design }, at) => marginCell(design.values[index] ?? null, requirement, data, tightest[at] === requirement));
+      return html`<tr><th scope="row" class="stay">${columnPhrase(column, data.study)} <small>${boundWords(requirement, column, data.study)}</small></th>${cells}</tr>`;
+    });
   const heads = candidates.map(
     ({ letter, design }) =>
       html`<th scope="col">${letter === null ? (design.number === 0 ? 'reference' : 'closest') : html`<b class="letter">${letter}</b>`}</th>`,
   );
-  return html`<p class="caption" id="margins">Margins to the requirements; what binds a design most is marked <span class="tight">tightest</span></p>
+  return html`<p class="caption" id="margins">Margins to the requirements; what binds a design most is marked <span class="tight">tightest</span>${data.requirements.some((requirement) => isFollowedByAll(requirement, candidates, data)) && '; what is asked of every cycle and met by all is not listed'}</p>
 <div class="scroll" tabindex="0" role="region" aria-labelledby="margins"><table class="margins" aria-labelledby="margins">
 <thead><tr><th scope="col" class="stay">Requirement</th>${heads}</tr></thead>
 <tbody>${rows}</tbody>
 </table></div>`;
+}
+
+/** A requirement that the study does not write and all of these meet has nothing to tell. */
+function isFollowedByAll(requirement: RequirementCount, candidates: readonly Candidate[], data: ReportData): boolean {
+  const { index } = metricColumn(data, requirement.metric);
+  return requirement.implied && candidates.every(({ design }) => meets(design.values[index] ?? null, requirement));
 }
 
 function marginCell(value: number | null, requirement: RequirementCount, data: ReportData, tightest: boolean): Markup {

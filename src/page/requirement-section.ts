@@ -53,7 +53,7 @@ function easingWords(requirement: RequirementCount, data: ReportData): Piece {
     const now = bestNow(objective.metric, objective.aim, data);
     const gain = now === null ? figureText(best.objective, measure, data.study) : differenceWords(best.objective, now, measure, data.study);
     return [
-      html`<li>At ${limit(best.limit)}: ${gain}${now !== null && ' than the best that passes'} (<button type="button" class="plain" data-design="${best.number}" hidden>design ${formatFigure(best.number, 0)}</button>)</li>`,
+      html`<li>At ${limit(best.limit)}: ${gain}${now !== null && ' than the best that passes'} <span class="together">(<button type="button" class="plain" data-design="${best.number}" hidden>design ${formatFigure(best.number, 0)}</button>)</span></li>`,
     ];
   });
   return [html`<p>${first}</p>`, gains.length > 0 && html`<ul>${gains}</ul>`];

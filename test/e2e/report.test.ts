@@ -36,7 +36,10 @@ function chartTexts(page: Page): Promise<string[]> {
 /** Where a design put forward lies on the screen; the first such mark is that of the key. */
 async function proposalPlace(page: Page, index: number): Promise<{ x: number; y: number }> {
   await page.locator('#chart').scrollIntoViewIfNeeded();
-  const box = await page.locator('#chart circle[r="6"]').nth(index + 1).boundingBox();
+  const box = await page
+    .locator('#chart circle[r="6"]')
+    .nth(index + 1)
+    .boundingBox();
   if (box === null) throw new Error(`no mark ${index}`);
   return { x: box.x + box.width / 2, y: box.y + box.height / 2 };
 }
