@@ -1,11 +1,13 @@
 /**
- * The drive on all moving steps of a cycle in one gear. Its loop and the one of cycle-sums.ts are nearly all of the
- * computing time of a run: they read numbers and typed arrays only, and allocate nothing. Steps near a
- * limit are listed and driven by drive-step.ts afterwards, as are all steps of a motor with measured losses.
+ * The drive on the moving steps of a cycle in one gear. Its loop and the one of cycle-sums.ts are most of the computing
+ * time of a run: they read numbers and typed arrays only, and allocate nothing. Steps near a limit are listed and driven
+ * by drive-step.ts afterwards, as are all steps of a motor with measured losses.
  */
 import { interpolateLinear } from '../numerics/interpolation.ts';
 import { dischargeLimitW } from '../vehicle/battery.ts';
 import type { Gear } from '../vehicle/gearing.ts';
+import type { LossMap } from '../vehicle/loss-map.ts';
+import { mapScale } from '../vehicle/motor.ts';
 import type { Motor, Vehicle } from '../vehicle/vehicle.ts';
 import type { CompiledCycle } from './compiled-cycle.ts';
 import { driveStep } from './drive-step.ts';
@@ -15,18 +17,32 @@ import { writeDemand } from './wheel-demand.ts';
 /** Below this share of a limit the exact test finds nothing to clip, whatever the rounding. */
 const CLEAR = 1 - 1e-12;
 
+/** Largest loss of each map met, as written; found once. */
+const largestLossesW = new WeakMap<LossMap, number>();
+
 /** Drives the moving steps `first` up to, not including, `end` in one gear and writes them to `out`. */
 export function driveInGear(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, first: number, end: number, out: DrivenSteps): void {
   const { speedMPerS, nearLimit } = cycle;
   writeDemand(vehicle.road, vehicle.effectiveMassKg[gear], cycle, first, end, out.demandN);
   out.gear.fill(gear, first, end);
   if (vehicle.motor.lossMap !== null) {
-    for (let k = first; k < end; k++) driveStep(vehicle, gear, speedMPerS[k], k, out);
+    const freeShaftW = freeShaftPowerW(vehicle, vehicle.motor.lossMap);
+    for (let k = first; k < end; k++) driveStep(vehicle, gear, speedMPerS[k], freeShaftW, k, out);
     return;
   }
   out.missed.fill(0, first, end);
   const count = driveClearOfLimits(vehicle, gear, cycle, first, end, out);
-  for (let i = 0; i < count; i++) driveStep(vehicle, gear, speedMPerS[nearLimit[i]], nearLimit[i], out);
+  for (let i = 0; i < count; i++) driveStep(vehicle, gear, speedMPerS[nearLimit[i]], Number.NEGATIVE_INFINITY, nearLimit[i], out);
+}
+
+/** Shaft power that the battery gives whatever the measured losses: its limit less the largest of them; 0 with coefficients on top. */
+function freeShaftPowerW({ motor, battery, auxiliariesW }: Vehicle, map: LossMap): number {
+  let largestW = largestLossesW.get(map);
+  if (largestW === undefined) {
+    largestW = map.lossesW.reduce((largest, lossW) => Math.max(largest, lossW), 0);
+    largestLossesW.set(map, largestW);
+  }
+  return map.motorAlone ? 0 : (dischargeLimitW(battery) - auxiliariesW - largestW * mapScale(motor, map)) * CLEAR;
 }
 
 /**

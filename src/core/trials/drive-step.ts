@@ -22,21 +22,25 @@ function regenerationShare({ share, fromMPerS, fullMPerS }: Regeneration, speedM
   return speedMPerS <= fromMPerS ? 0 : share * ((speedMPerS - fromMPerS) / (fullMPerS - fromMPerS));
 }
 
-/** Drives step k, whose demand stands in `out`, at its mean speed, and writes what comes of it. */
-export function driveStep(vehicle: Vehicle, gear: Gear, speedMPerS: number, k: number, out: DrivenSteps): void {
+/**
+ * Drives step k, whose demand stands in `out`, at its mean speed, and writes what comes of it. Shaft power below
+ * `freeShaftW` is known to keep to the limit of the battery; −Infinity where nothing is known.
+ */
+export function driveStep(vehicle: Vehicle, gear: Gear, speedMPerS: number, freeShaftW: number, k: number, out: DrivenSteps): void {
   const speedRadPerS = motorSpeedRadPerS(vehicle, gear, speedMPerS);
   const demandN = out.demandN[k];
   out.missed[k] = isOverspeed(vehicle.motor, speedRadPerS) ? 1 : 0;
   const askedNm = motorTorqueNm(vehicle, gear, demandN, speedRadPerS);
-  if (demandN >= 0 || askedNm >= 0) pull(vehicle, gear, speedRadPerS, askedNm, k, out);
+  if (demandN >= 0 || askedNm >= 0) pull(vehicle, gear, speedRadPerS, askedNm, freeShaftW, k, out);
   else brake(vehicle, gear, speedRadPerS, regenerationShare(vehicle.regeneration, speedMPerS) * demandN, k, out);
 }
 
 /** Above maximum speed the step is missed anyway, and only the battery still clips it. */
-function pull(vehicle: Vehicle, gear: Gear, speedRadPerS: number, askedNm: number, k: number, out: DrivenSteps): void {
+function pull(vehicle: Vehicle, gear: Gear, speedRadPerS: number, askedNm: number, freeShaftW: number, k: number, out: DrivenSteps): void {
   const { motor } = vehicle;
   const allowedNm = out.missed[k] === 1 ? askedNm : Math.min(askedNm, peakTorqueLimitNm(motor, speedRadPerS));
-  const torqueNm = clipToBatteryNm(vehicle, allowedNm, speedRadPerS);
+  const isFree = allowedNm * speedRadPerS < freeShaftW;
+  const torqueNm = isFree ? allowedNm : clipToBatteryNm(vehicle, allowedNm, speedRadPerS);
   if (askedNm - torqueNm > CLIP_ROOM * askedNm) out.missed[k] = 1;
   const gearedN = torqueNm === askedNm ? out.demandN[k] : gearedForceN(vehicle, gear, torqueNm, speedRadPerS);
   write(out, k, torqueNm, speedRadPerS, motorLossW(motor, torqueNm, speedRadPerS), gearedN);

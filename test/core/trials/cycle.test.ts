@@ -249,7 +249,7 @@ describe('cycle trial, laws', () => {
         exact.demandN.set(quick.demandN);
         let worst = 0;
         cycle.speedMPerS.forEach((speed, k) => {
-          driveStep(vehicle, 0, speed, k, exact);
+          driveStep(vehicle, 0, speed, Number.NEGATIVE_INFINITY, k, exact);
           // Torque and force may be small differences of these.
           const speedRadPerS = motorSpeedRadPerS(vehicle, 0, speed);
           const torqueNm = motorTorqueNm(vehicle, 0, Math.abs(exact.demandN[k]), speedRadPerS);
