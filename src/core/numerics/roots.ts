@@ -1,5 +1,8 @@
 /** Where a function of one number changes sign. */
 
+/** Rounds after which only bisection is trusted: a function of mere rounding may lead the interpolation astray for long. */
+const PATIENCE = 60;
+
 /** A function of one number. */
 export type RealFunction = (x: number) => number;
 
@@ -105,7 +108,7 @@ function changeBetween(f: RealFunction, from: number, fFrom: number, to: number,
   let c = from;
   let fc = fFrom;
   let share = 0.5;
-  for (;;) {
+  for (let round = 1; ; round++) {
     const x = a + share * (b - a);
     const fx = f(x);
     if (fx > 0 === fa > 0) {
@@ -122,7 +125,7 @@ function changeBetween(f: RealFunction, from: number, fFrom: number, to: number,
     const best = Math.abs(fa) < Math.abs(fb) ? a : b;
     const least = (Math.abs(best) * 4.5e-16 + finest) / Math.abs(b - a);
     if (!(least <= 0.5) || fa === 0) return fa === 0 ? a : best;
-    share = Math.min(Math.max(nextShare(a, fa, b, fb, c, fc), least), 1 - least);
+    share = round < PATIENCE ? Math.min(Math.max(nextShare(a, fa, b, fb, c, fc), least), 1 - least) : 0.5;
   }
 }
 

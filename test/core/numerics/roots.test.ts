@@ -37,6 +37,31 @@ describe('signChange', () => {
     expect(Math.abs(signChange((x) => (x < 0.3 ? -Infinity : x), 0, 1) - 0.3)).toBeLessThan(1e-15);
   });
 
+  it('comes to an end on flat, steep, stepped and noisy functions', () => {
+    const rough = (x: number) => 1e-16 * (1.5 + Math.sin(1e9 * x));
+    const functions: ((x: number) => number)[] = [
+      (x) => (x - 0.3) ** 31,
+      (x) => Math.sign(x - 0.7) * Math.exp(-1 / Math.abs(x - 0.7)),
+      (x) => (x < 0.9 ? -rough(x) : 1),
+      (x) => (x < 0.9 ? -1 : rough(x)),
+      (x) => (x < 1 - 1e-15 ? -rough(x) : rough(x)),
+      (x) => Math.tan(3.14 * (x - 0.4)),
+    ];
+    for (const f of functions) {
+      let looks = 0;
+      const found = signChange(
+        (x) => {
+          looks++;
+          return f(x);
+        },
+        0,
+        1,
+      );
+      expect(looks).toBeLessThan(150);
+      expect(f(found - 1e-2) > 0).not.toBe(f(Math.min(found + 1e-2, 1)) > 0);
+    }
+  });
+
   it('throws with its numbers when nothing changes', () => {
     expect(() => signChange((x) => x, 1, 2)).toThrow('f(1) = 1 and f(2) = 2');
   });
