@@ -1,12 +1,14 @@
 /** Applies the rules between numbers to what a study states, or to the study that a trial's `with` makes. */
 import { clip, type IssueList } from './issue.ts';
 import type { Figure } from './read-places.ts';
-import { type Alternative, alternatives, fileAlternatives, groups, matches, nameInFile, needs, orders } from './rules.ts';
+import { type Alternative, alternatives, groups, matches, nameInFile, needs, orders } from './rules.ts';
 
 /** What is stated, by dotted name, and the offset at which each name stands. */
 export interface Stated {
   readonly figures: ReadonlyMap<string, Figure>;
   readonly stands: ReadonlyMap<string, number>;
+  /** Names that stand or most likely stand misspelt. */
+  readonly tried: ReadonlySet<string>;
 }
 
 /** What a check of rules looks at. */
@@ -17,14 +19,15 @@ export interface RuleCheck {
   readonly varied: ReadonlySet<string>;
   /** Only rules that involve one of these names are told; null: all. */
   readonly only: ReadonlySet<string> | null;
+  /** What stands without the trial's `with`; null where the study itself is checked. */
+  readonly base: ReadonlyMap<string, number> | null;
   /** Where a name stands, as messages say it: a name in a trial's `with` has that in front. */
   readonly pathOf: (name: string) => string;
 }
 
 /** Everything missing, said twice, incomplete or out of order. */
 export function checkRules(check: RuleCheck): void {
-  const all = check.only === null ? [...alternatives, ...fileAlternatives] : alternatives;
-  for (const alternative of all) checkAlternative(alternative, check);
+  for (const alternative of alternatives) checkAlternative(alternative, check);
   checkGroups(check);
   checkNeeds(check);
   checkOrders(check);
@@ -34,34 +37,34 @@ function concerns({ only }: RuleCheck, names: readonly string[]): boolean {
   return only === null || names.some((name) => only.has(name));
 }
 
-function checkAlternative({ holds, rulesOut, why }: Alternative, check: RuleCheck): void {
-  const { stated, issues, pathOf } = check;
+/** One message per alternative, where the later of the two ways begins. */
+function checkAlternative({ holds, rulesOut, inFile, why }: Alternative, check: RuleCheck): void {
+  const { stated, issues, only, pathOf } = check;
   const under = (patterns: readonly string[]) => [...stated.stands].filter(([name]) => patterns.some((pattern) => matches(pattern, name)));
-  for (const [held, heldAt] of under(holds).slice(0, 1)) {
-    for (const [out, outAt] of under(rulesOut)) {
-      if (!concerns(check, [held, out])) continue;
-      const pair = [
-        { name: nameInFile(held), at: heldAt },
-        { name: nameInFile(out), at: outAt },
-      ];
-      const [earlier, later] = pair.sort((a, b) => a.at - b.at) as [(typeof pair)[0], (typeof pair)[0]];
-      const found = `${later.name} here and ${earlier.name} on line ${issues.lineOf(earlier.at)}`;
-      issues.error(later.at, pathOf(later.name), {
-        expected: `${earlier.name} or ${later.name}, not both`,
-        found,
-        hint: `Keep one of the two lines: ${why}.`,
-      });
-      break;
-    }
-  }
+  const held = under(holds)[0];
+  if (held === undefined) return;
+  const out = under(only === null ? [...rulesOut, ...(inFile ?? [])] : rulesOut).filter(([name]) => concerns(check, [held[0], name]));
+  const first = out[0];
+  if (first === undefined) return;
+  const names = out.map(([name]) => nameInFile(name));
+  const other = names.length > 4 ? `${names.slice(0, 3).join(', ')} and so on` : names.join(', ');
+  const later = first[1] > held[1] ? first : held;
+  const lines = [held, ...out].filter((entry) => entry !== later).map(([name, at]) => `${nameInFile(name)} on line ${issues.lineOf(at)}`);
+  const found = `${nameInFile(later[0])} here and ${lines.slice(0, 4).join(', ')}`;
+  issues.error(later[1], pathOf(nameInFile(later[0])), {
+    expected: `${nameInFile(held[0])} or ${other}, not both`,
+    found,
+    hint: `Keep one of the two: ${why}.`,
+  });
 }
 
 function checkGroups(check: RuleCheck): void {
   const { stated, issues, pathOf } = check;
   for (const { names, why } of groups) {
     const there = names.filter((name) => stated.stands.has(name));
-    if (there.length === 0 || there.length === names.length || !concerns(check, there)) continue;
-    const missing = names.filter((name) => !stated.stands.has(name));
+    const missing = names.filter((name) => !stated.stands.has(name) && !stated.tried.has(name));
+    const toldAlready = check.base !== null && names.some((name) => check.base?.has(name));
+    if (there.length === 0 || missing.length === 0 || toldAlready || !concerns(check, there)) continue;
     const first = there[0] as string;
     const found = `${there.map(last).join(', ')} without ${missing.map(last).join(', ')}`;
     issues.error(stated.stands.get(first) as number, pathOf(first), {
@@ -76,7 +79,7 @@ function checkNeeds(check: RuleCheck): void {
   const { stated, issues, only } = check;
   for (const { names, when, hint } of needs) {
     const asked = when === undefined ? only === null : [...stated.stands.keys()].some((name) => name === when || name.startsWith(`${when}.`));
-    if (!asked || names.some((name) => stated.stands.has(name))) continue;
+    if (!asked || names.some((name) => stated.stands.has(name) || stated.tried.has(name))) continue;
     if (only !== null && ![...only].some((name) => name === when || name.startsWith(`${when}.`))) continue;
     const path = names[0] as string;
     issues.error(nearestSection(path, stated), path, { expected: names.join(' or '), found: names.length > 1 ? 'neither' : 'nothing', hint });

@@ -43,13 +43,22 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
   const trialsPart = found.parts.get('trials');
   const trials = trialsPart === undefined ? [] : readTrials(trialsPart.value, sources, issues);
   const varied = new Set(variedNames(found));
-  checkRules({ stated: found, issues, varied, only: null, pathOf: (name) => name });
+  checkRules({ stated: found, issues, varied, only: null, base: null, pathOf: (name) => name });
   for (const trial of trials) checkTrialRules(trial, found, varied, issues);
   const values = referenceValues({ found, trials, fullLoad });
   const stands = new Map([...found.stands, ...trials.flatMap((trial) => [...trial.found.stands])]);
-  const vary = found.parts.get('vary');
-  const axes = vary === undefined ? [] : readAxes(vary.value, { issues, values, stands });
   const aims = { issues, trials, columns: metricColumns({ trials }), broken: brokenTrials(trialsPart?.value, trials), stands: found.stands };
+  const vary = found.parts.get('vary');
+  const axes =
+    vary === undefined
+      ? []
+      : readAxes(vary.value, {
+          issues,
+          values,
+          stands,
+          tried: new Set([...found.tried, ...trials.flatMap((trial) => [...trial.found.tried])]),
+          broken: aims.broken,
+        });
   const requirements = readRequirements(found.parts.get('requirements')?.value, aims);
   const tradeOff = readTradeOff(found.parts.get('tradeOff')?.value, aims);
   const search = readSearch(found.parts.get('search')?.value, issues);
@@ -111,11 +120,12 @@ function checkTrialRules(trial: TrialFound, base: Found, varied: ReadonlySet<str
   const stated: Stated = {
     figures: new Map([...base.figures, ...trial.with, ...trial.found.figures]),
     stands: new Map([...base.stands, ...trial.withStands, ...trial.found.stands]),
+    tried: new Set([...base.tried, ...trial.withStands.keys(), ...trial.found.tried]),
   };
   const only = new Set([...trial.withStands.keys(), ...trial.found.stands.keys()]);
   const left = new Set([...varied].filter((name) => !trial.withStands.has(name)));
   const pathOf = (name: string) => (trial.withStands.has(name) ? `trials.${trial.name}.with.${name}` : name);
-  checkRules({ stated, issues, varied: left, only, pathOf });
+  checkRules({ stated, issues, varied: left, only, base: base.stands, pathOf });
   checkContinuous(trial, stated, issues);
 }
 

@@ -30,7 +30,7 @@ export interface CsvTable {
   readonly rows: readonly CsvLine[];
 }
 
-const LARGEST_CSV = 10_000_000;
+const LARGEST_CSV = 20_000_000;
 const NUMBER = /^[+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?$/u;
 
 /** Takes a file apart; null with an issue where it has no head and rows. `expected` describes the head. */

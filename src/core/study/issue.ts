@@ -46,6 +46,11 @@ export class IssueList {
     this.lineStarts = lineStartsOf(text);
   }
 
+  /** How many errors there are, those not kept included. */
+  get errorCount(): number {
+    return this.errors;
+  }
+
   /** Whether any error was added. */
   get failed(): boolean {
     return this.errors > 0;

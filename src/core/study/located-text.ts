@@ -50,7 +50,9 @@ export function readLocated(text: string, issues: IssueList): LocatedMap | null 
   // The failsafe schema leaves every scalar a text; unique keys are checked here because the library compares every pair.
   const composer = new Composer({ schema: 'failsafe', uniqueKeys: false, merge: false, prettyErrors: false, logLevel: 'silent' });
   const documents = [...composer.compose(tokens, true, text.length)];
-  for (const problem of documents.flatMap((document) => document.errors)) addSyntaxIssue(problem, issues);
+  // What follows the first syntax error is mostly its echo.
+  const problem = documents.flatMap((document) => document.errors).sort((a, b) => a.pos[0] - b.pos[0])[0];
+  if (problem !== undefined) addSyntaxIssue(problem, issues);
   const second = documents[1]?.contents;
   if (second !== undefined) {
     issues.error(second?.range[0] ?? 0, '', {
@@ -122,7 +124,11 @@ const syntaxHints: Partial<Record<YAMLParseError['code'], string>> = {
 
 function addSyntaxIssue(problem: YAMLParseError, issues: IssueList): void {
   const found = problem.message.split('\n')[0] as string;
-  issues.error(problem.pos[0], '', { expected: 'YAML that can be read', found, hint: syntaxHints[problem.code] ?? 'Check the line, and the one above it.' });
+  issues.error(problem.pos[0], '', {
+    expected: 'YAML that can be read',
+    found,
+    hint: `${syntaxHints[problem.code] ?? 'Check the line, and the one above it.'} Everything else is checked once this can be read.`,
+  });
 }
 
 function rootOf(contents: ParsedNode | null, issues: IssueList): LocatedMap | null {

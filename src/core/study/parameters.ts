@@ -217,7 +217,7 @@ export const trialParameters = {
   from: row('from', 'speed', 0, 'from', 'Speed at the start.', { ...given, atLeast: 0, atMost: 200 }),
   to: row('to', 'speed', 0, 'to', 'Speed to be reached.', { ...given, above: 0, atMost: 200 }),
   distance: row('distance', 'distance', 0, 'distance', 'Distance covered from rest.', { ...given, above: 0, atMost: 100_000 }),
-  at: row('at', 'speed', 0, 'at', 'Speed that is held on the grade.', { ...given, above: 0, atMost: 200 }),
+  at: row('at', 'speed', 0, 'at', 'Speed that is held on the grade; for a grade at standstill use a hill start.', { ...given, above: 0, atMost: 200 }),
   startAcceleration: row('startAcceleration', 'acceleration', 2, 'start acceleration', 'Acceleration kept in reserve at the start.', {
     ...notNegative,
     default: 0,

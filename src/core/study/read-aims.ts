@@ -158,6 +158,7 @@ export function readTradeOff(part: Located | undefined, context: AimsContext): {
     });
     return nothing;
   }
+  const before = issues.errorCount;
   const keys = ['minimise', 'maximise', 'resolution', 'keep'];
   for (const { key, at } of part.entries) {
     if (keys.includes(key)) continue;
@@ -167,10 +168,11 @@ export function readTradeOff(part: Located | undefined, context: AimsContext): {
   const entry = (name: string) => part.entries.find(({ key }) => key === name)?.value;
   const aimed = [...readMetricList(entry('minimise'), 'minimise', context), ...readMetricList(entry('maximise'), 'maximise', context)];
   const once = aimed.filter((metric, index) => isFirst(metric, index, aimed, issues));
-  if (aimed.length === 0 && !issues.failed) {
+  const listsHold = issues.errorCount === before;
+  if (aimed.length === 0 && listsHold) {
     issues.error(part.at, 'tradeOff', { expected: 'at least one objective', found: 'none', hint: 'List metrics under minimise or maximise.' });
   }
-  const sizes = readResolution(entry('resolution'), once, issues);
+  const sizes = readResolution(entry('resolution'), once, listsHold, issues);
   const objectives = once.map(({ column, list }) => ({ metric: column.name, aim: list as Objective['aim'], resolution: sizes.get(column.name) ?? 0 }));
   return { objectives, keep: [...new Set(readMetricList(entry('keep'), 'keep', context).map(({ column }) => column.name))] };
 }
@@ -219,7 +221,8 @@ function readMetricList(value: Located | undefined, list: string, context: AimsC
   });
 }
 
-function readResolution(value: Located | undefined, objectives: readonly ListedMetric[], issues: IssueList): Map<string, number> {
+/** Sizes by objective; a name that is none is told only where the lists of objectives were read without mistakes. */
+function readResolution(value: Located | undefined, objectives: readonly ListedMetric[], listsHold: boolean, issues: IssueList): Map<string, number> {
   const sizes = new Map<string, number>();
   if (value === undefined) return sizes;
   if (value.kind !== 'map') {
@@ -233,6 +236,7 @@ function readResolution(value: Located | undefined, objectives: readonly ListedM
   for (const { key, at, value: size } of value.entries) {
     const path = `tradeOff.resolution.${key}`;
     const objective = objectives.find(({ column }) => column.name === key);
+    if (objective === undefined && !listsHold) continue;
     if (objective === undefined) {
       const names = objectives.map(({ column }) => column.name);
       const near = issues.nearest(key, names);

@@ -13,6 +13,8 @@ const MOST_POINTS = 100_000;
 /** A design's number must fit an unsigned 32-bit integer. */
 const MOST_DESIGNS = 4e9;
 const KEYS = ['from', 'to', 'steps', 'step', 'oneOf'];
+/** Keys that belong to the methods to come. */
+const SAMPLING_KEYS = ['designs', 'seed'];
 const METHODS_TO_COME = ['sobol', 'latin hypercube', 'random', 'genetic'];
 
 /** What the axes are checked against. */
@@ -22,6 +24,9 @@ export interface AxesContext {
   readonly values: Readonly<Record<string, number>>;
   /** Every name that the study states, trials included. */
   readonly stands: ReadonlyMap<string, number>;
+  /** Names whose own mistakes are told already, and trials that could not be read. */
+  readonly tried: ReadonlySet<string>;
+  readonly broken: ReadonlySet<string>;
 }
 
 /** Reads `vary`. */
@@ -49,7 +54,7 @@ function readAxis({ key, at, value }: LocatedEntry, context: AxesContext): Axis 
   const path = `vary.${key}`;
   const row = findParameter(key);
   if (row === undefined || !hasReference(key, context)) {
-    context.issues.error(at, path, noReference(key, row, value, context));
+    if (!toldAlready(key, context)) context.issues.error(at, path, noReference(key, row, value, context));
     return null;
   }
   if (value.kind !== 'map') {
@@ -63,6 +68,12 @@ function readAxis({ key, at, value }: LocatedEntry, context: AxesContext): Axis 
 
 function hasReference(name: string, { values, stands }: AxesContext): boolean {
   return values[name] !== undefined && ruledOutBy(name, stands.keys()) === undefined;
+}
+
+/** A figure that is there but wrong, or a trial that is: the mistake itself is told. */
+function toldAlready(name: string, { values, stands, tried, broken }: AxesContext): boolean {
+  if (broken.has(/^trials\.([^.]*)\./u.exec(name)?.[1] ?? '')) return true;
+  return values[name] === undefined && tried.has(name) && ruledOutBy(name, stands.keys()) === undefined;
 }
 
 function noReference(name: string, row: ParameterRow | undefined, value: Located, { issues, values, stands }: AxesContext) {
@@ -227,15 +238,15 @@ export function readSearch(part: Located | undefined, issues: IssueList): Search
     });
     return grid;
   }
+  const method = part.entries.find(({ key }) => key === 'method')?.value;
+  const text = method?.kind === 'text' ? method.text : '';
   for (const { key, at } of part.entries) {
-    if (key === 'method') continue;
-    const sampling = key === 'designs' || key === 'seed';
-    const near = issues.nearest(key, ['method', 'designs', 'seed']);
+    if (key === 'method' || (METHODS_TO_COME.includes(text) && SAMPLING_KEYS.includes(key))) continue;
+    const sampling = SAMPLING_KEYS.includes(key);
+    const near = issues.nearest(key, ['method', ...SAMPLING_KEYS]);
     const hint = sampling ? 'Remove it: a grid evaluates every point of vary.' : near === null ? 'Remove it.' : `Did you mean ${near}?`;
     issues.error(at, `search.${key}`, { expected: 'method alone', found: clip(key), hint });
   }
-  const method = part.entries.find(({ key }) => key === 'method')?.value;
-  const text = method?.kind === 'text' ? method.text : '';
   if (text === 'grid') return grid;
   if (METHODS_TO_COME.includes(text)) {
     issues.error(method?.at ?? part.at, 'search.method', { expected: 'grid', found: `${text}, which is not available yet`, hint: 'Use grid for now.' });

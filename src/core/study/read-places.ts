@@ -23,11 +23,13 @@ export interface Found {
   readonly parts: Map<string, { readonly at: number; readonly value: Located }>;
   /** Offset of every name and section that stands in the file, readable or not. */
   readonly stands: Map<string, number>;
+  /** Names that stand, or most likely stand misspelt: whatever is wrong with them is told, so that they are not missing as well. */
+  readonly tried: Set<string>;
 }
 
 /** Nothing found yet. */
 export function nothingFound(): Found {
-  return { figures: new Map(), texts: new Map(), parts: new Map(), stands: new Map() };
+  return { figures: new Map(), texts: new Map(), parts: new Map(), stands: new Map(), tried: new Set() };
 }
 
 /** What a reader needs to know of where it is. */
@@ -52,6 +54,7 @@ export function readPlaces(map: LocatedMap, place: Place, reading: Reading): voi
 function readPlace(at: number, value: Located, place: Place, reading: Reading): void {
   const { issues, found, prefix } = reading;
   const path = prefix + place.path;
+  found.tried.add(path);
   // A figure that may also be a section (motor.inertia) stands only as a figure: below it stand other ways of saying it.
   if (value.kind === 'text' || place.parameter === null) found.stands.set(path, at);
   if (place.free !== null) {
@@ -117,7 +120,7 @@ export function readFigure(value: Located, row: ParameterRow, path: string, issu
 function withinBounds(read: ReadFigure, value: Located & { kind: 'text' }, row: ParameterRow, path: string, issues: IssueList): boolean {
   const expected = boundsMissed(row, read.value, read.unit);
   if (expected !== null)
-    issues.error(value.at, path, { expected: `${row.label} ${expected}`, found: clip(value.text), hint: `Check the figure and its unit. ${row.sentence}` });
+    issues.error(value.at, path, { expected: `${row.label}, ${expected}`, found: clip(value.text), hint: `Check the figure and its unit. ${row.sentence}` });
   return expected === null;
 }
 
@@ -160,6 +163,7 @@ function readPair(list: LocatedList, place: Place, reading: Reading): void {
 function unknownKey(key: string, at: number, value: Located, place: Place, reading: Reading): void {
   const names = [...place.children.keys()].filter((name) => !/^[12]$/u.test(name));
   const near = reading.issues.nearest(key, names);
+  if (near !== null) reading.found.tried.add(`${reading.prefix}${place.path === '' ? '' : `${place.path}.`}${near}`);
   const inside = reading.prefix + place.path;
   const path = inside === '' || inside.endsWith('.') ? inside + key : `${inside}.${key}`;
   const cut = value.kind === 'text' && value.text === '' && /^\d/u.test(key);

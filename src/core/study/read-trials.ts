@@ -1,4 +1,5 @@
 /** Reads the trials of a study: each by the layout of its kind, its `with`, its trace and its road. */
+import { machineUnit } from '../units/units.ts';
 import { clip, type IssueList } from './issue.ts';
 import { requiredKeys, trialLayout, whyNotTaken } from './layout.ts';
 import type { Located, LocatedMap } from './located-text.ts';
@@ -129,7 +130,7 @@ function missing(key: TrialParameter, at: number, path: string, kind: TrialKind,
   issues.error(at, `${path}.${key}`, {
     expected: `${key}, which ${/^[aeiou]/u.test(kind) ? 'an' : 'a'} ${kind} trial needs`,
     found: 'nothing',
-    hint: `Add "${key}: …": ${trialParameters[key].sentence}`,
+    hint: `Add "${key}: … ${machineUnit(trialParameters[key].quantity).symbol}": ${trialParameters[key].sentence}`,
   });
 }
 

@@ -10,6 +10,8 @@ export interface Alternative {
   /** … none of these has a part to play. */
   readonly rulesOut: readonly string[];
   readonly why: string;
+  /** Ruled out in the file, yet the search and single trials may change them: the one way gives the reference figure. */
+  readonly inFile?: readonly string[];
   /** What is ruled out has a figure all the same, derived from the other: the search may vary it. */
   readonly derived?: true;
 }
@@ -30,7 +32,12 @@ export const alternatives: readonly Alternative[] = [
   },
   { holds: ['air.density'], rulesOut: ['air.temperature', 'air.altitude'], why: 'the air density follows from temperature and altitude' },
   { holds: ['motor.inertia.perTorque'], rulesOut: ['motor.inertia'], why: 'the rotor inertia follows from the peak torque' },
-  { holds: ['motor.fullLoad.*'], rulesOut: ['motor.maxSpeed', 'motor.constantPowerTo'], why: 'the full-load curve ends at maximum speed' },
+  {
+    holds: ['motor.fullLoad.*'],
+    rulesOut: ['motor.maxSpeed', 'motor.constantPowerTo'],
+    inFile: ['motor.peakTorque', 'motor.baseSpeed'],
+    why: 'the full-load curve gives all of them; to scale it, vary peak torque and base speed or set them in a trial',
+  },
   {
     holds: ['gearing.ratio'],
     rulesOut: ['gearing.ratios.*', 'gearing.shiftTime', 'gearing.efficiency.1', 'gearing.efficiency.2'],
@@ -50,15 +57,6 @@ export const alternatives: readonly Alternative[] = [
   { holds: ['battery.resistance.perEnergy'], rulesOut: ['battery.resistance'], why: 'the resistance follows from the usable energy' },
   { holds: ['trials.*.laden'], rulesOut: ['trials.*.payload'], why: 'the payload follows from the laden mass' },
   { holds: ['trials.*.road'], rulesOut: ['trials.*.grade'], why: 'the road profile gives the grade' },
-];
-
-/** Further pairs, of the file itself only: a curve or a map states these, yet the search and single trials may change them. */
-export const fileAlternatives: readonly Alternative[] = [
-  {
-    holds: ['motor.fullLoad.*'],
-    rulesOut: ['motor.peakTorque', 'motor.baseSpeed'],
-    why: 'the full-load curve gives peak torque and base speed; to scale it, vary them or set them in a trial',
-  },
 ];
 
 /** Names of which all stand or none. */
@@ -156,6 +154,14 @@ export function ruledOutBy(name: string, stands: Iterable<string>): { alternativ
     if (alternative !== undefined) return { alternative, by };
   }
   return undefined;
+}
+
+/** The alternative by which two names cannot both have a part to play, whichever of them holds; undefined where they can. */
+export function exclusion(name: string, other: string): Alternative | undefined {
+  const trials = [name, other].map((each) => /^trials\.[^.]*\./u.exec(each)?.[0]);
+  if (trials[0] !== undefined && trials[1] !== undefined && trials[0] !== trials[1]) return undefined;
+  const under = (patterns: readonly string[], each: string) => patterns.some((pattern) => matches(pattern, each));
+  return alternatives.find(({ holds, rulesOut }) => (under(holds, name) && under(rulesOut, other)) || (under(holds, other) && under(rulesOut, name)));
 }
 
 /** A name of these tables as the study file has it. */

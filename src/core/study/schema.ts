@@ -25,15 +25,14 @@ export function studyJsonSchema(): object {
   return { $schema: 'https://json-schema.org/draft/2020-12/schema', title: 'layshaft study', ...root, $defs: definitions() };
 }
 
-/** A figure of each quantity, and an axis of each. */
+/** A figure of each quantity, an axis of each, and the numbers of the study by dotted name. */
 function definitions(): Schema {
   const all = Object.keys(quantities) as Quantity[];
-  return Object.fromEntries(
-    all.flatMap((quantity) => [
-      [`figure.${quantity}`, figureDefinition(quantity)],
-      [`axis.${quantity}`, axisDefinition(quantity)],
-    ]),
-  );
+  const byQuantity = all.flatMap((quantity) => [
+    [`figure.${quantity}`, figureDefinition(quantity)],
+    [`axis.${quantity}`, axisDefinition(quantity)],
+  ]);
+  return { ...Object.fromEntries(byQuantity), numbers: numbersByName(figureSchema) };
 }
 
 function figureDefinition(quantity: Quantity): Schema {
@@ -112,7 +111,7 @@ function isRequired(name: string): boolean {
 }
 
 function trialSchema(kind: TrialKind): Schema {
-  const { properties, ...rest } = sectionSchema(trialLayout(kind), { with: numbersByName((row) => figureSchema(row)) }) as { properties: Schema };
+  const { properties, ...rest } = sectionSchema(trialLayout(kind), { with: { $ref: '#/$defs/numbers' } }) as { properties: Schema };
   const required = [
     'kind',
     ...trialKindRow(kind).takes.filter((key) => ['from', 'to', 'distance', 'at'].includes(key)),

@@ -5,7 +5,7 @@ const LONGEST = 40;
 const MOST_NAMES = 600;
 
 /**
- * Nearest of `names` to `wanted` by edit distance (insert, delete, replace, swap of neighbours; case counts half), or null
+ * Nearest of `names` to `wanted` by edit distance (insert, delete, replace, swap of neighbours; case counts a quarter), or null
  * when none is near: at most a third of the longer name may differ. Ties go to the first.
  * Source: optimal string alignment, a restricted form of F. Damerau, Comm. ACM 7(3), 1964 (from memory).
  */
@@ -48,5 +48,5 @@ function editDistance(a: string, b: string, limit: number): number {
 
 function replaceCost(a: string, b: string): number {
   if (a === b) return 0;
-  return a.toLowerCase() === b.toLowerCase() ? 0.5 : 1;
+  return a.toLowerCase() === b.toLowerCase() ? 0.25 : 1;
 }

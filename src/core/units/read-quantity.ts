@@ -117,7 +117,7 @@ function wrongUnit(text: string, number: string, rest: string, quantity: Quantit
 function missingUnitHint(number: string, quantity: Quantity): string {
   const value = Number(number.replaceAll('\u2212', '-'));
   if (quantity === 'share' && value > 0 && value <= 1) return `A share is written in percent: write ${Number((value * 100).toPrecision(12))} %.`;
-  return `Add the unit: ${example(number, quantity)}?`;
+  return `Add the unit, such as ${example(number, quantity)}.`;
 }
 
 function unitOnPlainNumber(number: string, rest: string, quantity: Quantity): string {
