@@ -99,6 +99,8 @@ export function inventedStudy({ title = 'Harbour parcel van', rampName = 'ramp' 
     },
     fullLoad: null,
     lossMap: null,
+    optionCurves: [],
+    optionMaps: [],
     trials: [
       trial(rampName, 'hill start', { with: { 'vehicle.axles.frontShare': 0.44 } }),
       trial('climb', 'gradeability'),

@@ -13,6 +13,8 @@ const study: Study = {
   values: {},
   fullLoad: null,
   lossMap: null,
+  optionCurves: [],
+  optionMaps: [],
   trials: [],
   axes: [],
   search: { method: 'grid' },

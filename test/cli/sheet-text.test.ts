@@ -20,6 +20,8 @@ const study: Study = {
   values: { 'trials.sprint.from': 0, 'trials.sprint.to': 80 / 3.6, 'trials.sprint.laden': 2800, 'gearing.ratio': 9.5 },
   fullLoad: null,
   lossMap: null,
+  optionCurves: [],
+  optionMaps: [],
   trials,
   axes: [{ name: 'gearing.ratio', sets: ['gearing.ratio'], points: [[8], [9.5]], labels: null, range: null }],
   search: { method: 'grid' },

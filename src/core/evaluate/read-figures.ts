@@ -6,6 +6,9 @@ import { curveMaxSpeedRadPerS } from '../vehicle/full-load-curve.ts';
 import { roadLoadFromCoastDown, roadLoadFromCoefficients } from '../vehicle/road-load.ts';
 import type { Battery, Gearing, Motor, RoadLoad, Vehicle } from '../vehicle/vehicle.ts';
 
+/** Air temperature of a design that states neither it nor a density. */
+const STANDARD_TEMPERATURE_K = 293.15;
+
 /** Where the number of that name stands. */
 export type ReadCell = (name: string) => number;
 
@@ -27,9 +30,9 @@ function orElse(value: number, otherwise: number): number {
   return Number.isNaN(value) ? otherwise : value;
 }
 
-/** The motor with its losses and measured curves. */
+/** The motor with its losses and measured curves: the study's own, or those that an option brings. */
 export function motorReader(study: Study, read: ReadCell): (figures: Float64Array, motor: Motor) => void {
-  const { fullLoad, lossMap } = study;
+  const [curveCell, mapCell] = [read('motor.fullLoad'), read('motor.map')];
   const [torque, base, constantTo, top] = ['peakTorque', 'baseSpeed', 'constantPowerTo', 'maxSpeed'].map((key) => read(`motor.${key}`));
   const [torqueShare, powerShare, standstill] = ['continuous.torque', 'continuous.power', 'standstill'].map((key) => read(`motor.${key}`));
   const inertia = read('motor.inertia');
@@ -39,14 +42,16 @@ export function motorReader(study: Study, read: ReadCell): (figures: Float64Arra
     motor.peakTorqueNm = figures[torque];
     motor.baseSpeedRadPerS = figures[base];
     motor.peakPowerW = motor.peakTorqueNm * motor.baseSpeedRadPerS;
-    motor.maxSpeedRadPerS = fullLoad === null ? figures[top] : curveMaxSpeedRadPerS(fullLoad, motor.baseSpeedRadPerS);
+    const curve = figures[curveCell];
+    const map = figures[mapCell];
+    motor.fullLoad = Number.isNaN(curve) ? study.fullLoad : study.optionCurves[curve].data;
+    motor.lossMap = Number.isNaN(map) ? study.lossMap : study.optionMaps[map].data;
+    motor.maxSpeedRadPerS = motor.fullLoad === null ? figures[top] : curveMaxSpeedRadPerS(motor.fullLoad, motor.baseSpeedRadPerS);
     motor.constantPowerToRadPerS = orElse(figures[constantTo], motor.maxSpeedRadPerS);
     motor.continuousTorqueShare = figures[torqueShare];
     motor.continuousPowerShare = figures[powerShare];
     motor.standstillShare = orElse(figures[standstill], 1);
     motor.rotorInertiaKgM2 = orElse(figures[inertia], orZero(figures[inertiaPerTorque]) * motor.peakTorqueNm);
-    motor.lossMap = lossMap;
-    motor.fullLoad = fullLoad;
     losses(figures, motor);
   };
 }
@@ -184,8 +189,8 @@ function densityReader(read: ReadCell): (figures: Float64Array) => number {
   return (figures) => {
     const given = figures[density];
     if (!Number.isNaN(given)) return given;
-    const altitudeM = figures[altitude];
-    const temperatureK = figures[temperature];
+    const altitudeM = orZero(figures[altitude]);
+    const temperatureK = orElse(figures[temperature], STANDARD_TEMPERATURE_K);
     if (altitudeM !== lastAltitudeM || temperatureK !== lastTemperatureK) {
       lastDensity = standardDensityKgPerM3(altitudeM, temperatureK);
       lastAltitudeM = altitudeM;

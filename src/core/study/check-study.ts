@@ -1,5 +1,6 @@
 /** Study text -> a checked study in SI, or everything that is wrong with it, all at once. */
-import { checkRules, type Stated } from './check-rules.ts';
+import { checkRules } from './check-rules.ts';
+import { checkTrialRules } from './check-trial-rules.ts';
 import { type Issue, IssueList } from './issue.ts';
 import { studyLayout } from './layout.ts';
 import { type Located, type LocatedMap, readLocated } from './located-text.ts';
@@ -11,7 +12,6 @@ import { type Found, nothingFound, readPlaces } from './read-places.ts';
 import { readTrials, type StudySources, type TrialFound } from './read-trials.ts';
 import { referenceValues } from './reference-values.ts';
 import type { Study, Trial } from './study.ts';
-import { trialKindRow } from './trial-kinds.ts';
 import { rollingRadiusM } from './tyre-size.ts';
 import { addWarnings } from './warnings.ts';
 
@@ -44,7 +44,7 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
   const trials = trialsPart === undefined ? [] : readTrials(trialsPart.value, sources, issues);
   const varied = new Set(variedNames(found));
   checkRules({ stated: found, issues, varied, only: null, base: null, pathOf: (name) => name });
-  for (const trial of trials) checkTrialRules(trial, found, varied, issues);
+  for (const trial of trials) checkTrialRules(trial, { base: found, varied, issues, pathOf: (name) => name });
   const values = referenceValues({ found, trials, fullLoad });
   const stands = new Map([...found.stands, ...trials.flatMap((trial) => [...trial.found.stands])]);
   const aims = { issues, trials, columns: metricColumns({ trials }), broken: brokenTrials(trialsPart?.value, trials), stands: found.stands };
@@ -73,6 +73,8 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
     values,
     fullLoad,
     lossMap: map === null ? null : lossMapOf(map, values),
+    optionCurves: [],
+    optionMaps: [],
     trials: trials.map(trialOf),
     axes,
     search,
@@ -113,32 +115,6 @@ function variedNames(found: Found): string[] {
 function brokenTrials(part: Located | undefined, trials: readonly TrialFound[]): Set<string> {
   const read = new Set(trials.map(({ name }) => name));
   return new Set(part?.kind === 'map' ? part.entries.map(({ key }) => key).filter((name) => !read.has(name)) : []);
-}
-
-/** The rules for the study that a trial makes of the study's numbers, its `with` and its own. */
-function checkTrialRules(trial: TrialFound, base: Found, varied: ReadonlySet<string>, issues: IssueList): void {
-  const stated: Stated = {
-    figures: new Map([...base.figures, ...trial.with, ...trial.found.figures]),
-    stands: new Map([...base.stands, ...trial.withStands, ...trial.found.stands]),
-    tried: new Set([...base.tried, ...trial.withStands.keys(), ...trial.found.tried]),
-  };
-  const only = new Set([...trial.withStands.keys(), ...trial.found.stands.keys()]);
-  const left = new Set([...varied].filter((name) => !trial.withStands.has(name)));
-  const pathOf = (name: string) => (trial.withStands.has(name) ? `trials.${trial.name}.with.${name}` : name);
-  checkRules({ stated, issues, varied: left, only, base: base.stands, pathOf });
-  checkContinuous(trial, stated, issues);
-}
-
-function checkContinuous({ name, kind, rating, at, found }: TrialFound, stated: Stated, issues: IssueList): void {
-  if (trialKindRow(kind).rating === null || rating !== 'continuous' || stated.stands.has('motor.continuous')) return;
-  if (stated.stands.has('motor.continuous.torque')) return;
-  const said = found.texts.get(`trials.${name}.rating`);
-  const what = said === undefined ? `a ${kind} trial, which is rated continuous by default,` : 'rating: continuous';
-  issues.error(said?.at ?? at, `trials.${name}.rating`, {
-    expected: 'rating: peak in a study without motor.continuous',
-    found: `${what} without a continuous limit`,
-    hint: 'Add "continuous: { torque: 50 %, power: 50 % }" under motor, or write "rating: peak" in the trial.',
-  });
 }
 
 function trialOf({ name, kind, rating, with: figures, trace, road }: TrialFound): Trial {

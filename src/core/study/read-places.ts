@@ -51,7 +51,8 @@ export function readPlaces(map: LocatedMap, place: Place, reading: Reading): voi
   }
 }
 
-function readPlace(at: number, value: Located, place: Place, reading: Reading): void {
+/** Reads one value at its place of the layout. */
+export function readPlace(at: number, value: Located, place: Place, reading: Reading): void {
   const { issues, found, prefix } = reading;
   const path = prefix + place.path;
   found.tried.add(path);

@@ -38,12 +38,22 @@ export interface Axis {
   readonly name: string;
   /** Dotted names that a point of the axis sets. */
   readonly sets: readonly string[];
-  /** Points in the order of the study file: one SI value per name in `sets`. */
+  /**
+   * Points in the order of the study file: one SI value per name in `sets`. A number that an option leaves without a part to play
+   * (one ratio beside two) is NaN there; the numbers `motor.fullLoad` and `motor.map` are an index into `optionCurves` and `optionMaps`,
+   * NaN for the study's own. JSON writes NaN as null: `readStudyJson` brings it back.
+   */
   readonly points: readonly (readonly number[])[];
   /** Names of the points where they are options. */
   readonly labels: readonly string[] | null;
   /** A range between two SI values that a sampling method may fill freely; null for lists and options. */
   readonly range: { readonly from: number; readonly to: number; readonly stepped: boolean } | null;
+}
+
+/** What an option brings in a file. */
+export interface OptionFile<Data> {
+  readonly file: string;
+  readonly data: Data;
 }
 
 /** A requirement on one metric, SI, inclusive. One metric may have both ends: two requirements. */
@@ -87,6 +97,9 @@ export interface Study {
   readonly values: Readonly<Record<string, number>>;
   readonly fullLoad: FullLoadCurve | null;
   readonly lossMap: LossMap | null;
+  /** Measured curves and maps that options bring, in the order of the options. */
+  readonly optionCurves: readonly OptionFile<FullLoadCurve>[];
+  readonly optionMaps: readonly OptionFile<LossMap>[];
   readonly trials: readonly Trial[];
   readonly axes: readonly Axis[];
   readonly search: Search;
@@ -95,4 +108,10 @@ export interface Study {
   /** Further metrics to store with every design. */
   readonly keep: readonly string[];
   readonly report: { readonly units: 'SI' | 'US' };
+}
+
+/** A study that came as JSON, which knows no NaN: what options leave out is NaN again. */
+export function readStudyJson(study: Study): Study {
+  const axes = study.axes.map((axis) => ({ ...axis, points: axis.points.map((point) => point.map((value: number | null) => value ?? Number.NaN)) }));
+  return { ...study, axes };
 }

@@ -1,0 +1,42 @@
+/** The rules for the study that a trial makes of the study's numbers, its `with` and its own. */
+import { checkRules, type Stated } from './check-rules.ts';
+import type { IssueList } from './issue.ts';
+import type { Found } from './read-places.ts';
+import type { TrialFound } from './read-trials.ts';
+import { trialKindRow } from './trial-kinds.ts';
+
+/** What the check of a trial looks at. */
+export interface TrialCheck {
+  readonly base: Found;
+  /** Names whose order against others is left to each design. */
+  readonly varied: ReadonlySet<string>;
+  readonly issues: IssueList;
+  /** Where a name of the base stands, as messages say it. */
+  readonly pathOf: (name: string) => string;
+}
+
+/** Everything that a trial's own numbers and its `with` say twice, leave incomplete or put out of order. */
+export function checkTrialRules(trial: TrialFound, { base, varied, issues, pathOf }: TrialCheck): void {
+  const stated: Stated = {
+    figures: new Map([...base.figures, ...trial.with, ...trial.found.figures]),
+    stands: new Map([...base.stands, ...trial.withStands, ...trial.found.stands]),
+    tried: new Set([...base.tried, ...trial.withStands.keys(), ...trial.found.tried]),
+  };
+  const only = new Set([...trial.withStands.keys(), ...trial.found.stands.keys()]);
+  const left = new Set([...varied].filter((name) => !trial.withStands.has(name)));
+  const path = (name: string) => (trial.withStands.has(name) ? `trials.${trial.name}.with.${name}` : pathOf(name));
+  checkRules({ stated, issues, varied: left, only, base: base.stands, pathOf: path });
+  checkContinuous(trial, stated, issues);
+}
+
+function checkContinuous({ name, kind, rating, at, found }: TrialFound, stated: Stated, issues: IssueList): void {
+  if (trialKindRow(kind).rating === null || rating !== 'continuous' || stated.stands.has('motor.continuous')) return;
+  if (stated.stands.has('motor.continuous.torque')) return;
+  const said = found.texts.get(`trials.${name}.rating`);
+  const what = said === undefined ? `a ${kind} trial, which is rated continuous by default,` : 'rating: continuous';
+  issues.error(said?.at ?? at, `trials.${name}.rating`, {
+    expected: 'rating: peak in a study without motor.continuous',
+    found: `${what} without a continuous limit`,
+    hint: 'Add "continuous: { torque: 50 %, power: 50 % }" under motor, or write "rating: peak" in the trial.',
+  });
+}
