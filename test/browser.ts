@@ -29,6 +29,7 @@ async function unpackedBrowser(): Promise<string> {
   mkdirSync(cache, { recursive: true });
   const fresh = mkdtempSync(join(cache, 'chromium-unpacking-'));
   await unpackInto(fresh);
+  writeFileSync(join(fresh, 'fonts.conf'), fontSettings(home));
   try {
     renameSync(fresh, home);
   } catch (error) {
@@ -52,15 +53,17 @@ async function unpackInto(folder: string): Promise<void> {
       else process.env[name] = kept[name];
     }
   }
-  writeFileSync(join(folder, 'fonts.conf'), fontSettings);
 }
 
-/** Typefaces of the package and of the machine; relative folders are read from where this file lies. */
-const fontSettings = `<?xml version="1.0"?>
+/** Typefaces of the package and of the machine, for a browser that lives in `home`. */
+function fontSettings(home: string): string {
+  const path = (name: string) => join(home, name).replaceAll('&', '&amp;').replaceAll('<', '&lt;');
+  return `<?xml version="1.0"?>
 <!DOCTYPE fontconfig SYSTEM "fonts.dtd">
 <fontconfig>
-  <dir prefix="relative">fonts/fonts</dir>
+  <dir>${path('fonts/fonts')}</dir>
   <dir>/usr/share/fonts</dir>
-  <cachedir prefix="relative">fonts-cache</cachedir>
+  <cachedir>${path('fonts-cache')}</cachedir>
 </fontconfig>
 `;
+}

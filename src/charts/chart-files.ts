@@ -71,7 +71,7 @@ function fileWords(data: ReportData, xColumn: number, yColumn: number) {
   const passing =
     counts.feasible === 0
       ? `none of ${formatFigure(counts.designs, 0)} designs meets every requirement`
-      : `${formatFigure(counts.feasible, 0)} of ${formatFigure(counts.designs, 0)} designs meet every requirement, ${formatFigure(counts.front, 0)} are on the front`;
+      : `${formatFigure(counts.feasible, 0)} of ${formatFigure(counts.designs, 0)} designs meet every requirement, ${formatFigure(counts.front, 0)} are on the front${counts.shownFront < counts.front ? `, ${formatFigure(counts.shownFront, 0)} of them shown` : ''}`;
   return {
     title: `${capitalised(columnPhrase(columns[yColumn]!, study))} over ${columnPhrase(columns[xColumn]!, study)}`,
     subtitle: `${shortText(study.title, 60)}: ${passing}`,

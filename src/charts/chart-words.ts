@@ -9,12 +9,13 @@ interface KeyItem {
 }
 
 function keyItems({ ink, ...view }: TradeOffView): KeyItem[] {
+  const sample = view.sampled ? ' (sample)' : '';
   const item = (shown: boolean, words: string, draw: KeyItem['draw']): KeyItem[] => (shown ? [{ words, draw }] : []);
   return [
     ...item(view.lettered.length > 0, 'put forward', (parent, x, y) => circle(parent, { x, y }, 6).attr('fill', ink.proposal)),
     ...item(view.front.length > 0, 'on the front', (parent, x, y) => circle(parent, { x, y }, 4.2).attr('fill', ink.front)),
-    ...item(view.feasible.length > 0, 'meets every requirement', (parent, x, y) => dots(parent, [{ x, y }], ink.feasible)),
-    ...item(view.removed.length > 0, 'removed', (parent, x, y) => strokes(parent, [{ x, y }], ink.removed)),
+    ...item(view.feasible.length > 0, `meets every requirement${sample}`, (parent, x, y) => dots(parent, [{ x, y }], ink.feasible)),
+    ...item(view.removed.length > 0, `removed${sample}`, (parent, x, y) => strokes(parent, [{ x, y }], ink.removed)),
     ...item(view.reference !== null, 'reference', (parent, x, y) => square(parent, { x, y }, ink)),
     ...item(view.closest !== null, 'closest to passing', (parent, x, y) => triangle(parent, { x, y }, ink)),
   ];

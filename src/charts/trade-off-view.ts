@@ -41,6 +41,8 @@ export interface TradeOffView {
   readonly width: number;
   readonly height: number;
   readonly ink: ChartInk;
+  /** Only some of the designs off the front are here. */
+  readonly sampled: boolean;
   /** Frames all designs that pass; otherwise the front, the reference and those put forward. */
   readonly wide: boolean;
   readonly x: ChartAxis;
@@ -89,6 +91,7 @@ export function tradeOffView(data: ReportData, xColumn: number, yColumn: number,
     width: look.width,
     height: look.height,
     ink: look.ink,
+    sampled: data.designs.length <= data.counts.designs,
     wide: look.wide,
     x: chartAxis(x, study),
     y: chartAxis(y, study),

@@ -1,9 +1,10 @@
 /** What each requirement costs: the designs it removes, alone and together with others, and what easing it would bring. */
 import { columnPhrase, figureText } from '../charts/figure-words.ts';
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
+import { proposalLetter } from '../charts/trade-off-view.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup, type Piece } from './markup.ts';
-import { boundWords, differenceWords, easedLimit, metricColumn } from './wording.ts';
+import { boundWords, designOf, differenceWords, easedLimit, metricColumn } from './wording.ts';
 
 /** Section 4; where nothing passes, the answer says all of it. */
 export function requirementSection(data: ReportData): Markup | null {
@@ -50,20 +51,23 @@ function easingWords(requirement: RequirementCount, data: ReportData): Piece {
     const objective = data.study.objectives[index];
     if (best === null || objective === undefined) return [];
     const { column: measure } = metricColumn(data, objective.metric);
-    const now = bestNow(objective.metric, objective.aim, data);
-    const gain = now === null ? figureText(best.objective, measure, data.study) : differenceWords(best.objective, now, measure, data.study);
+    const now = bestShown(objective.metric, data);
+    const gain =
+      now === null
+        ? `${columnPhrase(measure, data.study)} ${figureText(best.objective, measure, data.study)}`
+        : `${differenceWords(best.objective, now.value, measure, data.study)} than ${now.letter}`;
     return [
-      html`<li>At ${limit(best.limit)}: ${gain}${now !== null && ' than the best that passes'} <span class="together">(<button type="button" class="plain" data-design="${best.number}" hidden>design ${formatFigure(best.number, 0)}</button>)</span></li>`,
+      html`<li>At ${limit(best.limit)}: ${gain} <span class="together">(<button type="button" class="plain" data-design="${best.number}" hidden>design ${formatFigure(best.number, 0)}</button>)</span></li>`,
     ];
   });
   return [html`<p>${first}</p>`, gains.length > 0 && html`<ul>${gains}</ul>`];
 }
 
-function bestNow(metric: string, aim: 'minimise' | 'maximise', data: ReportData): number | null {
-  const { index } = metricColumn(data, metric);
-  const values = data.designs.filter(({ standing }) => standing === 'front').flatMap(({ values: row }) => row[index] ?? []);
-  if (values.length === 0) return null;
-  return values.reduce((best, value) => (aim === 'minimise' ? Math.min(best, value) : Math.max(best, value)));
+/** The design put forward as best in a metric, by its letter, and its value there. */
+function bestShown(metric: string, data: ReportData): { letter: string; value: number } | null {
+  const place = data.proposals.findIndex(({ rules }) => rules.includes(metric));
+  const value = place < 0 ? null : (designOf(data, data.proposals[place]!.number)?.values[metricColumn(data, metric).index] ?? null);
+  return value === null ? null : { letter: proposalLetter(place), value };
 }
 
 function costliestWords(data: ReportData): Piece {

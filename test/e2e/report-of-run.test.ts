@@ -82,7 +82,11 @@ describe('the report of a run', () => {
     const { page } = await openReport(browser, pathToFileURL(join(out, 'report.html')).href);
     const data = JSON.parse((await page.textContent('#report-data')) ?? '') as ReportData;
     // The reference stands in front.csv too, as number 0.
-    const csv = readFileSync(join(out, 'front.csv'), 'utf8').trim().split('\n').slice(1).filter((line) => !line.startsWith('0,'));
+    const csv = readFileSync(join(out, 'front.csv'), 'utf8')
+      .trim()
+      .split('\n')
+      .slice(1)
+      .filter((line) => !line.startsWith('0,'));
     expect(data.counts.designs).toBe(231);
     expect(data.counts.front).toBe(csv.length);
     expect(data.designs.filter(({ standing }) => standing === 'front')).toHaveLength(data.counts.shownFront);

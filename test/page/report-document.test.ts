@@ -70,6 +70,7 @@ describe('the report without script', () => {
     expect(items[0]).toContain(`${ramp?.failing} miss it`);
     expect(items[0]).toContain(`${ramp?.failingAlone} miss no other`);
     expect(items[0]).toMatch(/One more design passes at 19\.97 %/u);
+    expect(items[0]).toMatch(/At [\d.]+ %: [\d.]+ (Wh\/km less battery energy in (stops than A|trunk than B)|EUR cheaper than C) \(design \d+\)/u);
     expect(items.find((item) => item.includes('time in sprint'))).toContain('Removes nothing that the others would let pass.');
     expect(items.at(-1)).toContain('Removes nothing.');
   });
@@ -135,6 +136,7 @@ describe('the report when no design passes', () => {
     expect(items[0]).toContain('1980 miss it');
     expect(items[0]).toContain('A first design passes at');
     expect(items[0]).toMatch(/miss no other [\d.]+ %/u);
+    expect(items[0]).toMatch(/At [\d.]+ %: battery energy in stops [\d.]+ Wh\/km \(design \d+\)/u);
     expect(items[1]).toContain('Removes nothing that the others would let pass.');
   });
 
