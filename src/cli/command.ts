@@ -39,7 +39,7 @@ export interface OptionRow {
   readonly sentence: string;
   /** A whole command line that uses it. */
   readonly example: string;
-  /** Turns the text into the value; throws a RangeError whose message says what is expected. */
+  /** Turns the text into the value; throws a RangeError whose message says what to give. */
   readonly read?: (text: string) => unknown;
 }
 
@@ -71,7 +71,7 @@ export function jsonOption(example: string, what: string): OptionRow {
 export function wholeNumber(least: number): (text: string) => number {
   return (text) => {
     const value = /^\d{1,15}$/.test(text) ? Number(text) : Number.NaN;
-    if (!(value >= least)) throw new RangeError(`a whole number, at least ${least}, is expected`);
+    if (!(value >= least)) throw new RangeError(`Give a whole number, at least ${least}.`);
     return value;
   };
 }

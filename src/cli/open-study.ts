@@ -1,7 +1,7 @@
 /** A study file, read and checked; its mistakes told all at once. */
 import { readdirSync } from 'node:fs';
 import { basename, dirname, join } from 'node:path';
-import { visibleText } from '../charts/visible-text.ts';
+import { shortText, visibleText } from '../charts/visible-text.ts';
 import { checkStudy } from '../core/study/check-study.ts';
 import { formatIssues, type Issue } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
@@ -53,7 +53,7 @@ export function sayWrong(wrong: WrongStudy): void {
     say(formatIssues(wrong.issues));
     say(`\n${ink('red', countOf(wrong.issues.length, 'mistake'))} in ${wrong.file}`);
   } else {
-    complain(`${wrong.file}: ${wrong.unreadable}`);
+    complain(`${shortText(wrong.file, 200)}: ${wrong.unreadable}`);
   }
 }
 

@@ -1,7 +1,7 @@
 /** The command line itself: commander set up from the table of commands, its mistakes turned into status 2. */
 import { Command, CommanderError, InvalidArgumentError, Option } from 'commander';
 import { type CommandRow, type ExitStatus, exitStatus, type OptionRow, type OptionValues } from './command.ts';
-import { commandHelp, flags, programHelp } from './help.ts';
+import { commandHelp, programHelp } from './help.ts';
 import { give, ink, say } from './terminal.ts';
 import { version } from './version.ts';
 
@@ -54,7 +54,7 @@ function readValue(row: OptionRow, text: string): unknown {
   try {
     return row.read === undefined ? text : row.read(text);
   } catch (error) {
-    if (error instanceof RangeError) throw new InvalidArgumentError(`For ${flags(row)} ${error.message}.`);
+    if (error instanceof RangeError) throw new InvalidArgumentError(error.message);
     throw error;
   }
 }

@@ -22,25 +22,33 @@ export interface Progress {
 const movingEveryMs = 100;
 const plainEveryMs = 30_000;
 
-/** One line of progress without a bar: `12 000 of 62 400 designs, 8300/s, 6 s left, 31 % feasible, 48 on the front`. */
+/** One line for files and pipes: `12 000 of 62 400 designs, 8300/s, 6 s left, 31 % feasible, 48 on the front`. */
 export function progressText(standing: Standing, elapsedMs: number): string {
-  const { done, total, feasible, front } = standing;
-  const perS = elapsedMs > 0 ? (done * 1000) / elapsedMs : 0;
-  const parts = [`${count(done)} of ${count(total)} designs`];
-  if (perS > 0) parts.push(`${rateText(perS)}/s`, done < total ? `${durationText((total - done) / perS)} left` : `${durationText(elapsedMs / 1000)} in all`);
-  if (done > 0) parts.push(`${shareText(feasible / done)} feasible`, `${count(front)} on the front`);
-  return parts.join(', ');
+  return [`${count(standing.done)} of ${count(standing.total)} designs`, ...pace(standing, elapsedMs), ...yieldSoFar(standing)].join(', ');
 }
 
-/** The moving line: a bar in front of the text, cut to the width of the terminal. */
+/** The moving line: a bar, and the rest as short as it fits 80 columns; cut to the width of the terminal. */
 export function progressLine(standing: Standing, elapsedMs: number, width: number): string {
   const share = standing.total > 0 ? Math.min(1, standing.done / standing.total) : 1;
   const filled = Math.round(share * barWidth);
   const bar = '█'.repeat(filled) + '░'.repeat(barWidth - filled);
-  return `${bar} ${String(Math.floor(share * 100)).padStart(3)} %  ${progressText(standing, elapsedMs)}`.slice(0, width - 1);
+  const words = [...pace(standing, elapsedMs), ...yieldSoFar(standing)].join(', ');
+  return `${bar} ${String(Math.floor(share * 100)).padStart(3)} %  ${words}`.slice(0, width - 1);
 }
 
-const barWidth = 20;
+const barWidth = 10;
+const clearLine = '\u001b[K';
+
+/** Rate and time left; the whole time at the end. */
+function pace({ done, total }: Standing, elapsedMs: number): string[] {
+  if (done === 0 || elapsedMs <= 0) return [];
+  const perS = (done * 1000) / elapsedMs;
+  return [`${rateText(perS)}/s`, done < total ? `${durationText((total - done) / perS)} left` : `${durationText(elapsedMs / 1000)} in all`];
+}
+
+function yieldSoFar({ done, feasible, front }: Standing): string[] {
+  return done === 0 ? [] : [`${shareText(feasible / done)} feasible`, `${count(front)} on the front`];
+}
 
 /** Shows progress as the terminal allows. Starts counting time now. */
 export function startProgress(total: number, now: () => number = Date.now): Progress {
@@ -52,7 +60,7 @@ export function startProgress(total: number, now: () => number = Date.now): Prog
 
   function draw(): void {
     const elapsed = now() - began;
-    if (moving) process.stderr.write(`\r${progressLine(last, elapsed, terminalWidth())}\u001b[K`);
+    if (moving) process.stderr.write(`\r${progressLine(last, elapsed, terminalWidth())}${clearLine}`);
     else say(progressText(last, elapsed));
   }
 
@@ -64,8 +72,8 @@ export function startProgress(total: number, now: () => number = Date.now): Prog
       draw();
     },
     end() {
-      draw();
-      if (moving) say();
+      if (moving) process.stderr.write(`\r${clearLine}`);
+      say(progressText(last, now() - began));
     },
   };
 }

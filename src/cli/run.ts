@@ -49,6 +49,7 @@ interface Ended {
 }
 
 async function runAll(files: readonly string[], options: OptionValues): Promise<ExitStatus> {
+  stopOnSignals();
   const folders = files.map((file) => runFolderOf(file, options));
   const twice = folders.findIndex((folder, at) => folders.indexOf(folder) !== at);
   if (twice >= 0) {
@@ -62,8 +63,18 @@ async function runAll(files: readonly string[], options: OptionValues): Promise<
     const folder = folders[at] as string;
     ended.push(study === null ? { status: exitStatus.wrong, entry: { study: files[at], status: exitStatus.wrong } } : await runOne(study, folder, options));
   }
-  if (options['json'] === true) giveJson({ runs: ended.map(({ entry }) => entry) });
+  if (options['json'] === true && studies.some((study) => study !== null)) giveJson({ runs: ended.map(({ entry }) => entry) });
   return worstStatus(ended.map(({ status }) => status));
+}
+
+/** Ends at once: every file of a run is written whole or not at all, so nothing half-written is left. */
+function stopOnSignals(): void {
+  for (const signal of ['SIGINT', 'SIGTERM'] as const) {
+    process.once(signal, () => {
+      say('\nInterrupted. The same command starts the run again.');
+      process.exit(exitStatus.interrupted);
+    });
+  }
 }
 
 /** The folder of a study's run. */

@@ -78,7 +78,8 @@ function applySettings(study: Study, texts: readonly string[]): { study: Study; 
 function hasDesign(study: Study, number: number): boolean {
   const designs = study.axes.length === 0 ? 0 : createSearch(study).count;
   if (number <= designs) return true;
-  const range = designs === 0 ? 'Nothing varies in this study: it has design 0 only' : `Its search has designs 1 to ${count(designs)}; 0 is the reference`;
+  const range =
+    designs === 0 ? 'Nothing varies in this study: it has design 0 only' : `The search of this study has designs 1 to ${count(designs)}; 0 is the reference`;
   complain(`there is no design ${count(number)}. ${range}.`);
   return false;
 }

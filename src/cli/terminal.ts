@@ -35,9 +35,9 @@ export function movingAllowed(): boolean {
   return process.stderr.isTTY === true && process.env['TERM'] !== 'dumb';
 }
 
-/** Columns of the terminal; 100 elsewhere. */
+/** Columns of the terminal; 80 where it does not say. */
 export function terminalWidth(): number {
-  return Math.max(40, process.stderr.columns ?? 100);
+  return process.stderr.columns || 80;
 }
 
 /** A reader that closed its end (`| head`) is no failure: what it does not want is dropped in silence. Other errors of the streams stay errors. */

@@ -16,8 +16,13 @@ describe('progress', () => {
     expect(progressText({ ...halfway, done: 60_000 }, 20_000)).toContain('20 s in all');
   });
 
-  it('fills the bar as far as the run is and never exceeds the line', () => {
-    expect(progressLine(halfway, 10_000, 200)).toMatch(/^█{10}░{10} {2}50 % /);
+  it('fills the bar as far as the run is, with rate, time left, feasible share and front size in 80 columns', () => {
+    expect(progressLine({ done: 5_000_000, total: 10_000_000, feasible: 123_456, front: 12_345 }, 7_000_000, 80)).toBe(
+      '█████░░░░░  50 %  714/s, 1 h 57 min left, 2.5 % feasible, 12\u202f345 on the front',
+    );
+  });
+
+  it('never exceeds the width of the terminal', () => {
     expect(progressLine(halfway, 10_000, 50)).toHaveLength(49);
   });
 });
