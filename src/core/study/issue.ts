@@ -4,6 +4,8 @@ import { nearestName } from '../units/nearest-name.ts';
 /** One issue. Lines and columns count from 1; a file without lines has its issue at 1:1 with an empty source line. */
 export interface Issue {
   readonly severity: 'error' | 'warning';
+  /** Name of the rule that a warning comes from; empty for mistakes. */
+  readonly rule: string;
   readonly file: string;
   readonly line: number;
   readonly column: number;
@@ -24,6 +26,8 @@ export interface IssueWords {
   readonly expected: string;
   readonly found: string;
   readonly hint?: string;
+  /** Of a warning. */
+  readonly rule?: string;
 }
 
 /** Beyond this many, further issues change nothing but that there are more. */
@@ -109,7 +113,8 @@ export class IssueList {
     const from = shown.length <= SOURCE_WIDTH ? 0 : Math.max(0, Math.min(column - 1 - SOURCE_WIDTH / 2, shown.length - SOURCE_WIDTH));
     const source = printable(shown.slice(from, from + SOURCE_WIDTH));
     const place = { severity, file: this.file, line, column, source, caret: column - 1 - from, path: printable(clip(path, 120)) };
-    this.issues.push({ ...place, expected: printable(words.expected), found: printable(clip(words.found, 200)), hint: printable(words.hint ?? '') });
+    const { rule = '', expected, found, hint = '' } = words;
+    this.issues.push({ ...place, rule, expected: printable(expected), found: printable(clip(found, 200)), hint: printable(hint) });
   }
 }
 
@@ -145,4 +150,19 @@ export function formatIssues(issues: readonly Issue[]): string {
   const left = issues.length - printed.length;
   const more = issues.length >= MOST_KEPT ? `and at least ${left} more` : `and ${left} more`;
   return [...printed, ...(left > 0 ? [more] : [])].join('\n\n');
+}
+
+/** The words of a warning in one or two sentences: what was found, what is usual, what to do. Without its place. */
+export function warningWords({ expected, found, hint }: Pick<Issue, 'expected' | 'found' | 'hint'>): string {
+  return `${found}; expected ${expected}. ${hint}`.trim();
+}
+
+/** Where a warning stands: `line 12, vary.gearing.ratio`, with the file where it is not the study's own. */
+export function warningPlace({ file, line, path }: Pick<Issue, 'file' | 'line' | 'path'>, studyFile: string): string {
+  return `${file === studyFile ? '' : `${file}, `}line ${line}${path === '' ? '' : `, ${path}`}`;
+}
+
+/** An issue for programs. */
+export function issueRecord({ rule, file, line, column, path, expected, found, hint }: Issue): Record<string, string | number> {
+  return { ...(rule === '' ? {} : { rule }), file, line, column, path, expected, found, whatToDo: hint };
 }
