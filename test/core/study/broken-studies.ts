@@ -172,7 +172,6 @@ export const brokenStudies: readonly BrokenStudy[] = [
   broken('a metric minimised and maximised', [['maximise: []', 'maximise: [driveUnit.cost]']], ['57:14', 'driveUnit.cost', 'line 56']),
   broken('a resolution of something that is no objective', [['driveUnit.cost: 25 }', 'driveUnit.mass: 2 kg }']], ['58:77', 'driveUnit.mass', 'an objective']),
   broken('another spelling of minimise', [['minimise:', 'minimize:']], ['56:3', 'Did you mean minimise?']),
-  broken('options', [['search: { method: grid }', 'options: { motor on offer: [] }']], ['48:1', 'not available yet']),
   broken('a method that is to come', [['search: { method: grid }', 'search: { method: sobol, designs: 500 }']], ['48:19', 'sobol, which is not available yet']),
   broken('a tab as indentation', [['  kerbMass', '\tkerbMass']], ['4:1', 'Tabs are not allowed', 'spaces']),
   broken('a bracket that stays open', [['efficiency: 97 %\n', 'efficiency: [97 %\n']], ['24:3', 'close every bracket']),
