@@ -1,9 +1,9 @@
 /** A design's sheet for people: inputs, trials with what limits them, cycles side by side, requirements with their margins. */
 import { neededDecimals, unitWord } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
+import type { ComputedDesign, DesignMetric, Setting } from '../core/search/design-bench.ts';
 import { cautionLine } from '../core/study/cautions.ts';
-import type { Trial } from '../core/study/study.ts';
-import type { DesignSheet, SheetMetric } from './design-sheet.ts';
+import type { Study, Trial } from '../core/study/study.ts';
 import { count, figureCells } from './figure-text.ts';
 import { boundText, meets, valueBesideLimit, verdictText } from './requirement-text.ts';
 import { columns } from './table.ts';
@@ -11,6 +11,12 @@ import { ink } from './terminal.ts';
 import { limitText, trialConditions } from './trial-text.ts';
 
 type Align = 'left' | 'right';
+
+/** A computed design with the study it belongs to and what was set for it. */
+export interface DesignSheet extends ComputedDesign {
+  readonly study: Study;
+  readonly settings: readonly Setting[];
+}
 
 /** Cycles that stand side by side. */
 const cyclesAbreast = 5;
@@ -49,8 +55,11 @@ function whichDesign(sheet: DesignSheet): string {
 function inputRows(sheet: DesignSheet): string[][] {
   if (sheet.study.axes.length === 0 && sheet.settings.length === 0) return [];
   return sheet.inputs.map((input) => {
-    const decimals = neededDecimals(input.value, input, sheet.study);
-    return [visibleText(input.name), ...figureCells(input.value, { quantity: input.quantity, decimals }, sheet.study)];
+    if (input.row === null) return [visibleText(input.name), visibleText(input.option ?? "the study's own"), ''];
+    const { quantity } = input.row;
+    // Exactly as far as a person would type it again.
+    const decimals = neededDecimals(input.value, { quantity, decimals: input.row.decimals + 3 }, sheet.study);
+    return [visibleText(input.name), ...figureCells(input.value, { quantity, decimals }, sheet.study)];
   });
 }
 
@@ -67,16 +76,16 @@ function fullPedalBlock(sheet: DesignSheet): string {
   return [ink('bold', 'Full-pedal trials'), ...body].join('\n');
 }
 
-function resultsOf(sheet: DesignSheet, trial: Trial): SheetMetric[] {
+function resultsOf(sheet: DesignSheet, trial: Trial): DesignMetric[] {
   return sheet.metrics.filter(({ column }) => column.trial === trial.name);
 }
 
-function resultRow(sheet: DesignSheet, metric: SheetMetric): string[] {
+function resultRow(sheet: DesignSheet, metric: DesignMetric): string[] {
   return [metric.column.row.label, ...metricCells(sheet, metric), limitText(metric.limit, !Number.isNaN(metric.value))];
 }
 
 /** Figure and unit; one that misses a requirement in decimals enough not to look as if it met it. */
-function metricCells({ study }: DesignSheet, { column, value }: SheetMetric): [string, string] {
+function metricCells({ study }: DesignSheet, { column, value }: DesignMetric): [string, string] {
   const missed = study.requirements.find((requirement) => requirement.metric === column.name && !meets(value, requirement));
   const [figure, unit] = figureCells(value, column.row, study);
   if (missed === undefined || Number.isNaN(value)) return [figure, unit];
@@ -88,7 +97,7 @@ function metricCells({ study }: DesignSheet, { column, value }: SheetMetric): [s
 function cycleBlock(sheet: DesignSheet, cycles: readonly Trial[]): string {
   const results = cycles.map((trial) => resultsOf(sheet, trial));
   const rows = (results[0] ?? []).flatMap(({ column }, at) => {
-    const metrics = results.map((metricsOfOne) => metricsOfOne[at] as SheetMetric);
+    const metrics = results.map((metricsOfOne) => metricsOfOne[at] as DesignMetric);
     if (metrics.every((metric) => Number.isNaN(metric.value) && metric.limit === '')) return [];
     const label = column.row.name.startsWith('energy.') ? `  to ${column.row.label}` : column.row.label;
     return [[label, unitWord(column.row.quantity, sheet.study), ...metrics.map((metric) => cycleCell(sheet, metric))]];
@@ -99,7 +108,7 @@ function cycleBlock(sheet: DesignSheet, cycles: readonly Trial[]): string {
   return [ink('bold', 'Cycles'), ...conditions, columns([head, ...rows], { indent: 4, align })].join('\n');
 }
 
-function cycleCell(sheet: DesignSheet, metric: SheetMetric): string {
+function cycleCell(sheet: DesignSheet, metric: DesignMetric): string {
   return Number.isNaN(metric.value) && metric.limit !== '' ? metric.limit : metricCells(sheet, metric)[0];
 }
 
@@ -113,7 +122,7 @@ function requirementRows(sheet: DesignSheet): string[][] {
   const { study } = sheet;
   const byName = new Map(sheet.metrics.map((metric) => [metric.column.name, metric]));
   return study.requirements.map((requirement) => {
-    const { column, value } = byName.get(requirement.metric) as SheetMetric;
+    const { column, value } = byName.get(requirement.metric) as DesignMetric;
     const verdict = verdictText(value, requirement, column.row, study);
     const coloured = meets(value, requirement) ? ink('green', verdict) : ink('red', verdict);
     return [requirement.metric, boundText(requirement, column.row, study), valueBesideLimit(value, requirement, column.row, study), coloured];

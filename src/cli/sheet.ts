@@ -1,9 +1,8 @@
 /** `layshaft sheet`: one design, every trial. */
-import { createSearch } from '../core/search/search.ts';
+import { type ComputedDesign, createBench, machineSheet, type Setting } from '../core/search/design-bench.ts';
 import { readSetting } from '../core/study/read-setting.ts';
 import type { Study } from '../core/study/study.ts';
 import { type CommandRow, type ExitStatus, exitStatus, jsonOption, type OptionValues, wholeNumber } from './command.ts';
-import { designSheet, type Setting, sheetJson } from './design-sheet.ts';
 import { count } from './figure-text.ts';
 import { openStudy, warningSentence } from './open-study.ts';
 import { sheetText } from './sheet-text.ts';
@@ -45,16 +44,11 @@ async function printSheet(file: string, options: OptionValues): Promise<ExitStat
   const settled = applySettings(opened.study, (options['set'] ?? []) as readonly string[]);
   if (settled === null) return exitStatus.wrong;
   const number = (options['design'] ?? 0) as number;
-  if (!hasDesign(settled.study, number)) return exitStatus.wrong;
-  const sheet = designSheet(settled.study, number, settled.settings);
-  if (options['json'] === true) giveJson(sheetJson(sheet));
-  else
-    say(
-      sheetText(
-        sheet,
-        opened.warnings.map((warning) => warningSentence(warning, opened)),
-      ),
-    );
+  const design = computeDesign(settled.study, number, settled.settings);
+  if (design === null) return exitStatus.wrong;
+  const warnings = opened.warnings.map((warning) => warningSentence(warning, opened));
+  if (options['json'] === true) giveJson(machineSheet(design));
+  else say(sheetText({ ...design, ...settled }, warnings));
   return exitStatus.done;
 }
 
@@ -75,11 +69,15 @@ function applySettings(study: Study, texts: readonly string[]): { study: Study; 
   return problems.length > 0 ? null : { study: settled, settings: [...settings.values()] };
 }
 
-function hasDesign(study: Study, number: number): boolean {
-  const designs = study.axes.length === 0 ? 0 : createSearch(study).count;
-  if (number <= designs) return true;
+/** The design of a number; null after saying which numbers there are. */
+function computeDesign(study: Study, number: number, settings: readonly Setting[]): ComputedDesign | null {
+  const bench = createBench(study);
+  const design = bench.compute(number, settings);
+  if (design !== null) return design;
   const range =
-    designs === 0 ? 'Nothing varies in this study: it has design 0 only' : `The search of this study has designs 1 to ${count(designs)}; 0 is the reference`;
+    bench.last === 0
+      ? 'Nothing varies in this study: it has design 0 only'
+      : `The search of this study has designs 1 to ${count(bench.last)}; 0 is the reference`;
   complain(`there is no design ${count(number)}. ${range}.`);
-  return false;
+  return null;
 }

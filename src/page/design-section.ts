@@ -1,11 +1,10 @@
 /** One design in full: every metric of every trial with what limits it, as the page computed it. */
 import { capitalised, figureText, type Measured, neededDecimals } from '../charts/figure-words.ts';
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
+import type { ComputedDesign, DesignMetric } from '../core/search/design-bench.ts';
 import { type MetricColumn, trialMetrics } from '../core/study/metrics.ts';
-import { findParameter } from '../core/study/parameters.ts';
 import type { Trial } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
-import type { ComputedDesign } from './design-bench.ts';
 import { html, type Markup, type Piece } from './markup.ts';
 import { trialSettings } from './method-section.ts';
 import { boundWords, meets, metricColumn, valueAgainst } from './wording.ts';
@@ -23,12 +22,12 @@ export function designInFull(design: ComputedDesign, name: string, data: ReportD
 }
 
 function inputRows(design: ComputedDesign, { study }: ReportData): Piece[] {
-  return design.inputs.flatMap(({ name, value }) => {
-    const row = findParameter(name);
-    if (row === undefined) return [];
+  return design.inputs.map((input) => {
+    const { name, row } = input;
+    if (row === null) return html`<div><dt>${name}</dt><dd>${input.option ?? "the study's own"}</dd></div>`;
     const label = name.startsWith('trials.') ? name.slice('trials.'.length) : row.label;
-    const decimals = neededDecimals(value, row, study);
-    return [html`<div><dt>${label}</dt><dd>${figureText(value, { quantity: row.quantity, decimals }, study)}</dd></div>`];
+    const decimals = neededDecimals(input.value, row, study);
+    return html`<div><dt>${label}</dt><dd>${figureText(input.value, { quantity: row.quantity, decimals }, study)}</dd></div>`;
   });
 }
 
@@ -37,11 +36,11 @@ function metricList(design: ComputedDesign, trial: Trial | null, data: ReportDat
   const own = design.metrics.filter(({ column, value }) => column.trial === (trial?.name ?? null) && isOfUse(column, value, data));
   const sinks = own.filter(({ column }) => column.row.name.startsWith('energy.'));
   const others = own.filter((metric) => !sinks.includes(metric));
-  const list = (metrics: ComputedDesign['metrics']) => html`<dl>${metrics.map((metric) => metricRow(metric, trial, data))}</dl>`;
+  const list = (metrics: readonly DesignMetric[]) => html`<dl>${metrics.map((metric) => metricRow(metric, trial, data))}</dl>`;
   return sinks.length === 0 ? list(others) : html`${list(others)}<p class="sinks">Where the battery energy goes</p>${list(sinks)}`;
 }
 
-function metricRow(metric: ComputedDesign['metrics'][number], trial: Trial | null, data: ReportData): Markup {
+function metricRow(metric: DesignMetric, trial: Trial | null, data: ReportData): Markup {
   const { column, value } = metric;
   const asked = data.requirements.filter((requirement) => requirement.metric === column.name);
   const notes = [limitNote(metric, trial), ...asked.map((requirement) => verdict(value, requirement, data))];
@@ -59,7 +58,7 @@ function shownValue(value: number, row: Measured, asked: RequirementCount | unde
 }
 
 /** What limits a result, or why there is none. */
-function limitNote({ value, limit }: ComputedDesign['metrics'][number], trial: Trial | null): Markup | null {
+function limitNote({ value, limit }: DesignMetric, trial: Trial | null): Markup | null {
   const exists = !Number.isNaN(value);
   if (limit === '') return exists || trial === null || trial.kind === 'cycle' ? null : html`<small>not reached</small>`;
   return html`<small>${exists && limit !== 'beyond 45°' ? `limited by ${limit}` : limit}</small>`;

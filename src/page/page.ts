@@ -1,8 +1,9 @@
 /** Brings the report to life: reads the data it carries, draws the chart, sorts the table, and computes designs with the core. */
 import type { ReportData } from '../charts/report-data.ts';
+import { createBench, type MachineSheet, machineSheet } from '../core/search/design-bench.ts';
+import { readStudyJson } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { bindChart, standingWords } from './chart-binding.ts';
-import { createBench, type MachineSheet, machineSheet } from './design-bench.ts';
 import { designInFull } from './design-section.ts';
 import { firstOrder, frontTable } from './front-section.ts';
 import { createState, type PageState } from './page-state.ts';
@@ -22,7 +23,8 @@ function element<Kind extends HTMLElement = HTMLElement>(id: string): Kind {
 }
 
 function start(): void {
-  const data = JSON.parse(element('report-data').textContent ?? '') as ReportData;
+  const carried = JSON.parse(element('report-data').textContent ?? '') as ReportData;
+  const data: ReportData = { ...carried, study: readStudyJson(carried.study) };
   const state = createState({ ...firstAxes(data), wide: false, pinned: null });
   for (const hidden of document.querySelectorAll<HTMLElement>('#chart-controls, #choose-design, [data-design][hidden]')) hidden.hidden = false;
   bindControls(state);
@@ -65,7 +67,7 @@ function bindDesign(data: ReportData, state: PageState): void {
   });
   const evaluateDesign = (number: number): MachineSheet | null => {
     const design = bench.compute(number);
-    return design === null ? null : machineSheet(design, data.study);
+    return design === null ? null : machineSheet(design);
   };
   Object.defineProperty(window, 'layshaft', { value: Object.freeze({ evaluateDesign }) });
 }

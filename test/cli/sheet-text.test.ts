@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import { type DesignSheet, sheetJson } from '../../src/cli/design-sheet.ts';
-import { sheetText } from '../../src/cli/sheet-text.ts';
+import { type DesignSheet, sheetText } from '../../src/cli/sheet-text.ts';
 import type { LimitWord } from '../../src/core/evaluate/evaluator.ts';
 import { metricColumns } from '../../src/core/study/metric-columns.ts';
+import { findParameter, type ParameterRow } from '../../src/core/study/parameters.ts';
 import type { Study, Trial } from '../../src/core/study/study.ts';
 
 const trace = { name: 'town', timesS: [0, 1], speedsMPerS: [0, 1], notes: [] };
@@ -40,7 +40,8 @@ function sheetWith(results: Readonly<Record<string, [number, LimitWord?]>>, of: 
     const [value, limit] = results[column.name] ?? [Number.NaN];
     return { column, value, limit: limit ?? ('' as const) };
   });
-  return { study: of, number: 0, settings: [], inputs: [{ name: 'gearing.ratio', value: 9.5, quantity: 'number', decimals: 2 }], metrics };
+  const inputs = [{ name: 'gearing.ratio', row: findParameter('gearing.ratio') as ParameterRow, value: 9.5 }];
+  return { study: of, number: 0, settings: [], inputs, metrics };
 }
 
 const usual = {
@@ -109,18 +110,5 @@ describe('a sheet for people', () => {
     const text = plain(sheetText(sheetWith(usual, { ...study, report: { units: 'US' } }), []));
     expect(text).toContain('from 0 mph, to 49.7 mph');
     expect(text).toMatch(/battery energy +Wh\/mi +291\.6$/m);
-  });
-});
-
-describe('a sheet for programs', () => {
-  it('keys figures with their units, gives null for what does not exist, and limits only where there is one', () => {
-    const json = sheetJson(sheetWith(usual));
-    expect(json.inputs).toEqual({ 'gearing.ratio': 9.5 });
-    expect(json.metrics['sprint.time_s']).toBe(9.5304);
-    expect(json.metrics['sprint.distance_m']).toBe(123.04);
-    expect(json.metrics['ramp.grade_pct']).toBeCloseTo(19.996, 10);
-    expect(json.metrics['stops.outsideMap_pct']).toBeNull();
-    expect(json.metrics['driveUnit.cost']).toBe(1984.2);
-    expect(json.limits).toEqual({ 'ramp.grade_pct': 'adhesion' });
   });
 });

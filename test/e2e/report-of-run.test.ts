@@ -4,7 +4,7 @@ import { pathToFileURL } from 'node:url';
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ReportData } from '../../src/charts/report-data.ts';
-import type { MachineSheet } from '../../src/page/design-bench.ts';
+import type { MachineSheet } from '../../src/core/search/design-bench.ts';
 import { openBrowser } from '../browser.ts';
 import { emptyFolder, layshaft } from './built-program.ts';
 import { openReport } from './report-page.ts';

@@ -2,7 +2,7 @@ import axe from 'axe-core';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ReportData } from '../../src/charts/report-data.ts';
-import { createBench, type MachineSheet, machineSheet } from '../../src/page/design-bench.ts';
+import { createBench, type MachineSheet, machineSheet } from '../../src/core/search/design-bench.ts';
 import { openBrowser } from '../browser.ts';
 import { inventedReport } from '../charts/invented-report.ts';
 import { inventedStudy } from '../charts/invented-study.ts';
@@ -140,7 +140,7 @@ describe('the report in a browser', () => {
     const here = numbers.map((number): MachineSheet => {
       const design = bench.compute(number);
       if (design === null) throw new Error(`no design ${number}`);
-      return machineSheet(design, data.study);
+      return machineSheet(design);
     });
     expect(inPage).toStrictEqual(here);
     expect(await page.evaluate((number) => window.layshaft.evaluateDesign(number), bench.last + 1)).toBeNull();

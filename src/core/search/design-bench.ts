@@ -1,0 +1,112 @@
+/** One design in full, computed on the spot: what the command line's sheet and the report's page show, to the same bits. */
+import { compileStudy } from '../evaluate/compile.ts';
+import { type LimitWord, limitWords } from '../evaluate/evaluator.ts';
+import { machineValue } from '../evaluate/result-columns.ts';
+import { type MetricColumn, machineKey } from '../study/metrics.ts';
+import { findParameter, type ParameterRow } from '../study/parameters.ts';
+import type { Study } from '../study/study.ts';
+import { createSearch } from './search.ts';
+
+/** A figure set for one computation, SI. */
+export interface Setting {
+  readonly name: string;
+  readonly value: number;
+}
+
+/** A number of the design (SI), or the choice among named options; the reference design makes none (null). */
+export type DesignInput =
+  | { readonly name: string; readonly row: ParameterRow; readonly value: number }
+  | { readonly name: string; readonly row: null; readonly option: string | null };
+
+/** One metric, SI; NaN where it does not exist. `limit` says what limits it or why there is none; empty where nothing is to say. */
+export interface DesignMetric {
+  readonly column: MetricColumn;
+  readonly value: number;
+  readonly limit: LimitWord;
+}
+
+/** A design and everything it is judged by. */
+export interface ComputedDesign {
+  readonly number: number;
+  /** Options chosen, varied and set numbers; every number of a study that varies none where none is set. */
+  readonly inputs: readonly DesignInput[];
+  readonly metrics: readonly DesignMetric[];
+}
+
+/** The same as machine output: keys with units, null where there is no value, limits only where there is one. */
+export interface MachineSheet {
+  readonly inputs: Readonly<Record<string, number | string | null>>;
+  readonly metrics: Readonly<Record<string, number | null>>;
+  readonly limits: Readonly<Record<string, string>>;
+}
+
+/** Computes designs of one study. */
+export interface DesignBench {
+  /** Numbers from 0, the reference, to this one exist. */
+  readonly last: number;
+  /**
+   * Null where there is no design of that number. Settings are figures that the study holds already; given here too, they go
+   * before the design's own and are told among the inputs.
+   */
+  compute(number: number, settings?: readonly Setting[]): ComputedDesign | null;
+}
+
+/** Compiles the study once; each design afterwards takes milliseconds. */
+export function createBench(study: Study): DesignBench {
+  const evaluator = compileStudy(study);
+  const search = createSearch(study);
+  const points = new Int32Array(study.axes.length);
+  const metrics = new Float64Array(evaluator.metrics.length);
+  const limits = new Uint8Array(evaluator.metrics.length);
+
+  function inputsOf(row: Float64Array, settings: readonly Setting[]): DesignInput[] {
+    const varied = study.axes.flatMap(({ name, sets, labels }, axis): DesignInput[] => [
+      ...(labels === null ? [] : [{ name, row: null, option: labels[points[axis] as number] ?? null }]),
+      ...sets.flatMap((set) => numberInput(set, row[evaluator.inputs.indexOf(set)] as number)),
+    ]);
+    const set = settings.filter(({ name }) => !evaluator.inputs.includes(name)).flatMap(({ name, value }) => numberInput(name, value));
+    if (varied.length + set.length > 0) return [...varied, ...set];
+    return Object.entries(study.values).flatMap(([name, value]) => numberInput(name, value));
+  }
+
+  return {
+    last: search.count,
+    compute(number, settings = []) {
+      if (!Number.isInteger(number) || number < 0 || number > search.count) return null;
+      const row = Float64Array.from(evaluator.reference);
+      points.fill(-1);
+      if (number > 0) {
+        search.inputs(number, row, 0);
+        search.points(number, points);
+      }
+      for (const { name, value } of settings) if (evaluator.inputs.includes(name)) row[evaluator.inputs.indexOf(name)] = value;
+      evaluator.evaluate(row, 0, metrics, 0, limits);
+      return {
+        number,
+        inputs: inputsOf(row, settings),
+        metrics: evaluator.metrics.map((column, at) => ({ column, value: metrics[at] as number, limit: limitWords[limits[at] as number] as LimitWord })),
+      };
+    },
+  };
+}
+
+/** Nothing for a number that plays no part in the design, and for what is no number at all (a measured curve or map). */
+function numberInput(name: string, value: number): DesignInput[] {
+  const row = findParameter(name);
+  return row === undefined || Number.isNaN(value) ? [] : [{ name, row, value }];
+}
+
+/** A computed design under the keys of machine output. */
+export function machineSheet({ inputs, metrics }: ComputedDesign): MachineSheet {
+  return {
+    inputs: Object.fromEntries(inputs.map((input) => (input.row === null ? [input.name, input.option] : machineNumber(input.row, input.name, input.value)))),
+    metrics: Object.fromEntries(
+      metrics.map(({ column, value }) => [column.key, machineValue({ role: 'metric', quantity: column.row.quantity, labels: null }, value) as number | null]),
+    ),
+    limits: Object.fromEntries(metrics.filter(({ limit }) => limit !== '').map(({ column, limit }) => [column.key, limit])),
+  };
+}
+
+function machineNumber({ quantity }: ParameterRow, name: string, value: number): [string, number | string | null] {
+  return [machineKey(name, quantity), machineValue({ role: 'input', quantity, labels: null }, value)];
+}
