@@ -45,7 +45,7 @@ describe('signChange', () => {
       (x) => (x < 0.9 ? -rough(x) : 1),
       (x) => (x < 0.9 ? -1 : rough(x)),
       (x) => (x < 1 - 1e-15 ? -rough(x) : rough(x)),
-      (x) => Math.tan(3.14 * (x - 0.4)),
+      (x) => Math.tan(3.14 * (x - 0.5)),
     ];
     for (const f of functions) {
       let looks = 0;
