@@ -23,6 +23,8 @@ export interface RuleCheck {
   readonly base: ReadonlyMap<string, number> | null;
   /** Where a name stands, as messages say it: a name in a trial's `with` has that in front. */
   readonly pathOf: (name: string) => string;
+  /** Set for the study that an option makes: where what is missing is told. */
+  readonly option?: { readonly at: number; readonly path: string };
 }
 
 /** Everything missing, said twice, incomplete or out of order. */
@@ -39,11 +41,11 @@ function concerns({ only }: RuleCheck, names: readonly string[]): boolean {
 
 /** One message per alternative, where the later of the two ways begins. */
 function checkAlternative({ holds, rulesOut, inFile, why }: Alternative, check: RuleCheck): void {
-  const { stated, issues, only, pathOf } = check;
+  const { stated, issues, only, pathOf, option } = check;
   const under = (patterns: readonly string[]) => [...stated.stands].filter(([name]) => patterns.some((pattern) => matches(pattern, name)));
   const held = under(holds)[0];
   if (held === undefined) return;
-  const out = under(only === null ? [...rulesOut, ...(inFile ?? [])] : rulesOut).filter(([name]) => concerns(check, [held[0], name]));
+  const out = under(only === null && option === undefined ? [...rulesOut, ...(inFile ?? [])] : rulesOut).filter(([name]) => concerns(check, [held[0], name]));
   const first = out[0];
   if (first === undefined) return;
   const names = out.map(([name]) => nameInFile(name));
@@ -76,13 +78,14 @@ function checkGroups(check: RuleCheck): void {
 }
 
 function checkNeeds(check: RuleCheck): void {
-  const { stated, issues, only } = check;
+  const { stated, issues, only, option } = check;
   for (const { names, when, hint } of needs) {
     const asked = when === undefined ? only === null : [...stated.stands.keys()].some((name) => name === when || name.startsWith(`${when}.`));
     if (!asked || names.some((name) => stated.stands.has(name) || stated.tried.has(name))) continue;
     if (only !== null && ![...only].some((name) => name === when || name.startsWith(`${when}.`))) continue;
     const path = names[0] as string;
-    issues.error(nearestSection(path, stated), path, { expected: names.join(' or '), found: names.length > 1 ? 'neither' : 'nothing', hint });
+    const place = option ?? { at: nearestSection(path, stated), path };
+    issues.error(place.at, place.path, { expected: names.join(' or '), found: names.length > 1 ? 'neither' : 'nothing', hint });
   }
 }
 
@@ -119,5 +122,5 @@ export function asWritten({ written, unit }: Pick<Figure, 'written' | 'unit'>): 
 }
 
 function last(name: string): string {
-  return clip(/[12]$/u.test(name) ? name.split('.').slice(-2).join('.') : (name.split('.').pop() as string));
+  return clip(/\.[12]$/u.test(name) ? name.split('.').slice(-2).join('.') : (name.split('.').pop() as string));
 }

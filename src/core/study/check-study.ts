@@ -1,18 +1,21 @@
 /** Study text -> a checked study in SI, or everything that is wrong with it, all at once. */
+import { checkAxes, placedOptions } from './check-axes.ts';
 import { checkRules } from './check-rules.ts';
 import { checkTrialRules } from './check-trial-rules.ts';
 import { type Issue, IssueList } from './issue.ts';
 import { studyLayout } from './layout.ts';
 import { type Located, type LocatedMap, readLocated } from './located-text.ts';
 import { metricColumns } from './metric-columns.ts';
+import { namesOf, type OptionAxes, type OptionBase, optionAxes } from './option-axes.ts';
 import { readRequirements, readTradeOff } from './read-aims.ts';
 import { readAxes, readSearch } from './read-axes.ts';
-import { lossMapOf, readStudyFullLoad, readStudyMap } from './read-measured.ts';
+import { createMotorFiles, lossMapOf, readStudyFullLoad, readStudyMap } from './read-measured.ts';
+import { type OptionList, readOptions } from './read-options.ts';
 import { type Found, nothingFound, readPlaces } from './read-places.ts';
 import { readTrials, type StudySources, type TrialFound } from './read-trials.ts';
 import { referenceValues } from './reference-values.ts';
-import type { Study, Trial } from './study.ts';
-import { rollingRadiusM } from './tyre-size.ts';
+import type { Axis, Study, Trial } from './study.ts';
+import { checkTyre } from './tyre-size.ts';
 import { addWarnings } from './warnings.ts';
 
 export type { StudySources } from './read-trials.ts';
@@ -36,29 +39,21 @@ export function checkStudy(text: string, fileName: string, sources: StudySources
 function readStudy(root: LocatedMap, fileName: string, sources: StudySources, issues: IssueList): Study | null {
   const found = nothingFound();
   readPlaces(root, studyLayout, { issues, found, prefix: '' });
-  refuseOptions(found, issues);
-  checkTyre(found, issues);
-  const fullLoad = readStudyFullLoad(found, sources, issues);
-  const map = readStudyMap(found, sources, issues);
+  checkTyre(found, 'vehicle.tyre', issues);
+  const files = createMotorFiles(sources);
+  const fullLoad = readStudyFullLoad(found, files, issues);
+  const map = readStudyMap(found, files, issues);
   const trialsPart = found.parts.get('trials');
   const trials = trialsPart === undefined ? [] : readTrials(trialsPart.value, sources, issues);
+  const broken = brokenTrials(trialsPart?.value, trials);
   const varied = new Set(variedNames(found));
+  const before = issues.errorCount;
   checkRules({ stated: found, issues, varied, only: null, base: null, pathOf: (name) => name });
   for (const trial of trials) checkTrialRules(trial, { base: found, varied, issues, pathOf: (name) => name });
+  const sound = issues.errorCount === before;
   const values = referenceValues({ found, trials, fullLoad });
-  const stands = new Map([...found.stands, ...trials.flatMap((trial) => [...trial.found.stands])]);
-  const aims = { issues, trials, columns: metricColumns({ trials }), broken: brokenTrials(trialsPart?.value, trials), stands: found.stands };
-  const vary = found.parts.get('vary');
-  const axes =
-    vary === undefined
-      ? []
-      : readAxes(vary.value, {
-          issues,
-          values,
-          stands,
-          tried: new Set([...found.tried, ...trials.flatMap((trial) => [...trial.found.tried])]),
-          broken: aims.broken,
-        });
+  const { axes, options, known } = readAllAxes({ found, trials, fullLoad, values, files, issues, varied, sound }, broken, sources);
+  const aims = { issues, trials, columns: metricColumns({ trials }), broken, stands: known };
   const requirements = readRequirements(found.parts.get('requirements')?.value, aims);
   const tradeOff = readTradeOff(found.parts.get('tradeOff')?.value, aims);
   const search = readSearch(found.parts.get('search')?.value, issues);
@@ -73,8 +68,8 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
     values,
     fullLoad,
     lossMap: map === null ? null : lossMapOf(map, values),
-    optionCurves: [],
-    optionMaps: [],
+    optionCurves: options.curves,
+    optionMaps: options.maps,
     trials: trials.map(trialOf),
     axes,
     search,
@@ -82,33 +77,30 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
     ...tradeOff,
     report: { units: (texts('report.units') ?? 'SI') as Study['report']['units'] },
   };
-  addWarnings({ study, found, trials, bestMapEfficiency: map?.bestEfficiency ?? Number.NaN, issues });
+  const bestMapEfficiency = Math.max(map?.bestEfficiency || 0, options.bestMapEfficiency);
+  addWarnings({ study, found, trials, bestMapEfficiency, issues });
   return study;
 }
 
-function refuseOptions(found: Found, issues: IssueList): void {
-  const options = found.stands.get('options');
-  if (options === undefined) return;
-  issues.error(options, 'options', {
-    expected: 'numbers that vary, under vary',
-    found: 'options, which are not available yet',
-    hint: 'Vary the numbers one by one with oneOf for now.',
-  });
+/** The axes of the search in the order of the file, what options bring, and every name that the study or an option states. */
+function readAllAxes(base: OptionBase, broken: ReadonlySet<string>, sources: StudySources): { axes: Axis[]; options: OptionAxes; known: Map<string, number> } {
+  const { found, trials, values, issues } = base;
+  const [vary, optionsPart] = [found.parts.get('vary'), found.parts.get('options')];
+  const lists = optionsPart === undefined ? [] : readOptions(optionsPart.value, { issues, trials, broken, sources });
+  const options = optionAxes(lists, base);
+  const stands = new Map([...found.stands, ...trials.flatMap((trial) => [...trial.found.stands])]);
+  const tried = new Set([...found.tried, ...trials.flatMap((trial) => [...trial.found.tried])]);
+  const ranges = vary === undefined ? [] : readAxes(vary.value, { issues, values, stands, tried, broken });
+  const placed = [...ranges, ...options.axes.map((axis, index) => placedOptions(axis, lists[index] as OptionList))].sort((a, b) => a.at - b.at);
+  checkAxes(placed, issues);
+  const known = new Map([...lists.flatMap((list) => namesOf(list).map((name) => [name, list.at] as const)), ...found.stands]);
+  return { axes: placed.map(({ axis }) => axis), options, known };
 }
 
-function checkTyre({ texts }: Found, issues: IssueList): void {
-  const tyre = texts.get('vehicle.tyre');
-  if (tyre === undefined || rollingRadiusM(tyre.text) !== null) return;
-  issues.error(tyre.at, 'vehicle.tyre', {
-    expected: 'the size of a radial tyre, such as 215/65 R16',
-    found: tyre.text,
-    hint: 'Write width in mm / aspect ratio in % R rim in inches; or give wheelRadius instead.',
-  });
-}
-
+/** Every name under `vary`, the two of a pair by their own. */
 function variedNames(found: Found): string[] {
   const vary = found.parts.get('vary')?.value;
-  return vary?.kind === 'map' ? vary.entries.map(({ key }) => key) : [];
+  return vary?.kind === 'map' ? vary.entries.flatMap(({ key }) => [key, `${key}.1`, `${key}.2`]) : [];
 }
 
 /** Names of trials that stand in the file but could not be read. */
@@ -125,9 +117,9 @@ function trialOf({ name, kind, rating, with: figures, trace, road }: TrialFound)
 export function whatRunNeeds(study: Pick<Study, 'axes' | 'objectives'>): { readonly expected: string; readonly found: string; readonly hint: string } | null {
   if (study.axes.length === 0) {
     return {
-      expected: 'vary, with at least one number',
+      expected: 'vary, with at least one number, or options',
       found: 'a study in which nothing varies',
-      hint: 'Add vary to search designs; layshaft sheet evaluates the one design there is.',
+      hint: 'Add vary or options to search designs; layshaft sheet evaluates the one design there is.',
     };
   }
   if (study.objectives.length === 0) {

@@ -1,17 +1,16 @@
 /** Reads `vary`: ranges and lists of a number to the points of an axis; and `search`. */
 import { fromSi, toSi, type Unit } from '../units/units.ts';
+import { type PlacedAxis, placedRange } from './check-axes.ts';
 import { asWritten } from './check-rules.ts';
 import { clip, type IssueList } from './issue.ts';
 import type { Located, LocatedEntry, LocatedMap } from './located-text.ts';
 import { findParameter, type ParameterRow } from './parameters.ts';
 import { type Figure, readFigure } from './read-places.ts';
-import { ruledOutBy } from './rules.ts';
+import { orders, ruledOutBy } from './rules.ts';
 import type { Axis, Search } from './study.ts';
 
 /** More points than a person would list on one axis. */
 const MOST_POINTS = 100_000;
-/** A design's number must fit an unsigned 32-bit integer. */
-const MOST_DESIGNS = 4e9;
 const KEYS = ['from', 'to', 'steps', 'step', 'oneOf'];
 /** Keys that belong to the methods to come. */
 const SAMPLING_KEYS = ['designs', 'seed'];
@@ -30,7 +29,7 @@ export interface AxesContext {
 }
 
 /** Reads `vary`. */
-export function readAxes(part: Located, context: AxesContext): Axis[] {
+export function readAxes(part: Located, context: AxesContext): PlacedAxis[] {
   const { issues } = context;
   if (part.kind !== 'map') {
     const found = part.kind === 'list' ? 'a list' : clip(part.text) || 'nothing';
@@ -41,17 +40,16 @@ export function readAxes(part: Located, context: AxesContext): Axis[] {
     });
     return [];
   }
-  const axes = part.entries.flatMap((entry) => readAxis(entry, context) ?? []);
-  const designs = axes.reduce((product, axis) => product * axis.points.length, 1);
-  if (designs > MOST_DESIGNS) {
-    const found = `${axes.map(({ points }) => points.length).join(' × ')} designs`;
-    issues.error(part.at, 'vary', { expected: 'at most 4 000 000 000 designs', found, hint: 'Use fewer steps, or vary fewer numbers.' });
-  }
-  return axes;
+  return part.entries.flatMap((entry) => {
+    const axis = readAxis(entry, context);
+    return axis === null ? [] : placedRange(axis, entry);
+  });
 }
 
-function readAxis({ key, at, value }: LocatedEntry, context: AxesContext): Axis | null {
+function readAxis(entry: LocatedEntry, context: AxesContext): Axis | null {
+  const { key, at, value } = entry;
   const path = `vary.${key}`;
+  if (isPair(entry)) return readPairs(entry, context);
   const row = findParameter(key);
   if (row === undefined || !hasReference(key, context)) {
     if (!toldAlready(key, context)) context.issues.error(at, path, noReference(key, row, value, context));
@@ -66,6 +64,59 @@ function readAxis({ key, at, value }: LocatedEntry, context: AxesContext): Axis 
   return readAxisMap(key, row, value, context.issues);
 }
 
+/** Ratios that vary together, and their efficiencies: `gearing.ratios: { oneOf: [[11.2, 6.4], [12, 7]] }`. */
+function isPair({ key, value }: LocatedEntry): boolean {
+  if (findParameter(`${key}.1`) === undefined) return false;
+  const list = value.kind === 'map' ? value.entries.find((entry) => entry.key === 'oneOf')?.value : undefined;
+  return findParameter(key) === undefined || (list?.kind === 'list' && list.items.some((item) => item.kind === 'list'));
+}
+
+function readPairs({ key, at, value }: LocatedEntry, context: AxesContext): Axis | null {
+  const { issues } = context;
+  const path = `vary.${key}`;
+  const sets = [`${key}.1`, `${key}.2`];
+  const missing = sets.find((name) => !hasReference(name, context));
+  if (missing !== undefined) {
+    if (!toldAlready(missing, context)) issues.error(at, path, noReference(missing, findParameter(missing), value, context));
+    return null;
+  }
+  const [only] = value.kind === 'map' ? value.entries : [];
+  if (value.kind !== 'map' || value.entries.length !== 1 || only?.key !== 'oneOf' || only.value.kind !== 'list' || only.value.items.length === 0) {
+    const found =
+      value.kind === 'map' ? value.entries.map((entry) => entry.key).join(', ') || 'an empty section' : value.kind === 'list' ? 'a list' : clip(value.text);
+    const hint = `Write "${key}: { oneOf: [[…, …], […, …]] }"; or vary ${sets.join(' and ')} apart.`;
+    issues.error(value.at, path, { expected: 'oneOf with a list of pairs', found: found || 'nothing', hint });
+    return null;
+  }
+  if (only.value.items.length > MOST_POINTS) return tooMany(only.value.at, path, only.value.items.length, issues);
+  const points = only.value.items.map((item) => readPair(item, sets, `${path}.oneOf`, issues));
+  const seen = new Set<string>();
+  for (const [index, point] of points.entries()) {
+    const again = { expected: 'each pair once', found: `${point?.join(', ')} again`, hint: 'Remove one of the two.' };
+    if (point !== null && seen.has(point.join())) issues.error((only.value.items[index] as Located).at, `${path}.oneOf`, again);
+    else if (point !== null) seen.add(point.join());
+  }
+  return seen.size < points.length ? null : { name: key, sets, points: points as number[][], labels: null, range: null };
+}
+
+/** A pair in order; null with its issues. */
+function readPair(item: Located, sets: readonly string[], path: string, issues: IssueList): number[] | null {
+  if (item.kind !== 'list' || item.items.length !== 2) {
+    const found = item.kind === 'list' ? `a list of ${item.items.length}` : item.kind === 'map' ? 'a section' : clip(item.text) || 'nothing';
+    issues.error(item.at, path, { expected: 'a pair, such as [11.2, 6.4]', found, hint: 'Each item is a list of two.' });
+    return null;
+  }
+  const figures = item.items.map((figure, index) => readFigure(figure, findParameter(sets[index] as string) as ParameterRow, path, issues));
+  const [first, second] = figures;
+  if (first === null || first === undefined || second === null || second === undefined) return null;
+  const order = orders.find(({ less, more }) => less === sets[1] && more === sets[0]);
+  if (order !== undefined && !(second.value < first.value)) {
+    issues.error(second.at, path, { expected: `less than ${asWritten(first)}`, found: asWritten(second), hint: `Exchange the two: ${order.why}.` });
+    return null;
+  }
+  return [first.value, second.value];
+}
+
 function hasReference(name: string, { values, stands }: AxesContext): boolean {
   return values[name] !== undefined && ruledOutBy(name, stands.keys()) === undefined;
 }
@@ -73,7 +124,7 @@ function hasReference(name: string, { values, stands }: AxesContext): boolean {
 /** A figure that is there but wrong, or a trial that is: the mistake itself is told. */
 function toldAlready(name: string, { values, stands, tried, broken }: AxesContext): boolean {
   if (broken.has(/^trials\.([^.]*)\./u.exec(name)?.[1] ?? '')) return true;
-  return values[name] === undefined && tried.has(name) && ruledOutBy(name, stands.keys()) === undefined;
+  return values[name] === undefined && findParameter(name) !== undefined && tried.has(name) && ruledOutBy(name, stands.keys()) === undefined;
 }
 
 function noReference(name: string, row: ParameterRow | undefined, value: Located, { issues, values, stands }: AxesContext) {

@@ -1,13 +1,14 @@
 /** The measured curve and map that a study names: reads the files, and settles what they cover and which motor they state. */
 import type { FullLoadCurve } from '../vehicle/full-load-curve.ts';
 import type { LossMap } from '../vehicle/loss-map.ts';
-import { clip, type IssueList } from './issue.ts';
+import { clip, type Issue, type IssueList } from './issue.ts';
 import { type Covering, type MapData, type ReferenceMotor, readFullLoad, readLossMap } from './read-motor-data.ts';
 import type { Found } from './read-places.ts';
 import type { StudySources } from './read-trials.ts';
 
 /** A measured map with what it brings along. */
 export interface MeasuredMap {
+  readonly file: string;
   readonly data: MapData['map'];
   readonly motorAlone: boolean;
   readonly stated: Partial<ReferenceMotor>;
@@ -15,34 +16,69 @@ export interface MeasuredMap {
   readonly at: number;
 }
 
-/** The full-load curve of a study, or null where it has none or cannot be read. */
-export function readStudyFullLoad(found: Found, sources: StudySources, issues: IssueList): FullLoadCurve | null {
-  const text = fileText('motor.fullLoad', found, sources, issues);
-  if (text === null) return null;
-  const read = readFullLoad(text.csv, text.name, statedMotor('motor.fullLoad', found));
-  if (read.ok) return read.curve;
-  issues.take(read.problems);
-  return null;
+/** The measured files of one study, each read once; its mistakes are told once, however many options name it. */
+export interface MotorFiles {
+  curve(file: NamedFile, issues: IssueList): FullLoadCurve | null;
+  map(file: NamedFile, issues: IssueList): MapData | null;
+}
+
+/** A file as the study names it. */
+interface NamedFile {
+  readonly name: string;
+  readonly at: number;
+  readonly path: string;
+}
+
+/** Reads measured files from the study's sources. */
+export function createMotorFiles(sources: StudySources): MotorFiles {
+  const once = <Data>(read: (csv: string, name: string) => { readonly ok: true; readonly data: Data } | { readonly ok: false; readonly problems: Issue[] }) => {
+    const known = new Map<string, Data | null>();
+    return (file: NamedFile, issues: IssueList): Data | null => {
+      const before = known.get(file.name);
+      if (before !== undefined) return before;
+      const csv = fileText(file, sources, issues);
+      if (csv === null) return null;
+      const result = read(csv, file.name);
+      if (!result.ok) issues.take(result.problems);
+      const data = result.ok ? result.data : null;
+      known.set(file.name, data);
+      return data;
+    };
+  };
+  return {
+    curve: once(readFullLoad),
+    map: once(readLossMap),
+  };
+}
+
+/** The full-load curve of a study at the motor it states, or null where it has none or cannot be read. */
+export function readStudyFullLoad(found: Found, files: MotorFiles, issues: IssueList): FullLoadCurve | null {
+  const file = namedFile('motor.fullLoad', found, issues);
+  const curve = file && files.curve(file, issues);
+  if (curve === null) return null;
+  const { peakTorqueNm, baseSpeedRadPerS } = statedMotor('motor.fullLoad', found);
+  return {
+    ...curve,
+    referencePeakTorqueNm: peakTorqueNm ?? curve.referencePeakTorqueNm,
+    referenceBaseSpeedRadPerS: baseSpeedRadPerS ?? curve.referenceBaseSpeedRadPerS,
+  };
 }
 
 /** The map of a study; what it covers is put among the names that stand, so that losses beside it are told. */
-export function readStudyMap(found: Found, sources: StudySources, issues: IssueList): MeasuredMap | null {
-  const text = fileText('motor.map', found, sources, issues);
-  if (text === null) return null;
-  const read = readLossMap(text.csv, text.name);
-  if (!read.ok) {
-    issues.take(read.problems);
-    return null;
-  }
-  const covers = coveringOf(read.data, found, text, issues);
+export function readStudyMap(found: Found, files: MotorFiles, issues: IssueList): MeasuredMap | null {
+  const text = namedFile('motor.map', found, issues);
+  const data = text && files.map(text, issues);
+  if (text === null || data === null) return null;
+  const covers = coveringOf(data, found, text, issues);
   if (covers === null) return null;
   found.stands.set(covers === 'motor' ? 'motor.map.motorAlone' : 'motor.map.wholeDrive', text.at);
   if (covers === 'motor') checkInverterLosses(found, text.at, issues);
   return {
-    data: read.data.map,
+    file: text.name,
+    data: data.map,
     motorAlone: covers === 'motor',
     stated: statedMotor('motor.map', found),
-    bestEfficiency: read.data.bestEfficiency,
+    bestEfficiency: data.bestEfficiency,
     at: text.at,
   };
 }
@@ -55,28 +91,20 @@ export function lossMapOf(measured: MeasuredMap, values: Readonly<Record<string,
   return { ...data, motorAlone, referencePeakTorqueNm, referenceBaseSpeedRadPerS };
 }
 
-interface NamedText {
-  readonly csv: string;
-  readonly name: string;
-  readonly at: number;
-}
-
-function fileText(path: string, found: Found, sources: StudySources, issues: IssueList): NamedText | null {
+function namedFile(path: string, found: Found, issues: IssueList): NamedFile | null {
   const at = found.stands.get(path);
   if (at === undefined) return null;
   const named = found.texts.get(`${path}.file`);
-  if (named === undefined) {
-    if (!found.stands.has(`${path}.file`))
-      issues.error(at, `${path}.file`, { expected: 'the name of a CSV file', found: 'no file', hint: 'Add "file: data/some-file.csv".' });
-    return null;
-  }
-  const file = sources.file(named.text);
-  if ('text' in file) return { csv: file.text, name: named.text, at: named.at };
-  issues.error(named.at, `${path}.file`, {
-    expected: 'a CSV file',
-    found: `${clip(named.text)}: ${file.problem}`,
-    hint: 'Paths start at the folder of the study file.',
-  });
+  if (named !== undefined) return { name: named.text, at: named.at, path: `${path}.file` };
+  if (!found.stands.has(`${path}.file`))
+    issues.error(at, `${path}.file`, { expected: 'the name of a CSV file', found: 'no file', hint: 'Add "file: data/some-file.csv".' });
+  return null;
+}
+
+function fileText({ name, at, path }: NamedFile, sources: StudySources, issues: IssueList): string | null {
+  const file = sources.file(name);
+  if ('text' in file) return file.text;
+  issues.error(at, path, { expected: 'a CSV file', found: `${clip(name)}: ${file.problem}`, hint: 'Paths start at the folder of the study file.' });
   return null;
 }
 
@@ -86,7 +114,7 @@ function statedMotor(path: string, { figures }: Found): Partial<ReferenceMotor> 
   return { ...(peakTorqueNm === undefined ? {} : { peakTorqueNm }), ...(baseSpeedRadPerS === undefined ? {} : { baseSpeedRadPerS }) };
 }
 
-function coveringOf(data: MapData, found: Found, { name, at }: NamedText, issues: IssueList): Covering | null {
+function coveringOf(data: MapData, found: Found, { name, at }: NamedFile, issues: IssueList): Covering | null {
   const inStudy = found.texts.get('motor.map.covers');
   const expected = 'what the map covers: motor, or motor and inverter';
   if (data.covers === 'unknown') {

@@ -17,14 +17,10 @@ export interface ReferenceMotor {
 export type Covering = (typeof coverings)[number];
 
 /**
- * A full-load curve: `speed_rpm,torque_Nm`, speeds rising from 0 or more, torques not negative. What `stated` leaves open is taken
- * from the points: the largest torque, and the largest power over it.
+ * A full-load curve: `speed_rpm,torque_Nm`, speeds rising from 0 or more, torques not negative. Its reference motor is taken from the
+ * points: the largest torque, and the largest power over it.
  */
-export function readFullLoad(
-  csvText: string,
-  name: string,
-  stated: Partial<ReferenceMotor>,
-): { ok: true; curve: FullLoadCurve } | { ok: false; problems: Issue[] } {
+export function readFullLoad(csvText: string, name: string): { ok: true; data: FullLoadCurve } | { ok: false; problems: Issue[] } {
   const issues = new IssueList(name, csvText);
   const table = readCsv(csvText, 'speed_rpm,torque_Nm', issues);
   const speed = table && findColumn(table, [{ base: 'speed', quantity: 'rotationalSpeed' }], issues);
@@ -40,7 +36,7 @@ export function readFullLoad(
     issues.error(table.head.at, '', { expected: 'a torque above zero at a speed above zero', found: 'no power at any point', hint: 'Check the columns.' });
   }
   if (issues.failed) return { ok: false, problems: issues.list('error') };
-  return { ok: true, curve: fullLoadCurve(speedsRadPerS, torquesNm, stated.peakTorqueNm, stated.baseSpeedRadPerS) };
+  return { ok: true, data: fullLoadCurve(speedsRadPerS, torquesNm) };
 }
 
 function checkNotNegative(table: CsvTable, values: readonly number[], column: { index: number; head: string }, issues: IssueList): void {

@@ -1,5 +1,7 @@
 /** Tyre size text -> dynamic rolling radius. */
 import { tyreRadiusM } from '../vehicle/tyre.ts';
+import type { IssueList } from './issue.ts';
+import type { Found } from './read-places.ts';
 
 const INCH_M = 0.0254;
 const RADIAL = /^(?:P|LT)?\s*(\d{3})\s*\/\s*(\d{2,3})\s*(?:ZR|R)\s*(\d{2}(?:\.5)?)\s*C?$/iu;
@@ -13,4 +15,15 @@ export function rollingRadiusM(size: string): number | null {
   if (parts === null) return null;
   const [widthMm, aspectPct, rimInch] = parts.slice(1).map(Number) as [number, number, number];
   return tyreRadiusM(widthMm / 1000, aspectPct / 100, rimInch * INCH_M);
+}
+
+/** Tells of a tyre size that is none. */
+export function checkTyre({ texts }: Found, path: string, issues: IssueList): void {
+  const tyre = texts.get('vehicle.tyre');
+  if (tyre === undefined || rollingRadiusM(tyre.text) !== null) return;
+  issues.error(tyre.at, path, {
+    expected: 'the size of a radial tyre, such as 215/65 R16',
+    found: tyre.text,
+    hint: 'Write width in mm / aspect ratio in % R rim in inches; or give wheelRadius instead.',
+  });
 }

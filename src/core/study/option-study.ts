@@ -1,0 +1,71 @@
+/** The study that an option makes of the study's own numbers, as a `with` does for one trial: what it states goes before what says the same thing. */
+import { findParameter } from './parameters.ts';
+import type { Found } from './read-places.ts';
+import type { TrialFound } from './read-trials.ts';
+import { alternatives, exclusion, matches } from './rules.ts';
+
+/** What a study states, its trials apart. */
+export interface StudyFound {
+  readonly found: Found;
+  readonly trials: readonly TrialFound[];
+}
+
+/**
+ * The study with an option in it. A number that the option states, and every number of the study that has no part to play beside it
+ * (one ratio beside two), gives way; files stay unless the option names its own.
+ */
+export function studyWithOption({ found, trials }: StudyFound, option: Found): StudyFound {
+  const names = [...option.stands.keys()];
+  const givesWay = (name: string) => names.some((own) => replaces(own, name));
+  return {
+    found: joined(found, option, givesWay, (name) => !name.startsWith('trials.')),
+    trials: trials.map((trial) => ({ ...trial, found: joined(trial.found, option, givesWay, (name) => name.startsWith(`trials.${trial.name}.`)) })),
+  };
+}
+
+/** Whether what an option states goes before a name of the study: the same number, another way of saying it, or one without a part beside it. */
+export function replaces(own: string, name: string): boolean {
+  if (own === name || isPartOf(name, own)) return true;
+  if (isFile(name) || own.startsWith('trials.') !== name.startsWith('trials.')) return false;
+  return (
+    exclusion(own, name) !== undefined || alternatives.some(({ holds, inFile }) => inFile?.includes(name) && holds.some((pattern) => matches(pattern, own)))
+  );
+}
+
+/** What a file says of itself goes with it. */
+function isPartOf(name: string, file: string): boolean {
+  return isFile(file) && !file.endsWith('.file') && name.startsWith(`${file}.`);
+}
+
+function isFile(name: string): boolean {
+  return /^motor\.(?:fullLoad|map)(?:\.|$)/u.test(name);
+}
+
+function joined(base: Found, option: Found, givesWay: (name: string) => boolean, belongs: (name: string) => boolean): Found {
+  const join = <Value>(own: ReadonlyMap<string, Value>, more: ReadonlyMap<string, Value>) =>
+    new Map([...[...own].filter(([name]) => !givesWay(name)), ...[...more].filter(([name]) => belongs(name))]);
+  return {
+    figures: join(base.figures, option.figures),
+    texts: join(base.texts, option.texts),
+    parts: base.parts,
+    stands: withSections(join(base.stands, option.stands), base.stands),
+    tried: new Set([...[...base.tried].filter((name) => !givesWay(name)), ...[...option.tried].filter(belongs)]),
+  };
+}
+
+/** Sections of which nothing is left stand no more; those of which there is something now do. */
+function withSections(stands: ReadonlyMap<string, number>, before: ReadonlyMap<string, number>): Map<string, number> {
+  const filled = new Map<string, number>();
+  for (const [name, at] of stands) for (const section of sectionsAbove(name)) if (!filled.has(section)) filled.set(section, at);
+  const emptied = new Set([...before.keys()].flatMap(sectionsAbove).filter((section) => !filled.has(section)));
+  return new Map([...[...filled].filter(([section]) => !stands.has(section)), ...[...stands].filter(([name]) => !emptied.has(name))]);
+}
+
+/** Sections that hold a name; one that is a figure as well (gearing.efficiency) does not count. */
+function sectionsAbove(name: string): string[] {
+  const keys = name.split('.');
+  return keys.slice(1).flatMap((_, length) => {
+    const section = keys.slice(0, length + 1).join('.');
+    return findParameter(section) === undefined ? [section] : [];
+  });
+}
