@@ -2,11 +2,11 @@
 import { visibleText } from '../charts/visible-text.ts';
 import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
 import type { Axis, Study } from '../core/study/study.ts';
+import { boundWords } from '../page/wording.ts';
 import type { RunEstimate } from '../run/estimate-run.ts';
 import { type CheckedStudy, requiredColumn } from './checked-study.ts';
 import { count, countOf, durationText, shareText, sizeText } from './figure-text.ts';
 import { warningSentence } from './open-study.ts';
-import { boundText } from './requirement-text.ts';
 import { columns } from './table.ts';
 import { capped, ink } from './terminal.ts';
 import { givenText, trialConditions } from './trial-text.ts';
@@ -62,7 +62,7 @@ function sampleTitle({ sampled, designs, feasible }: RunEstimate): string {
 function sampleLines({ failing, sampled }: RunEstimate, study: Study): string[] {
   return lines(
     study.requirements.map((requirement, at) => {
-      const bound = boundText(requirement, requiredColumn(requirement, study).row, study);
+      const bound = boundWords(requirement, requiredColumn(requirement, study).row, study);
       return [visibleText(requirement.metric), bound, removalText(failing[at] as number, sampled) + (requirement.implied ? ' (asked of every cycle)' : '')];
     }),
   );

@@ -1,11 +1,12 @@
 /** A study as `check` sees it: its mistakes, or the outlook of a run. */
 import { machineValue } from '../core/evaluate/result-columns.ts';
 import { whatRunNeeds } from '../core/study/check-study.ts';
+import { issueRecord } from '../core/study/issue.ts';
 import { metricColumns } from '../core/study/metric-columns.ts';
 import type { MetricColumn } from '../core/study/metrics.ts';
 import type { Requirement, Study } from '../core/study/study.ts';
 import type { RunEstimate } from '../run/estimate-run.ts';
-import { issueJson, type OpenStudy, readStudy, type WrongStudy } from './open-study.ts';
+import { type OpenStudy, readStudy, type WrongStudy } from './open-study.ts';
 
 /** What a run of a study without mistakes would do, or what it still needs. */
 export type Outlook = { readonly needs: NonNullable<ReturnType<typeof whatRunNeeds>> } | { readonly estimate: RunEstimate };
@@ -32,14 +33,14 @@ export function requiredColumn({ metric }: Requirement, study: Study): MetricCol
 export function checkJson(checked: CheckedStudy): object {
   if (!('outlook' in checked)) {
     const { file, unreadable, issues } = checked.opened;
-    return { study: file, valid: false, unreadable, issues: issues.map(issueJson) };
+    return { study: file, valid: false, unreadable, issues: issues.map(issueRecord) };
   }
   const { opened, outlook } = checked;
   const { study, file, warnings } = opened;
   return {
     study: file,
     valid: true,
-    warnings: warnings.map(issueJson),
+    warnings: warnings.map(issueRecord),
     trials: study.trials.map(({ name, kind, rating }) => ({ name, kind, rating })),
     varied: study.axes.map(({ name, points }) => ({ name, values: points.length })),
     run: 'needs' in outlook ? { possible: false, ...outlook.needs } : { possible: true, ...estimateJson(outlook.estimate, study) },

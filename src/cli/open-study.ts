@@ -1,9 +1,10 @@
 /** A study file, read and checked; its mistakes told all at once. */
 import { readdirSync } from 'node:fs';
 import { basename, dirname, join } from 'node:path';
-import { shortText, visibleText } from '../charts/visible-text.ts';
+import { capitalised } from '../charts/figure-words.ts';
+import { shortText } from '../charts/visible-text.ts';
 import { checkStudy } from '../core/study/check-study.ts';
-import { formatIssues, type Issue } from '../core/study/issue.ts';
+import { formatIssues, type Issue, warningPlace, warningWords } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
 import { nearestName } from '../core/units/nearest-name.ts';
 import { type FileDigest, readStudyFile, studySources } from '../run/study-files.ts';
@@ -58,14 +59,8 @@ export function sayWrong(wrong: WrongStudy): void {
 }
 
 /** A warning as a sentence or two: where, what was found, what is usual, what to do. */
-export function warningSentence({ file, line, path, expected, found, hint }: Issue, study: OpenStudy): string {
-  const place = `${file === study.file ? 'Line' : `${file}, line`} ${line}${path === '' ? '' : `, ${path}`}`;
-  return visibleText(`${place}: ${found}; expected ${expected}. ${hint}`.trim());
-}
-
-/** The issues of a study for programs. */
-export function issueJson({ file, line, column, path, expected, found, hint }: Issue): Record<string, string | number> {
-  return { file, line, column, path, expected, found, whatToDo: hint };
+export function warningSentence(warning: Issue, study: OpenStudy): string {
+  return `${capitalised(warningPlace(warning, study.file))}: ${warningWords(warning)}`;
 }
 
 /** The nearest file beside a name that leads nowhere. */

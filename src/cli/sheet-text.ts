@@ -4,8 +4,9 @@ import { visibleText } from '../charts/visible-text.ts';
 import type { ComputedDesign, DesignMetric, Setting } from '../core/search/design-bench.ts';
 import { cautionLine } from '../core/study/cautions.ts';
 import type { Study, Trial } from '../core/study/study.ts';
+import { boundWords, meets, valueAgainst } from '../page/wording.ts';
 import { count, figureCells } from './figure-text.ts';
-import { boundText, meets, valueBesideLimit, verdictText } from './requirement-text.ts';
+import { verdictText } from './requirement-text.ts';
 import { columns } from './table.ts';
 import { ink } from './terminal.ts';
 import { limitText, trialConditions } from './trial-text.ts';
@@ -89,7 +90,7 @@ function metricCells({ study }: DesignSheet, { column, value }: DesignMetric): [
   const missed = study.requirements.find((requirement) => requirement.metric === column.name && !meets(value, requirement));
   const [figure, unit] = figureCells(value, column.row, study);
   if (missed === undefined || Number.isNaN(value)) return [figure, unit];
-  const printed = valueBesideLimit(value, missed, column.row, study);
+  const printed = valueAgainst(value, missed, column.row, study);
   return [unit === '' ? printed : printed.slice(0, -unit.length).trimEnd(), unit];
 }
 
@@ -125,6 +126,6 @@ function requirementRows(sheet: DesignSheet): string[][] {
     const { column, value } = byName.get(requirement.metric) as DesignMetric;
     const verdict = verdictText(value, requirement, column.row, study);
     const coloured = meets(value, requirement) ? ink('green', verdict) : ink('red', verdict);
-    return [requirement.metric, boundText(requirement, column.row, study), valueBesideLimit(value, requirement, column.row, study), coloured];
+    return [requirement.metric, boundWords(requirement, column.row, study), valueAgainst(value, requirement, column.row, study), coloured];
   });
 }

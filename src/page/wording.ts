@@ -1,5 +1,5 @@
 /** Requirements, loads and differences in the words of a sentence. */
-import { columnPhrase, columnWords, differenceText, figureText, neededDecimals, unitWord, withCurrency } from '../charts/figure-words.ts';
+import { columnPhrase, columnWords, differenceText, figureText, type Measured, neededDecimals, unitWord, withCurrency } from '../charts/figure-words.ts';
 import type { ReportData, ReportDesign, RequirementCount } from '../charts/report-data.ts';
 import { shortText } from '../charts/visible-text.ts';
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
@@ -27,25 +27,25 @@ export function metricColumn(data: ReportData, metric: string): { column: Result
 }
 
 /** A limit with its unit, in no more decimals than it needs. */
-export function limitWords({ limit }: Pick<Requirement, 'limit'>, column: ResultColumn, study: Study): string {
+export function limitWords({ limit }: Pick<Requirement, 'limit'>, column: Measured, study: Study): string {
   const { quantity } = column;
   return withCurrency(formatLimit(limit, quantity, { decimals: neededDecimals(limit, column, study), system: study.report.units }), quantity, study);
 }
 
 /** `at least 20 %`. */
-export function boundWords(requirement: Pick<Requirement, 'limit' | 'bound'>, column: ResultColumn, study: Study): string {
+export function boundWords(requirement: Pick<Requirement, 'limit' | 'bound'>, column: Measured, study: Study): string {
   return `${requirement.bound === 'atLeast' ? 'at least' : 'at most'} ${limitWords(requirement, column, study)}`;
 }
 
 /** A value in decimals enough to stand on its own side of the limit. */
-export function valueAgainst(value: number | null, { limit, bound }: Pick<Requirement, 'limit' | 'bound'>, column: ResultColumn, study: Study): string {
-  if (value === null) return figureText(null, column, study);
+export function valueAgainst(value: number | null, { limit, bound }: Pick<Requirement, 'limit' | 'bound'>, column: Measured, study: Study): string {
+  if (value === null || Number.isNaN(value)) return figureText(null, column, study);
   const { quantity, decimals } = column;
   return withCurrency(formatAgainstLimit(value, limit, bound, quantity, { decimals, system: study.report.units }), quantity, study);
 }
 
 /** A limit that a value just meets, rounded to the side where it still does. */
-export function easedLimit(value: number, { bound }: Pick<Requirement, 'bound'>, { quantity, decimals }: ResultColumn, study: Study): string {
+export function easedLimit(value: number, { bound }: Pick<Requirement, 'bound'>, { quantity, decimals }: Measured, study: Study): string {
   const unit = readingUnit(quantity, study.report.units);
   const steps = 10 ** (decimals + 1);
   const written = Number((fromSi(value, unit) * steps).toPrecision(12));

@@ -1,8 +1,9 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { boundText, meets, valueBesideLimit, verdictText } from '../../src/cli/requirement-text.ts';
+import { verdictText } from '../../src/cli/requirement-text.ts';
 import { designMetrics, trialMetrics } from '../../src/core/study/metrics.ts';
 import type { Requirement, Study } from '../../src/core/study/study.ts';
+import { boundWords, meets, valueAgainst } from '../../src/page/wording.ts';
 
 const study: Study = {
   title: '',
@@ -36,9 +37,9 @@ const verdictOf = (...args: Parameters<typeof verdictText>) => plain(verdictText
 
 describe('requirements in words', () => {
   it('says the bound in the unit of the reader', () => {
-    expect(plain(boundText(grade, trialMetrics.grade, study))).toBe('at least 20 %');
-    expect(plain(boundText({ bound: 'atLeast', limit: 100 / 3.6 }, trialMetrics.speed, us))).toBe('at least 62.14 mph');
-    expect(plain(boundText({ bound: 'atMost', limit: 2000 }, designMetrics['driveUnit.cost'], study))).toBe('at most 2000 EUR');
+    expect(plain(boundWords(grade, trialMetrics.grade, study))).toBe('at least 20 %');
+    expect(plain(boundWords({ bound: 'atLeast', limit: 100 / 3.6 }, trialMetrics.speed, us))).toBe('at least 62.14 mph');
+    expect(plain(boundWords({ bound: 'atMost', limit: 2000 }, designMetrics['driveUnit.cost'], study))).toBe('at most 2000 EUR');
   });
 
   it('says by how much a requirement is met or missed, percentages in points', () => {
@@ -50,7 +51,7 @@ describe('requirements in words', () => {
   it('calls a metric that does not exist a miss', () => {
     expect(meets(Number.NaN, time)).toBe(false);
     expect(verdictOf(Number.NaN, time, trialMetrics.time, study)).toBe('MISSED: there is no value');
-    expect(valueBesideLimit(Number.NaN, time, trialMetrics.time, study)).toBe('—');
+    expect(valueAgainst(Number.NaN, time, trialMetrics.time, study)).toBe('—');
   });
 
   it('tells a requirement that every cycle must be followed apart from written ones', () => {
@@ -67,7 +68,7 @@ describe('requirements in words', () => {
         const verdict = verdictOf(value, time, trialMetrics.time, study);
         expect(verdict).toMatch(/^MISSED by /);
         expect(Number.parseFloat(verdict.slice('MISSED by '.length))).toBeGreaterThan(0);
-        const printed = plain(valueBesideLimit(value, time, trialMetrics.time, study));
+        const printed = plain(valueAgainst(value, time, trialMetrics.time, study));
         expect(printed.startsWith('>') || Number.parseFloat(printed) > 11.5).toBe(true);
       }),
     );
