@@ -31,6 +31,12 @@ export const designsPerTask = 1_000;
 /** Evaluates designs 1…count; batches come in the order of design numbers, whatever the threads do. Throws RunProblem. */
 export async function* evaluateInThreads(data: ThreadData, count: number, workers: number, threadUrl: URL): AsyncGenerator<DesignBatch> {
   const pool = new Piscina({ filename: threadUrl.href, workerData: data, minThreads: workers, maxThreads: workers, concurrentTasksPerWorker: 1 });
+  let lost: unknown = null;
+  // A thread that fails with no task in hand tells only the pool, which starts no other in its place: what is queued would wait for ever.
+  pool.on('error', (error) => {
+    lost ??= error;
+    void pool.destroy();
+  });
   const tasks = tasksOf(count);
   // Two tasks a thread in flight keep every thread busy while the oldest is awaited, and memory flat.
   const inFlight: { task: DesignTask; result: Promise<TaskResult> }[] = [];
@@ -45,7 +51,12 @@ export async function* evaluateInThreads(data: ThreadData, count: number, worker
   try {
     for (let k = 0; k < workers * 2; k++) startNext();
     for (let oldest = inFlight.shift(); oldest !== undefined; oldest = inFlight.shift()) {
-      const batch = await awaitBatch(oldest.task, oldest.result, data.columns.length);
+      const { task } = oldest;
+      const done = await oldest.result.catch((error: unknown) => {
+        throw threadProblem(task, lost ?? error);
+      });
+      if (lost !== null) throw threadProblem(task, lost);
+      const batch = batchOf(task, done, data.columns.length);
       startNext();
       yield batch;
     }
@@ -59,18 +70,13 @@ function* tasksOf(count: number): Generator<DesignTask, undefined> {
   return undefined;
 }
 
-async function awaitBatch(task: DesignTask, result: Promise<TaskResult>, width: number): Promise<DesignBatch> {
-  const done = await result.catch((error: unknown) => {
-    const reason = error instanceof Error ? error.message : String(error);
-    throw new RunProblem(
-      `A worker thread stopped at designs ${task.first} to ${task.first + task.count - 1}: ${reason}`,
-      'Run again, with fewer --workers where memory is short.',
-      {
-        cause: error,
-      },
-    );
-  });
-  if ('fault' in done) throw new Error(`design ${done.designNumber}: ${done.fault}`);
-  const columns = Array.from({ length: width }, (_, k) => done.subarray(k * task.count, (k + 1) * task.count));
-  return { ...task, columns };
+function threadProblem({ first, count }: DesignTask, cause: unknown): RunProblem {
+  const reason = cause instanceof Error ? cause.message : String(cause);
+  const message = `A worker thread stopped at designs ${first} to ${first + count - 1}: ${reason}`;
+  return new RunProblem(message, 'Run again, with fewer --workers where memory is short.', { cause });
+}
+
+function batchOf(task: DesignTask, result: TaskResult, width: number): DesignBatch {
+  if ('fault' in result) throw new Error(`design ${result.designNumber}: ${result.fault}`);
+  return { ...task, columns: Array.from({ length: width }, (_, k) => result.subarray(k * task.count, (k + 1) * task.count)) };
 }
