@@ -7,11 +7,11 @@ import { asideEnding, writeWhole } from './write-whole.ts';
 /** Stands in run.json: the folder is ours to replace. */
 const maker = 'layshaft';
 
-/** Files that a run writes, by folder; everything else in the folder is left alone. */
+/** Files that a run writes, by folder, beside run.json; everything else in the folder is left alone. */
 const ours: readonly { readonly folder: string; readonly files: RegExp }[] = [
-  { folder: '', files: /^(study\.yaml|run\.json|front\.csv|report\.html)$/u },
+  { folder: '', files: /^(study\.yaml|front\.csv|report\.html)$/u },
   { folder: 'designs', files: /^part-\d{5,}\.parquet$/u },
-  { folder: 'charts', files: /\.svg$/u },
+  { folder: 'charts', files: /^[A-Za-z0-9.-]+-over-[A-Za-z0-9.-]+\.svg$/u },
 ];
 
 /** Paths inside a run folder. */
@@ -43,13 +43,19 @@ export function runFolderName(studyFile: string): string {
   return basename(studyFile).replace(/\.(ya?ml)$/iu, '');
 }
 
-/** Makes the folder ready for a new run: there, ours, and free of an earlier run's files. Throws RunProblem. */
-export function openRunFolder(path: string): RunFolder {
+/**
+ * Makes the folder ready for a new run: there, ours by the record in its run.json, and free of an earlier run's files. Throws
+ * RunProblem. The record is written before anything is made or cleared: a crash at any moment leaves a folder that is still ours.
+ */
+export function openRunFolder(path: string, record: object): RunFolder {
   try {
     if (existsSync(path)) refuseForeign(path);
+    mkdirSync(path, { recursive: true });
+    const opened = new RunFolder(path);
+    opened.record(record);
     for (const { folder } of ours) mkdirSync(join(path, folder), { recursive: true });
     clearOurs(path);
-    return new RunFolder(path);
+    return opened;
   } catch (error) {
     if (error instanceof RunProblem) throw error;
     throw new RunProblem(`The folder ${path} cannot be used: ${systemReason(error)}`, 'Choose another one with --out.', { cause: error });

@@ -54,7 +54,6 @@ export interface RunOutcome {
 export async function runStudy(options: RunOptions): Promise<RunOutcome> {
   const { study, workers } = options;
   const started = new Date();
-  const folder = openRunFolder(options.outFolder);
   const columns = studyColumns(study);
   const designs = createDesignEvaluator(study, columns);
   const account = new RunAccount(study, columns);
@@ -69,7 +68,7 @@ export async function runStudy(options: RunOptions): Promise<RunOutcome> {
   };
   const inputDigests = [digest(options.studyFile, options.studyText), ...options.digests];
 
-  folder.record({ state: 'running', ...record });
+  const folder = openRunFolder(options.outFolder, { state: 'running', ...record });
   folder.write('study.yaml', options.studyText);
   const threadUrl = options.threadUrl ?? new URL('./thread.js', import.meta.url);
   const parts = new PartWriter(folder, columns);

@@ -14,10 +14,19 @@ export function writeWhole(path: string, content: string | Uint8Array): void {
     renameSync(aside, path);
     syncFolder(dirname(path));
   } catch (error) {
-    rmSync(aside, { force: true });
+    removeAside(aside);
     throw new RunProblem(`${path} cannot be written: ${systemReason(error)}`, 'Free space or choose another folder with --out, then run again.', {
       cause: error,
     });
+  }
+}
+
+/** Where even that fails, the reason to tell is still that of the write. */
+function removeAside(path: string): void {
+  try {
+    rmSync(path, { force: true });
+  } catch {
+    // The next run clears it away, or says why it cannot.
   }
 }
 

@@ -1,4 +1,4 @@
-import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, expect, test } from 'vitest';
@@ -23,15 +23,33 @@ test('a file that cannot be written keeps its old content and names the reason',
 
 test('opening a run folder clears what a crash left of an earlier run, and only that', () => {
   const path = join(folder, 'run');
-  const run = openRunFolder(path);
-  run.record({ state: 'running' });
+  const run = openRunFolder(path, { state: 'running' });
   run.write('designs/part-00000.parquet', new Uint8Array(3));
   writeFileSync(join(path, 'designs', 'part-00001.parquet.tmp'), 'half');
   writeFileSync(join(path, 'designs', 'mine.txt'), 'mine');
-  openRunFolder(path);
+  writeFileSync(join(path, 'charts', 'our own.svg'), 'mine');
+  openRunFolder(path, { state: 'running' });
   expect(readdirSync(join(path, 'designs'))).toEqual(['mine.txt']);
+  expect(readdirSync(join(path, 'charts'))).toEqual(['our own.svg']);
 });
 
 test('the run folder is named after the study file', () => {
   expect(runFolderName('studies/harbour.van.yaml')).toBe('harbour.van');
+});
+
+test('a folder is ours from its first moment, so that a crash in opening it never locks the next run out', () => {
+  const path = join(folder, 'opened');
+  openRunFolder(path, { state: 'running' }).write('front.csv', 'number');
+  expect(JSON.parse(readFileSync(join(path, 'run.json'), 'utf8'))).toEqual({ maker: 'layshaft', state: 'running' });
+  openRunFolder(path, { state: 'again' });
+  expect(JSON.parse(readFileSync(join(path, 'run.json'), 'utf8'))).toEqual({ maker: 'layshaft', state: 'again' });
+  expect(readdirSync(path).sort()).toEqual(['charts', 'designs', 'run.json']);
+});
+
+test.each([
+  ['part of the path is a file', () => writeFileSync(join(folder, 'plain'), ''), join('plain', 'a.txt')],
+  ['a folder stands where the file is written aside', () => mkdirSync(join(folder, 'taken.tmp')), 'taken'],
+])('a write that fails because %s is a problem in words, not an error of the clearing up', (_, prepare, name) => {
+  prepare();
+  expect(() => writeWhole(join(folder, name), 'x')).toThrow(expect.objectContaining({ name: 'RunProblem', hint: expect.stringContaining('--out') }));
 });
