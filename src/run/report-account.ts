@@ -1,10 +1,13 @@
 /** From the account of a run to what the report holds: front, proposals, requirements, sample, each design with its figures. */
 import type { DesignStanding, Proposal, Provenance, ReportData, ReportDesign, RequirementCount } from '../charts/report-data.ts';
+import type { Front } from '../core/front/front-filter.ts';
 import { balancedDesign, bestInEach } from '../core/front/proposals.ts';
 import type { RequirementOutcome, RequirementResult } from '../core/front/requirements.ts';
 import { thinFront } from '../core/front/thin-front.ts';
+import { hashNumber } from '../core/numerics/hash.ts';
 import type { DesignEvaluator } from '../core/search/evaluate-designs.ts';
 import type { Study } from '../core/study/study.ts';
+import { resultWarnings } from './result-warnings.ts';
 import type { RunAccount } from './run-account.ts';
 
 /** Front designs shown, at most; a finer resolution than this tells people nothing. */
@@ -31,33 +34,30 @@ export function findingsOf(source: ReportSource, account: RunAccount, designs: D
   const { study } = source;
   const tally = account.tally.result();
   const front = account.filter.front();
-  const shown = thinFront(
-    front.objectives,
-    study.objectives.map(({ resolution }) => resolution),
-  ).slice(0, mostShown);
-  const shownObjectives = front.objectives.map((column) => Float64Array.from(shown, (index) => column[index]));
-  const proposals = proposalsOf(
-    study,
-    shownObjectives,
-    Array.from(shown, (index) => front.numbers[index]),
-  );
+  const proposals = proposalsOf(study, front);
+  const shown = shownFront(study, front, proposals);
   const standings = standingsOf(account, front.numbers, shown, tally);
   return {
     front: front.numbers,
+    // Field by field: what else the caller holds, such as paths of its machine, has no place in a report.
     report: {
-      ...source,
+      study,
+      studyFile: source.studyFile,
+      studyText: source.studyText,
+      provenance: source.provenance,
       columns: designs.columns,
       counts: { designs: tally.designs, feasible: tally.feasible, front: front.numbers.length, shownFront: shown.length },
       designs: standings.map(([number, standing]) => reportDesign(number, standing, designs)),
       requirements: study.requirements.map((requirement, r) => requirementCount(study, requirement, tally.requirements[r])),
       proposals,
       closest: closestOf(study, tally),
+      warnings: [...source.warnings, ...resultWarnings({ study, columns: designs.columns, tally, proposals, valuesOf: (number) => valuesOf(number, designs) })],
     },
   };
 }
 
-/** Best in each objective and the balanced one, each design once with all the rules that chose it; the rules in the order of the objectives. */
-function proposalsOf(study: Study, objectives: readonly Float64Array[], numbers: readonly number[]): Proposal[] {
+/** Best in each objective and the balanced one over the exact front, each design once with all the rules that chose it; the rules in the order of the objectives. */
+function proposalsOf(study: Study, { objectives, numbers }: Front): Proposal[] {
   if (numbers.length === 0) return [];
   const chosen: (readonly [number: number, rule: string])[] = [
     ...bestInEach(objectives).map((index, k): [number, string] => [numbers[index], study.objectives[k].metric]),
@@ -66,6 +66,18 @@ function proposalsOf(study: Study, objectives: readonly Float64Array[], numbers:
   const byNumber = new Map<number, string[]>();
   for (const [number, rule] of chosen) byNumber.set(number, [...(byNumber.get(number) ?? []), rule]);
   return [...byNumber].map(([number, rules]) => ({ number, rules }));
+}
+
+/** Indices of the front designs that people see, ascending: every proposal and one design per box of the resolution, those by hashed number where they are too many. */
+function shownFront(study: Study, { objectives, numbers }: Front, proposals: readonly Proposal[]): Uint32Array {
+  const thinned = thinFront(
+    objectives,
+    study.objectives.map(({ resolution }) => resolution),
+  );
+  const proposed = new Set(proposals.map(({ number }) => numbers.indexOf(number)));
+  const others = Array.from(thinned).filter((index) => !proposed.has(index));
+  if (others.length + proposed.size > mostShown) others.sort((a, b) => hashNumber(numbers[a]) - hashNumber(numbers[b]) || a - b);
+  return Uint32Array.from([...proposed, ...others].slice(0, mostShown)).sort();
 }
 
 /** Reference first, then the shown front, then samples without the front's designs, and the closest design where nothing is feasible. */
@@ -83,9 +95,13 @@ function standingsOf(account: RunAccount, front: Float64Array, shown: Uint32Arra
 }
 
 function reportDesign(number: number, standing: DesignStanding, designs: DesignEvaluator): ReportDesign {
+  return { number, standing, values: Array.from(valuesOf(number, designs), (value) => (Number.isNaN(value) ? null : value)) };
+}
+
+function valuesOf(number: number, designs: DesignEvaluator): Float64Array {
   const row = new Float64Array(designs.columns.length);
   designs.evaluate(number, row, 0, 1);
-  return { number, standing, values: Array.from(row, (value) => (Number.isNaN(value) ? null : value)) };
+  return row;
 }
 
 function requirementCount(study: Study, requirement: Study['requirements'][number], outcome: RequirementOutcome): RequirementCount {

@@ -102,6 +102,33 @@ describe('a run of 105 designs', () => {
   });
 });
 
+test('a report holds what its contract lists and nothing of the machine that made it', () => {
+  const text = readFileSync(join(folder, 'two', 'report.html'), 'utf8');
+  const listed = ['closest', 'columns', 'counts', 'designs', 'proposals', 'provenance', 'requirements', 'study', 'studyFile', 'studyText', 'warnings'];
+  expect(Object.keys(JSON.parse(text)).sort()).toEqual(listed);
+  expect(text).not.toContain(folder);
+  expect(text).not.toContain('thread.js');
+});
+
+test('front.csv marks as best what no other row of it beats, however coarse the resolution people are shown', async () => {
+  const aims = 'minimise: [sprint.time, driveUnit.cost]\n  resolution: { sprint.time: 3 s, driveUnit.cost: 120 }';
+  const text = smallStudyText('ramp.grade: { atLeast: 1 % }').replace('minimise: [round.batteryEnergy, driveUnit.cost]', aims);
+  const path = join(folder, 'coarse');
+  const { report } = await runStudy(runOptions(text, path, 1));
+  expect(report.counts.shownFront).toBeLessThan(report.counts.front);
+  const [head, , ...rows] = readFileSync(join(path, 'front.csv'), 'utf8')
+    .trimEnd()
+    .split('\n')
+    .map((line) => line.split(','));
+  for (const [metric, key] of [
+    ['sprint.time', 'sprint.time_s'],
+    ['driveUnit.cost', 'driveUnit.cost'],
+  ]) {
+    const figures = rows.map((row) => Number(row[head.indexOf(key)]));
+    expect(figures[rows.findIndex((row) => row[1].includes(`best in ${metric}`))]).toBe(Math.min(...figures));
+  }
+});
+
 test('a run in which nothing is feasible says how near each requirement is and which design comes closest', async () => {
   const { report } = await runStudy(runOptions(smallStudyText('ramp.grade: { atLeast: 90 % }'), join(folder, 'none'), 1));
   expect(report.counts).toMatchObject({ feasible: 0, front: 0 });
