@@ -2,10 +2,8 @@
 import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, statSync } from 'node:fs';
 import { basename, join } from 'node:path';
 import { RunProblem, systemReason } from './run-problem.ts';
+import { type RunRecord, readRunRecord, runRecordText } from './run-record.ts';
 import { asideEnding, writeWhole } from './write-whole.ts';
-
-/** Stands in run.json: the folder is ours to replace. */
-const maker = 'layshaft';
 
 /** Files that a run writes, by folder, beside run.json; everything else in the folder is left alone. */
 const ours: readonly { readonly folder: string; readonly files: RegExp }[] = [
@@ -32,9 +30,9 @@ export class RunFolder {
     writeWhole(this.file(name), content);
   }
 
-  /** Writes run.json: the maker, then the record. */
-  record(record: object): void {
-    this.write('run.json', `${JSON.stringify({ maker, ...record }, null, 2)}\n`);
+  /** Writes run.json. */
+  record(record: Omit<RunRecord, 'maker'>): void {
+    this.write('run.json', runRecordText(record));
   }
 }
 
@@ -69,11 +67,7 @@ function refuseForeign(path: string): void {
 }
 
 function isOurs(record: string): boolean {
-  try {
-    return JSON.parse(readFileSync(record, 'utf8')).maker === maker;
-  } catch {
-    return false;
-  }
+  return existsSync(record) && readRunRecord(readFileSync(record, 'utf8')) !== null;
 }
 
 function clearOurs(path: string): void {
