@@ -70,7 +70,9 @@ export function jsonOption(example: string, what: string): OptionRow {
 /** Reads a whole number of at least `least`, for options such as --workers. */
 export function wholeNumber(least: number): (text: string) => number {
   return (text) => {
-    const value = /^\d{1,15}$/.test(text) ? Number(text) : Number.NaN;
+    // Thin spaces between thousands, as this program prints them, are no mistake.
+    const digits = text.replace(/\s/gu, '');
+    const value = /^\d{1,15}$/.test(digits) ? Number(digits) : Number.NaN;
     if (!(value >= least)) throw new RangeError(`Give a whole number, at least ${least}.`);
     return value;
   };

@@ -1,4 +1,5 @@
 /** What a run found, for the terminal: counts, the designs put forward, what each requirement removes. Words and letters as in the report. */
+import { join } from 'node:path';
 import { columnPhrase, unitWord, valueText } from '../charts/figure-words.ts';
 import type { ReportData, ReportDesign, RequirementCount } from '../charts/report-data.ts';
 import { visibleText } from '../charts/visible-text.ts';
@@ -23,7 +24,7 @@ export function runSummary(report: ReportData, folder: string, seconds: number):
     ),
     candidateTable(candidates, report),
     requirementBlock(report),
-    `Report: ${folder}/report.html\nOne design in full: layshaft sheet ${report.studyFile} --design N`,
+    `Report: ${join(folder, 'report.html')}\nOne design in full: layshaft sheet ${report.studyFile} --design ${candidates[0]?.design.number ?? 0}`,
     cautionLine,
   ];
   return parts.filter((part) => part !== '').join('\n\n');
@@ -40,7 +41,8 @@ function headline({ study, counts }: ReportData, seconds: number): string {
 function candidateLine({ letter, design, rules }: Candidate, report: ReportData): string {
   const missed = report.requirements.filter((requirement) => !meets(requiredValue(design, requirement.metric, report), requirement));
   const misses = missed.length === 0 ? '' : `; misses ${missed.map((requirement) => shortfall(design, requirement, report)).join(', ')}`;
-  return `  ${letter ?? ' '}  design ${count(design.number)}: ${rules.join(', ')}${misses}`;
+  const why = design.number === 0 ? 'the reference' : rules.join(', ');
+  return `  ${letter ?? ' '}  design ${design.number}: ${why}${misses}`;
 }
 
 function shortfall(design: ReportDesign, requirement: RequirementCount, report: ReportData): string {
@@ -57,7 +59,7 @@ function requiredValue(design: ReportDesign, metric: string, report: ReportData)
 function candidateTable(candidates: readonly Candidate[], report: ReportData): string {
   const objectives = report.study.objectives.map(({ metric }) => metricColumn(report, metric));
   const inputs = report.columns.flatMap((column, index) => (column.role === 'metric' ? [] : [{ column, index }]));
-  const head = ['', '', ...candidates.map(({ letter, design }) => letter ?? `design ${count(design.number)}`)];
+  const head = ['', '', ...candidates.map(({ letter, design }) => letter ?? `design ${design.number}`)];
   const rows = [...objectives, ...inputs].map(({ column, index }) => [
     columnPhrase(column, report.study),
     column.labels === null ? unitWord(column.quantity, report.study) : '',
