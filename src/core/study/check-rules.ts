@@ -79,14 +79,27 @@ function checkGroups(check: RuleCheck): void {
 
 function checkNeeds(check: RuleCheck): void {
   const { stated, issues, only, option } = check;
+  const told = new Set<string>();
   for (const { names, when, hint } of needs) {
     const asked = when === undefined ? only === null : [...stated.stands.keys()].some((name) => name === when || name.startsWith(`${when}.`));
     if (!asked || names.some((name) => stated.stands.has(name) || stated.tried.has(name))) continue;
     if (only !== null && ![...only].some((name) => name === when || name.startsWith(`${when}.`))) continue;
     const path = names[0] as string;
+    if (tellMissingSection(path, check, told)) continue;
     const place = option ?? { at: nearestSection(path, stated), path };
     issues.error(place.at, place.path, { expected: names.join(' or '), found: names.length > 1 ? 'neither' : 'nothing', hint });
   }
+}
+
+/** A section that is missing as a whole is told once, instead of everything in it. */
+function tellMissingSection(path: string, { stated, issues }: RuleCheck, told: Set<string>): boolean {
+  const section = path.split('.')[0] as string;
+  if (section === path || stated.stands.has(section) || stated.tried.has(section)) return false;
+  const keys = needs.flatMap(({ names, when }) => (when === undefined ? names : [])).filter((name) => name.startsWith(`${section}.`));
+  const hint = `Add ${section}, and indented below it ${[...new Set(keys.map((name) => name.split('.')[1]))].join(', ')}; layshaft new FILE writes a commented example.`;
+  if (!told.has(section)) issues.error(0, section, { expected: `the section ${section}`, found: 'none', hint });
+  told.add(section);
+  return true;
 }
 
 /** Where something missing would stand: its section, or the start of the file. */

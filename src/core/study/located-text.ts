@@ -117,17 +117,18 @@ const syntaxHints: Partial<Record<YAMLParseError['code'], string>> = {
   BLOCK_AS_IMPLICIT_KEY: 'Put one "name: value" on each line, entries of a section indented below its name.',
   MULTILINE_IMPLICIT_KEY: 'A colon is missing on this line, or the line before belongs elsewhere: write "name: value".',
   MISSING_CHAR: 'Close the quotes or the bracket.',
-  BAD_SCALAR_START: 'Put the text in quotes.',
+  BAD_SCALAR_START: 'No value starts with this sign: write the number first, such as 97 %, or put a text in quotes.',
   UNEXPECTED_TOKEN: 'Remove the stray sign, or put the text in quotes.',
   BLOCK_IN_FLOW: 'Inside { } and [ ] separate entries by commas.',
 };
 
 function addSyntaxIssue(problem: YAMLParseError, issues: IssueList): void {
   const found = problem.message.split('\n')[0] as string;
+  const said = /followed by map values/u.test(found) ? syntaxHints.MULTILINE_IMPLICIT_KEY : syntaxHints[problem.code];
   issues.error(problem.pos[0], '', {
     expected: 'YAML that can be read',
     found,
-    hint: `${syntaxHints[problem.code] ?? 'Check the line, and the one above it.'} Everything else is checked once this can be read.`,
+    hint: `${said ?? 'Check the line, and the one above it.'} Everything else is checked once this can be read.`,
   });
 }
 
@@ -191,7 +192,7 @@ function locateEntries(pairs: readonly { key: ParsedNode; value: ParsedNode | nu
 
 function usableKey(key: string, first: number | undefined, at: number, path: string, issues: IssueList): boolean {
   if (first !== undefined) {
-    issues.error(at, path, { expected: 'each name once', found: `${clip(key)} again, after line ${issues.lineOf(first)}`, hint: 'Keep one of the two lines.' });
+    issues.error(at, path, { expected: 'each name once', found: `${clip(key)} again, after line ${issues.lineOf(first)}`, hint: 'Keep one of the two.' });
   } else if (key === '<<') {
     issues.error(at, path, { expected: 'a name', found: 'the merge key <<', hint: 'Write the values out; a study uses no merge keys.' });
   } else if (FORBIDDEN_KEYS.has(key)) {

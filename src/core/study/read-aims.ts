@@ -102,11 +102,13 @@ function readLimit(column: MetricColumn, value: Located, path: string, issues: I
 
 /** The metric of a name; null with an issue that says which there are. */
 function findMetric(name: string, at: number, path: string, context: AimsContext): MetricColumn | null {
-  const { issues, broken, columns } = context;
+  const { issues, trials, broken, columns } = context;
   const trial = name.slice(0, Math.max(0, name.indexOf('.')));
   if (broken.has(trial)) return null;
   const column = columns.find((candidate) => candidate.name === name);
   if (column !== undefined) return canExist(column, at, path, context) ? column : null;
+  // Without any trial the missing trials are told already.
+  if (trials.length === 0) return null;
   issues.error(at, path, {
     expected: 'a metric of this study: <trial>.<metric>, or one of the whole design',
     found: clip(name),
@@ -168,7 +170,9 @@ export function readTradeOff(part: Located | undefined, context: AimsContext): {
   const entry = (name: string) => part.entries.find(({ key }) => key === name)?.value;
   const aimed = [...readMetricList(entry('minimise'), 'minimise', context), ...readMetricList(entry('maximise'), 'maximise', context)];
   const once = aimed.filter((metric, index) => isFirst(metric, index, aimed, issues));
-  const listsHold = issues.errorCount === before;
+  const written = ['minimise', 'maximise'].map(entry).reduce((sum, list) => sum + (list?.kind === 'list' ? list.items.length : 0), 0);
+  // An item may be left out without an error of its own: its trial has one.
+  const listsHold = issues.errorCount === before && written === aimed.length;
   if (aimed.length === 0 && listsHold) {
     issues.error(part.at, 'tradeOff', { expected: 'at least one objective', found: 'none', hint: 'List metrics under minimise or maximise.' });
   }

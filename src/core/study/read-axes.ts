@@ -123,6 +123,7 @@ function hasReference(name: string, { values, stands }: AxesContext): boolean {
 
 /** A figure that is there but wrong, or a trial that is: the mistake itself is told. */
 function toldAlready(name: string, { values, stands, tried, broken }: AxesContext): boolean {
+  if (!name.startsWith('trials.') && findParameter(name) !== undefined && !stands.has(name.split('.')[0] as string)) return true;
   if (broken.has(/^trials\.([^.]*)\./u.exec(name)?.[1] ?? '')) return true;
   return values[name] === undefined && findParameter(name) !== undefined && tried.has(name) && ruledOutBy(name, stands.keys()) === undefined;
 }
@@ -243,7 +244,7 @@ function readSteps(value: Located, path: string, issues: IssueList): number | nu
   const steps = /^\d{1,12}$/u.test(text) ? Number(text) : Number.NaN;
   if (steps >= 2) return steps;
   const found = value.kind === 'text' ? clip(text) || 'nothing' : 'no number';
-  const hint = text === '1' ? 'A single point is no range: remove it from vary.' : 'The points lie evenly from from to to, both included.';
+  const hint = text === '1' ? 'A single point is no range: remove it from vary.' : 'Write how many points the range has, both ends included.';
   issues.error(value.at, path, { expected: 'a whole number of at least 2', found, hint });
   return null;
 }

@@ -44,11 +44,13 @@ export interface Reading {
 
 /** Reads a section; everything goes into `reading.found`, every mistake into `reading.issues`. */
 export function readPlaces(map: LocatedMap, place: Place, reading: Reading): void {
-  for (const { key, at, value } of map.entries) {
+  map.entries.forEach(({ key, at, value }, index) => {
     const child = place.children.get(key);
+    const next = map.entries[index + 1];
     if (child === undefined) unknownKey(key, at, value, place, reading);
+    else if (next !== undefined && isCutOff(next)) reading.found.tried.add(reading.prefix + child.path);
     else readPlace(at, value, child, reading);
-  }
+  });
 }
 
 /** Reads one value at its place of the layout. */
@@ -133,7 +135,11 @@ function readText(value: Located & { kind: 'text' }, row: TextRow, path: string,
     issues.error(value.at, path, { expected: `at most ${longest} characters`, found: `${value.text.length} characters`, hint: 'Shorten the text.' });
   } else if (choices !== undefined && !choices.includes(value.text)) {
     const near = issues.nearest(value.text, choices);
-    issues.error(value.at, path, { expected: choices.join(', '), found: clip(value.text), hint: near === null ? row.sentence : `Did you mean ${near}?` });
+    issues.error(value.at, path, {
+      expected: choices.join(', '),
+      found: clip(value.text),
+      hint: near === null ? `Write one of these words. ${row.sentence}` : `Did you mean ${near}?`,
+    });
   } else {
     found.texts.set(path, { at: value.at, text: value.text.trim() });
   }
@@ -143,8 +149,9 @@ function readText(value: Located & { kind: 'text' }, row: TextRow, path: string,
 function readPair(list: LocatedList, place: Place, reading: Reading): void {
   const path = reading.prefix + place.path;
   if (!hasPair(place)) {
-    const hint = place.parameter === null ? '' : `To try several values write them under vary: "${path}: { oneOf: […] }".`;
-    reading.issues.error(list.at, path, { expected: place.parameter === null ? keysOf(place) : 'one figure', found: 'a list', hint });
+    const expected = place.parameter !== null ? 'one figure' : place.text !== null ? 'a text' : keysOf(place);
+    const vary = `To try several values write them under vary: "${path}: { oneOf: […] }".`;
+    reading.issues.error(list.at, path, { expected, found: 'a list', hint: place.parameter === null ? 'Write it without brackets.' : vary });
     return;
   }
   if (list.items.length !== 2) {
@@ -167,18 +174,24 @@ function unknownKey(key: string, at: number, value: Located, place: Place, readi
   if (near !== null) reading.found.tried.add(`${reading.prefix}${place.path === '' ? '' : `${place.path}.`}${near}`);
   const inside = reading.prefix + place.path;
   const path = inside === '' || inside.endsWith('.') ? inside + key : `${inside}.${key}`;
-  const cut = value.kind === 'text' && value.text === '' && /^\d/u.test(key);
-  const hint = cut
+  const hint = isCutOff({ key, value })
     ? 'Inside { } a comma starts the next entry: numbers go without commas.'
     : (reading.explain?.(key) ?? (near !== null ? `Did you mean ${near}?` : elsewhere(key, path)));
   const where = inside === '' ? 'a section or entry of a study' : `an entry of ${inside.replace(/\.$/u, '')}`;
   reading.issues.error(at, path, { expected: `${where}: ${names.join(', ')}`, found: clip(key), hint });
 }
 
+/** The rest of a number after a comma inside braces: `{ fixed: 1,200 kg }`. What stands before it is not judged. */
+function isCutOff({ key, value }: { readonly key: string; readonly value: Located }): boolean {
+  return value.kind === 'text' && value.text === '' && /^\d/u.test(key);
+}
+
 /** Where a known name stands when it is not here. */
 function elsewhere(key: string, path: string): string {
   const known = parameters.find(({ name }) => name === key) ?? parameters.find(({ name }) => name.endsWith(`.${key}`) || name.includes(`.${key}.`));
   if (known === undefined) return 'Remove it, or check the indentation.';
+  if (key.includes('.'))
+    return `Dotted names belong under vary, requirements and with; here write ${key.split('.').pop()} indented below ${key.split('.').slice(0, -1).join(', ')}.`;
   const section = known.name
     .split('.')
     .slice(0, known.name.split('.').indexOf(key.split('.').pop() as string))

@@ -209,4 +209,17 @@ export const brokenStudies: readonly BrokenStudy[] = [
     ],
     ['39:60', 'trials.trunk.headWind', 'line 5', 'still air'],
   ),
+  broken(
+    'a whole section is missing',
+    [[/\ngearing:[\s\S]*?(?=\nbattery:)/u.exec(harbour)?.[0] as string, '']],
+    ['1:1', 'the section gearing', 'ratio, ratios, efficiency'],
+  ),
+  broken('a colon is missing', [['  auxiliaries: 420 W', '  auxiliaries 420 W']], ['11:3', 'A colon is missing']),
+  broken('a comma within braces', [['wheelbase: 3.06 m,', 'wheelbase: 3,06 m,']], ['9:80', '06 m', 'numbers go without commas']),
+  broken(
+    'trials as a list',
+    [[/trials:[\s\S]*?(?=vary:)/u.exec(harbour)?.[0] as string, 'trials: [sprint, ramp]\n']],
+    ['31:9', 'trials', 'climb: { kind: hill start }'],
+  ),
+  broken('a text in brackets', [['title: Harbour parcel van', 'title: [Harbour parcel van]']], ['1:8', 'a text', 'without brackets']),
 ];
