@@ -3,6 +3,7 @@ import { neededDecimals, unitWord } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { ComputedDesign, DesignMetric, Setting } from '../core/search/design-bench.ts';
 import { cautionLine } from '../core/study/cautions.ts';
+import type { OptionChoice } from '../core/study/read-setting.ts';
 import type { Study, Trial } from '../core/study/study.ts';
 import { boundWords, meets, valueAgainst } from '../page/wording.ts';
 import { count, figureCells } from './figure-text.ts';
@@ -17,6 +18,7 @@ type Align = 'left' | 'right';
 export interface DesignSheet extends ComputedDesign {
   readonly study: Study;
   readonly settings: readonly Setting[];
+  readonly choices: readonly OptionChoice[];
 }
 
 /** Cycles that stand side by side. */
@@ -49,7 +51,7 @@ function block(title: string, rows: readonly (readonly string[])[], align: reado
 
 function whichDesign(sheet: DesignSheet): string {
   const base = sheet.number === 0 ? "Design 0, the reference: the study's own figures" : `Design ${count(sheet.number)} of the search`;
-  const names = sheet.settings.map((setting) => setting.name);
+  const names = [...sheet.choices.map(({ list }) => visibleText(list)), ...sheet.settings.map(({ name }) => name)];
   return names.length === 0 ? base : `${base}, with ${names.join(', ')} set`;
 }
 

@@ -1,9 +1,10 @@
 /** `layshaft sheet`: one design, every trial. */
-import { type ComputedDesign, createBench, machineSheet, type Setting } from '../core/search/design-bench.ts';
-import { readSetting } from '../core/study/read-setting.ts';
+import { chooseDesign } from '../core/search/choose-design.ts';
+import { createBench, machineSheet, type Setting } from '../core/search/design-bench.ts';
+import { createSearch } from '../core/search/search.ts';
+import { type OptionChoice, readChoice, readSetting } from '../core/study/read-setting.ts';
 import type { Study } from '../core/study/study.ts';
 import { type CommandRow, type ExitStatus, exitStatus, jsonOption, type OptionValues, wholeNumber } from './command.ts';
-import { count } from './figure-text.ts';
 import { openStudy, warningSentence } from './open-study.ts';
 import { sheetText } from './sheet-text.ts';
 import { complain, giveJson, say } from './terminal.ts';
@@ -22,8 +23,8 @@ export const sheetCommand: CommandRow = {
       name: 'set',
       value: 'NAME=VALUE',
       many: true,
-      sentence: 'Replaces a number of the study by its dotted name, with its unit; may be given several times.',
-      example: "layshaft sheet my-van.yaml --set gearing.ratio=10.2 --set 'motor.peakTorque=240 N·m'",
+      sentence: 'Replaces a number of the study by its dotted name, with its unit, or chooses an option by the name of its list; may be given several times.',
+      example: "layshaft sheet my-van.yaml --set gearing.ratio=10.2 --set 'motor on offer=slow-wound'",
     },
     {
       name: 'design',
@@ -41,43 +42,54 @@ export const sheetCommand: CommandRow = {
 async function printSheet(file: string, options: OptionValues): Promise<ExitStatus> {
   const opened = openStudy(file);
   if (opened === null) return exitStatus.wrong;
-  const settled = applySettings(opened.study, (options['set'] ?? []) as readonly string[]);
-  if (settled === null) return exitStatus.wrong;
   const number = (options['design'] ?? 0) as number;
-  const design = computeDesign(settled.study, number, settled.settings);
-  if (design === null) return exitStatus.wrong;
+  if (!hasDesign(opened.study, number)) return exitStatus.wrong;
+  const settled = applySettings(opened.study, number, (options['set'] ?? []) as readonly string[]);
+  if (settled === null) return exitStatus.wrong;
+  const design = createBench(settled.study).compute(number, settled.settings, settled.choices);
+  if (design === null) throw new Error(`there is no design ${number}`);
   const warnings = opened.warnings.map((warning) => warningSentence(warning, opened));
   if (options['json'] === true) giveJson(machineSheet(design));
   else say(sheetText({ ...design, ...settled }, warnings));
   return exitStatus.done;
 }
 
-/** The study with every setting in it, or null after saying all that is wrong with them. The last of two for one name holds. */
-function applySettings(study: Study, texts: readonly string[]): { study: Study; settings: Setting[] } | null {
+/** A design as a study of its own, with every setting in it. */
+interface Settled {
+  readonly study: Study;
+  readonly settings: readonly Setting[];
+  readonly choices: readonly OptionChoice[];
+}
+
+/**
+ * The design with options chosen and figures set, or null after saying all that is wrong with them. Options come first, figures on
+ * top; the last of two for one name holds.
+ */
+function applySettings(study: Study, number: number, texts: readonly string[]): Settled | null {
+  const read = texts.map((text) => ({ text, chosen: readChoice(study, text) }));
+  const choices = read.flatMap(({ chosen }) => (chosen?.ok === true ? chosen.choice : []));
+  const problems = read.flatMap(({ chosen }) => (chosen?.ok === false ? chosen.message : []));
   const settings = new Map<string, Setting>();
-  const problems: string[] = [];
-  let settled = study;
-  for (const text of texts) {
-    const read = readSetting(settled, text);
-    if (!read.ok) problems.push(read.message);
+  let settled = chooseDesign(study, number, choices);
+  for (const { text, chosen } of read) {
+    if (chosen !== null) continue;
+    const figure = readSetting(settled, text);
+    if (!figure.ok) problems.push(figure.message);
     else {
-      settled = read.study;
-      settings.set(read.name, { name: read.name, value: read.value });
+      settled = figure.study;
+      settings.set(figure.name, { name: figure.name, value: figure.value });
     }
   }
   for (const problem of problems) complain(`--set ${problem}`);
-  return problems.length > 0 ? null : { study: settled, settings: [...settings.values()] };
+  return problems.length > 0 ? null : { study: settled, settings: [...settings.values()], choices };
 }
 
-/** The design of a number; null after saying which numbers there are. */
-function computeDesign(study: Study, number: number, settings: readonly Setting[]): ComputedDesign | null {
-  const bench = createBench(study);
-  const design = bench.compute(number, settings);
-  if (design !== null) return design;
+/** Says which numbers there are where there is no such design. */
+function hasDesign(study: Study, number: number): boolean {
+  const designs = createSearch(study).count;
+  if (number <= designs) return true;
   const range =
-    bench.last === 0
-      ? 'Nothing varies in this study: it has design 0 only'
-      : `The search of this study has designs 1 to ${count(bench.last)}; 0 is the reference`;
-  complain(`there is no design ${count(number)}. ${range}.`);
-  return null;
+    designs === 0 ? 'Nothing varies in this study: it has design 0 only' : `The search of this study has designs 1 to ${designs}; 0 is the reference`;
+  complain(`there is no design ${number}. ${range}.`);
+  return false;
 }

@@ -41,7 +41,7 @@ function sheetWith(results: Readonly<Record<string, [number, LimitWord?]>>, of: 
     return { column, value, limit: limit ?? ('' as const) };
   });
   const inputs = [{ name: 'gearing.ratio', row: findParameter('gearing.ratio') as ParameterRow, value: 9.5 }];
-  return { study: of, number: 0, settings: [], inputs, metrics };
+  return { study: of, number: 0, settings: [], choices: [], inputs, metrics };
 }
 
 const usual = {

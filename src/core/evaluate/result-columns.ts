@@ -1,7 +1,7 @@
 /** Which figures of a design a run stores and shows: varied inputs, objectives, required metrics, and what `keep` names. */
 import { type MetricColumn, type MetricRow, machineKey } from '../study/metrics.ts';
 import { findParameter, type ParameterRow } from '../study/parameters.ts';
-import type { Study } from '../study/study.ts';
+import type { Axis, Study } from '../study/study.ts';
 import { fromSi, machineUnit, type Quantity } from '../units/units.ts';
 
 /** One stored column. `option` columns hold the index of the point on their axis, whose names are `labels`. */
@@ -24,17 +24,23 @@ export interface ResultColumn {
 export function resultColumns(study: Study, metrics: readonly MetricColumn[]): ResultColumn[] {
   const wanted = new Set([...study.objectives.map((o) => o.metric), ...study.requirements.map((r) => r.metric), ...study.keep]);
   const byName = new Map(metrics.map((column) => [column.name, column]));
-  return [...study.axes.map(inputColumn), ...[...wanted].map((name) => metricColumn(byName.get(name), name))];
+  return [...study.axes.flatMap(inputColumns), ...[...wanted].map((name) => metricColumn(byName.get(name), name))];
+}
 
-  function inputColumn(axis: Study['axes'][number]): ResultColumn {
-    if (axis.labels !== null) {
-      return { key: axis.name, name: axis.name, role: 'option', quantity: 'number', decimals: 0, label: axis.name, better: null, labels: axis.labels };
-    }
-    const parameter = findParameter(axis.name) as ParameterRow;
-    const label = axis.name.startsWith('trials.') ? axis.name.slice('trials.'.length) : parameter.label;
-    const { quantity, decimals } = parameter;
-    return { key: machineKey(axis.name, quantity), name: axis.name, role: 'input', quantity, decimals, label, better: null, labels: null };
-  }
+/** Options are one column with their names; numbers that vary together (two ratios) have one each. */
+function inputColumns({ name, sets, labels }: Axis): ResultColumn[] {
+  if (labels !== null) return [{ key: name, name, role: 'option', quantity: 'number', decimals: 0, label: name, better: null, labels }];
+  return sets.map((set) => {
+    const { quantity, decimals, label } = findParameter(set) as ParameterRow;
+    const shown = set.startsWith('trials.') ? set.slice('trials.'.length) : label;
+    return { key: machineKey(set, quantity), name: set, role: 'input', quantity, decimals, label: shown, better: null, labels: null };
+  });
+}
+
+/** The axis that a column of inputs or options belongs to; undefined for a metric. */
+export function axisOf({ name, role }: Pick<ResultColumn, 'name' | 'role'>, { axes }: Pick<Study, 'axes'>): Axis | undefined {
+  if (role === 'metric') return undefined;
+  return axes.find((axis) => (role === 'option' ? axis.labels !== null && axis.name === name : axis.labels === null && axis.sets.includes(name)));
 }
 
 /**

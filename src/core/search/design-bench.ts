@@ -4,7 +4,8 @@ import { type LimitWord, limitWords } from '../evaluate/evaluator.ts';
 import { machineValue } from '../evaluate/result-columns.ts';
 import { type MetricColumn, machineKey } from '../study/metrics.ts';
 import { findParameter, type ParameterRow } from '../study/parameters.ts';
-import type { Study } from '../study/study.ts';
+import type { OptionChoice } from '../study/read-setting.ts';
+import type { Axis, Study } from '../study/study.ts';
 import { createSearch } from './search.ts';
 
 /** A figure set for one computation, SI. */
@@ -13,7 +14,7 @@ export interface Setting {
   readonly value: number;
 }
 
-/** A number of the design (SI), or the choice among named options; the reference design makes none (null). */
+/** A number of the design (SI); or the choice among named options, none in the reference design (null); or a file that an option brings. */
 export type DesignInput =
   | { readonly name: string; readonly row: ParameterRow; readonly value: number }
   | { readonly name: string; readonly row: null; readonly option: string | null };
@@ -46,9 +47,9 @@ export interface DesignBench {
   readonly last: number;
   /**
    * Null where there is no design of that number. Settings are figures that the study holds already; given here too, they go
-   * before the design's own and are told among the inputs.
+   * before the design's own and are told among the inputs. Options chosen go before the design's, and settings before them.
    */
-  compute(number: number, settings?: readonly Setting[]): ComputedDesign | null;
+  compute(number: number, settings?: readonly Setting[], choices?: readonly OptionChoice[]): ComputedDesign | null;
 }
 
 /** Compiles the study once; each design afterwards takes milliseconds. */
@@ -62,16 +63,30 @@ export function createBench(study: Study): DesignBench {
   function inputsOf(row: Float64Array, settings: readonly Setting[]): DesignInput[] {
     const varied = study.axes.flatMap(({ name, sets, labels }, axis): DesignInput[] => [
       ...(labels === null ? [] : [{ name, row: null, option: labels[points[axis] as number] ?? null }]),
-      ...sets.flatMap((set) => numberInput(set, row[evaluator.inputs.indexOf(set)] as number)),
+      ...sets.flatMap((set) => inputOf(set, row[evaluator.inputs.indexOf(set)] as number)),
     ]);
     const set = settings.filter(({ name }) => !evaluator.inputs.includes(name)).flatMap(({ name, value }) => numberInput(name, value));
     if (varied.length + set.length > 0) return [...varied, ...set];
     return Object.entries(study.values).flatMap(([name, value]) => numberInput(name, value));
   }
 
+  /** A measured curve or map that an option brings is told by its file. */
+  function inputOf(name: string, value: number): DesignInput[] {
+    const files = name === 'motor.fullLoad' ? study.optionCurves : name === 'motor.map' ? study.optionMaps : null;
+    if (files === null) return numberInput(name, value);
+    return Number.isNaN(value) ? [] : [{ name, row: null, option: files[value]?.file ?? null }];
+  }
+
+  function choose(row: Float64Array, list: string, point: number): void {
+    const axis = study.axes.findIndex(({ name }) => name === list);
+    const { sets, points: all } = study.axes[axis] as Axis;
+    for (const [k, set] of sets.entries()) row[evaluator.inputs.indexOf(set)] = all[point]?.[k] as number;
+    points[axis] = point;
+  }
+
   return {
     last: search.count,
-    compute(number, settings = []) {
+    compute(number, settings = [], choices = []) {
       if (!Number.isInteger(number) || number < 0 || number > search.count) return null;
       const row = Float64Array.from(evaluator.reference);
       points.fill(-1);
@@ -79,6 +94,7 @@ export function createBench(study: Study): DesignBench {
         search.inputs(number, row, 0);
         search.points(number, points);
       }
+      for (const { list, point } of choices) choose(row, list, point);
       for (const { name, value } of settings) if (evaluator.inputs.includes(name)) row[evaluator.inputs.indexOf(name)] = value;
       evaluator.evaluate(row, 0, metrics, 0, limits);
       return {
@@ -90,7 +106,7 @@ export function createBench(study: Study): DesignBench {
   };
 }
 
-/** Nothing for a number that plays no part in the design, and for what is no number at all (a measured curve or map). */
+/** Nothing for a number that plays no part in the design. */
 function numberInput(name: string, value: number): DesignInput[] {
   const row = findParameter(name);
   return row === undefined || Number.isNaN(value) ? [] : [{ name, row, value }];

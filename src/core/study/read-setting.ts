@@ -35,6 +35,39 @@ export function readSetting(study: Study, text: string): SettingRead {
   return disorder === null ? { ok: true, study: { ...study, values }, name, value: read.value } : { ok: false, message: disorder };
 }
 
+/** An option chosen by hand: the list, and the index of the option in it. */
+export interface OptionChoice {
+  readonly list: string;
+  readonly point: number;
+}
+
+/** Reads `list=option`; null where the text names no list of the study: it is a figure then. */
+export function readChoice(
+  study: Study,
+  text: string,
+): { readonly ok: true; readonly choice: OptionChoice } | { readonly ok: false; readonly message: string } | null {
+  const sign = text.indexOf('=');
+  const [list, option] = [text.slice(0, Math.max(0, sign)).trim(), text.slice(sign + 1).trim()];
+  const lists = study.axes.filter(({ labels }) => labels !== null);
+  const axis = lists.find(({ name }) => name === list);
+  if (axis === undefined) {
+    const near =
+      findParameter(list) === undefined
+        ? nearestName(
+            list,
+            lists.map(({ name }) => name),
+          )
+        : null;
+    return near === null ? null : { ok: false, message: `${clip(list)} is neither a number nor a list of options. Did you mean ${near}?` };
+  }
+  const labels = axis.labels ?? [];
+  const point = labels.indexOf(option);
+  if (point >= 0) return { ok: true, choice: { list, point } };
+  const near = nearestName(option, labels);
+  const hint = near === null ? `There are ${clip(labels.slice(0, 12).join(', '), 200)}.` : `Did you mean ${near}?`;
+  return { ok: false, message: `${list}: expected one of its options, found ${clip(option) || 'nothing'}. ${hint}` };
+}
+
 /** What the study states, as the rules name it: numbers, and the texts and files that stand for some. */
 function statedNames({ values, fullLoad, lossMap, trials }: Study): string[] {
   const measured = [
