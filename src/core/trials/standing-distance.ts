@@ -24,7 +24,7 @@ const SETTLED = 1e-10;
 const STRIDE = 0.75;
 /** Share of the distance within which the end is found by its last slope, and rounds of coming closer at most. */
 const CLOSE = 1e-7;
-const ROUNDS = 12;
+const ROUNDS = 50;
 
 /**
  * Time and end speed over a distance from rest, with two ratios over the shift. Speed is held at maximum motor speed; where net
@@ -124,8 +124,11 @@ function guessMPerS(pull: Pull, before: Motion, beyond: Motion, distanceM: numbe
   const rest = 1 - share;
   const slope = (motion: Motion) => (2 * spanM * pull.netForceN(motion.speedMPerS)) / pull.effectiveMassKg;
   const [low, high] = [before.speedMPerS * before.speedMPerS, beyond.speedMPerS * beyond.speedMPerS];
-  const cubic = rest * rest * (low * (1 + 2 * share) + slope(before) * share) + share * share * (high * (1 + 2 * rest) - slope(beyond) * rest);
-  const line = rest * low + share * high;
-  const inside = (cubic - low) * (high - cubic) > 0;
-  return Math.sqrt(inside ? cubic : line);
+  const rise = slope(before);
+  const cubic = rest * rest * (low * (1 + 2 * share) + rise * share) + share * share * (high * (1 + 2 * rest) - slope(beyond) * rest);
+  const inside = (square: number) => (square - low) * (high - square) > 0;
+  if (inside(cubic)) return Math.sqrt(cubic);
+  // Far into the approach to a steady speed the cubic overshoots.
+  const line = low + rise * share;
+  return inside(line) ? Math.sqrt(line) : 0.5 * (before.speedMPerS + beyond.speedMPerS);
 }
