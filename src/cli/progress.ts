@@ -15,8 +15,10 @@ export interface Standing {
 /** Something that shows progress until it is told to stop. */
 export interface Progress {
   update(standing: Standing): void;
-  /** Leaves the line as it stands, or says the last one. */
+  /** Takes the moving line away and says how it ended. */
   end(): void;
+  /** Takes the moving line away, so that a message starts on a line of its own. */
+  abandon(): void;
 }
 
 const movingEveryMs = 100;
@@ -64,7 +66,12 @@ export function startProgress(total: number, now: () => number = Date.now): Prog
     else say(progressText(last, elapsed));
   }
 
+  function abandon(): void {
+    if (moving) process.stderr.write(`\r${clearLine}`);
+  }
+
   return {
+    abandon,
     update(standing) {
       last = standing;
       if (now() - shown < (moving ? movingEveryMs : plainEveryMs)) return;
@@ -72,7 +79,7 @@ export function startProgress(total: number, now: () => number = Date.now): Prog
       draw();
     },
     end() {
-      if (moving) process.stderr.write(`\r${clearLine}`);
+      abandon();
       say(progressText(last, now() - began));
     },
   };

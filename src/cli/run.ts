@@ -128,6 +128,7 @@ async function runOne(opened: OpenStudy, folder: string, options: OptionValues):
     const status = report.counts.feasible > 0 ? exitStatus.done : exitStatus.nothingFeasible;
     return { status, entry: { study: file, status, folder, seconds, ...summaryOf(report) } };
   } catch (error) {
+    progress.abandon();
     if (!(error instanceof RunProblem)) throw error;
     complain(`${file}: ${error.message}. ${error.hint}`);
     return { status: exitStatus.failed, entry: { study: file, status: exitStatus.failed, problem: error.message } };
