@@ -45,7 +45,7 @@ export function runFolderName(studyFile: string): string {
  * Makes the folder ready for a new run: there, ours by the record in its run.json, and free of an earlier run's files. Throws
  * RunProblem. The record is written before anything is made or cleared: a crash at any moment leaves a folder that is still ours.
  */
-export function openRunFolder(path: string, record: object): RunFolder {
+export function openRunFolder(path: string, record: Omit<RunRecord, 'maker'>): RunFolder {
   try {
     if (existsSync(path)) refuseForeign(path);
     mkdirSync(path, { recursive: true });

@@ -6,6 +6,7 @@ import { openRunFolder, runFolderName } from '../../src/run/run-folder.ts';
 import { writeWhole } from '../../src/run/write-whole.ts';
 
 const folder = mkdtempSync(join(tmpdir(), 'layshaft-write-'));
+const record = { state: 'running', version: '0.0.0', node: 'v20.19.0', study: 'a.yaml', title: 'A', started: '2026-01-01T00:00:00.000Z', workers: 1 } as const;
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
 test('a file is replaced as a whole and nothing is left beside it', () => {
@@ -23,12 +24,12 @@ test('a file that cannot be written keeps its old content and names the reason',
 
 test('opening a run folder clears what a crash left of an earlier run, and only that', () => {
   const path = join(folder, 'run');
-  const run = openRunFolder(path, { state: 'running' });
+  const run = openRunFolder(path, record);
   run.write('designs/part-00000.parquet', new Uint8Array(3));
   writeFileSync(join(path, 'designs', 'part-00001.parquet.tmp'), 'half');
   writeFileSync(join(path, 'designs', 'mine.txt'), 'mine');
   writeFileSync(join(path, 'charts', 'our own.svg'), 'mine');
-  openRunFolder(path, { state: 'running' });
+  openRunFolder(path, record);
   expect(readdirSync(join(path, 'designs'))).toEqual(['mine.txt']);
   expect(readdirSync(join(path, 'charts'))).toEqual(['our own.svg']);
 });
@@ -39,10 +40,10 @@ test('the run folder is named after the study file', () => {
 
 test('a folder is ours from its first moment, so that a crash in opening it never locks the next run out', () => {
   const path = join(folder, 'opened');
-  openRunFolder(path, { state: 'running' }).write('front.csv', 'number');
-  expect(JSON.parse(readFileSync(join(path, 'run.json'), 'utf8'))).toEqual({ maker: 'layshaft', state: 'running' });
-  openRunFolder(path, { state: 'again' });
-  expect(JSON.parse(readFileSync(join(path, 'run.json'), 'utf8'))).toEqual({ maker: 'layshaft', state: 'again' });
+  openRunFolder(path, record).write('front.csv', 'number');
+  expect(JSON.parse(readFileSync(join(path, 'run.json'), 'utf8'))).toEqual({ maker: 'layshaft', ...record });
+  openRunFolder(path, { ...record, title: 'Again' });
+  expect(JSON.parse(readFileSync(join(path, 'run.json'), 'utf8'))).toEqual({ maker: 'layshaft', ...record, title: 'Again' });
   expect(readdirSync(path).sort()).toEqual(['charts', 'designs', 'run.json']);
 });
 
