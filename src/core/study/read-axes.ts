@@ -10,7 +10,7 @@ import { orders, ruledOutBy } from './rules.ts';
 import type { Axis, Search } from './study.ts';
 
 /** More points than a person would list on one axis. */
-const MOST_POINTS = 100_000;
+const MOST_POINTS = 10_000;
 const KEYS = ['from', 'to', 'steps', 'step', 'oneOf'];
 /** Keys that belong to the methods to come. */
 const SAMPLING_KEYS = ['designs', 'seed'];
