@@ -83,7 +83,7 @@ describe('signChanges', () => {
   });
 
   it('finds a close pair of roots between two of the points it looks at', () => {
-    const pairs = fc.record({ at: numbers(0.15, 0.85), apart: numbers(1e-5, 0.1), bend: numbers(-0.5, 0.5), upright: fc.constantFrom(1, -1) });
+    const pairs = fc.record({ at: numbers(0.01, 0.89), apart: numbers(1e-5, 0.1), bend: numbers(-0.5, 0.5), upright: fc.constantFrom(1, -1) });
     fc.assert(
       fc.property(pairs, ({ at, apart, bend, upright }) => {
         const f = (x: number) => upright * (x - at) * (x - at - apart) * (1 + bend * x);

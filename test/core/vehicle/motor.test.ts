@@ -83,6 +83,8 @@ describe('peakTorqueLimitNm', () => {
   it('takes the stated reference of a curve before its own points', () => {
     const stated = fullLoadCurve([100, 500], [200, 180], 250, 400);
     expect(stated).toMatchObject({ referencePeakTorqueNm: 250, referenceBaseSpeedRadPerS: 400 });
+    // Largest power 90 kW over the largest torque of the points, whatever peak torque is stated.
+    expect(fullLoadCurve([100, 500], [200, 180], 250)).toMatchObject({ referencePeakTorqueNm: 250, referenceBaseSpeedRadPerS: 450 });
   });
 });
 

@@ -1,6 +1,7 @@
 /** Break speeds: where they must be, and that nothing bends between them. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { signChange } from '../../../src/core/numerics/roots.ts';
 import { maxVehicleSpeedMPerS } from '../../../src/core/vehicle/gearing.ts';
 import { resistanceN, slopeOf } from '../../../src/core/vehicle/road-load.ts';
 import { tractiveForceN } from '../../../src/core/vehicle/traction.ts';
@@ -60,6 +61,14 @@ describe('tractionBreakSpeeds', () => {
     expect(found).toHaveLength(2);
     const wider = tractiveForceN({ ...vehicle, axles: noGrip }, 0, found[1], 'peak', flat);
     expect(tractiveForceN(vehicle, 0, found[1], 'peak', flat)).toBeCloseTo(wider, 6);
+  });
+
+  it('finds it also where adhesion holds back only a little', () => {
+    // Front drive: 0.9 of the force of full torque, of which drag takes 0.3 %.
+    const fullN = (270 * 9.5 * 0.97) / 0.333;
+    const perAdhesion = (share: number) => tractiveForceN({ ...free, axles: sampleAxles({ adhesion: share }) }, 0, 0, 'peak', flat);
+    const adhesion = signChange((share) => perAdhesion(share) - 0.9 * fullN, 0.2, 0.9);
+    expect(tractionBreakSpeeds({ ...free, axles: sampleAxles({ adhesion }) }, 0, 'peak', flat, 0, 30)).toHaveLength(2);
   });
 
   it('finds the speed at which a tail wind and the vehicle are level', () => {
