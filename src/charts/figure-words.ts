@@ -1,15 +1,20 @@
 /** Columns and figures in the words and units people read, the same on charts and in the page. */
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
 import type { Study } from '../core/study/study.ts';
-import { formatFigure, formatQuantity } from '../core/units/format-quantity.ts';
+import { exactDecimals, formatFigure, formatLimit, formatQuantity, readingDecimals } from '../core/units/format-quantity.ts';
 import { fromSi, type Quantity, readingUnit } from '../core/units/units.ts';
 import { shortText } from './visible-text.ts';
 
-/** What has a quantity and decimals: a column, a metric, a parameter. */
+/** What has a quantity, and decimals for readers of SI: a column, a metric, a parameter. */
 export interface Measured {
   readonly quantity: Quantity;
   readonly decimals: number;
 }
+
+/** Value of an option column where a design has none of the options: the reference. */
+export const noOption = -1;
+/** What people read there. */
+export const ownFigures = "the study's own";
 
 /** What a column tells: the measure, and the trial it is measured in (null: of the design itself). Study text is not yet made visible. */
 export function columnWords(column: Pick<ResultColumn, 'name' | 'label' | 'role'>, study: Study): { measure: string; trial: string | null } {
@@ -50,16 +55,41 @@ export function withCurrency(text: string, quantity: Quantity, study: Study): st
 
 /** A value of a column: the option's name, or a figure with its unit; an input in no more decimals than it needs. */
 export function valueText(value: number | null, column: ResultColumn, study: Study): string {
-  if (column.labels !== null) return value === null ? '—' : shortText(column.labels[value] ?? '—', 60);
-  if (column.role === 'metric' || value === null) return figureText(value, column, study);
-  return figureText(value, { quantity: column.quantity, decimals: neededDecimals(value, column, study) }, study);
+  if (column.labels !== null) return optionText(value, column.labels, 60);
+  return column.role === 'metric' ? figureText(value, column, study) : inputText(value, column, study);
 }
 
-/** The fewest decimals that show a value exactly, to twelve digits, and never more than are usual for it. */
+/** An option by its name, cut to a length; the reference has the study's own figures instead. */
+export function optionText(value: number | null, labels: readonly string[], longest: number): string {
+  return shortText(labels[value ?? Number.NaN] ?? ownFigures, longest);
+}
+
+/** A number of the study in no more decimals than it needs, and never more than are usual for it. */
+export function inputText(value: number | null, measured: Measured, study: Study): string {
+  if (value === null || Number.isNaN(value)) return '—';
+  return withUnit(figureAlone(value, measured, neededDecimals(value, measured, study), study), measured, study);
+}
+
+/** A figure without its unit, in a number of decimals of the unit people read. */
+export function figureAlone(value: number, { quantity }: Measured, decimals: number, study: Study): string {
+  return formatFigure(fromSi(value, readingUnit(quantity, study.report.units)), decimals);
+}
+
+/** A figure and its unit, held together. */
+export function withUnit(figure: string, { quantity }: Measured, study: Study): string {
+  const unit = unitWord(quantity, study);
+  return unit === '' ? figure : `${figure}\u202f${unit}`;
+}
+
+/** A number as its study gives it or as a limit: every decimal it was written with. */
+export function givenText(value: number, { quantity, decimals }: Measured, study: Study): string {
+  return withCurrency(formatLimit(value, quantity, { decimals, system: study.report.units }), quantity, study);
+}
+
+/** The fewest decimals, in the unit people read, that show a value exactly, to twelve digits; never more than are usual for it. */
 export function neededDecimals(value: number, { quantity, decimals }: Measured, study: Study): number {
-  const written = Number(fromSi(value, readingUnit(quantity, study.report.units)).toPrecision(12));
-  for (let fewer = 0; fewer < decimals; fewer++) if (Number(written.toFixed(fewer)) === written) return fewer;
-  return decimals;
+  const usual = readingDecimals(decimals, quantity, study.report.units);
+  return exactDecimals(fromSi(value, readingUnit(quantity, study.report.units)), usual) ?? usual;
 }
 
 /** The size of a difference between two SI values, in decimals enough that a difference never reads as none; percentages differ by %-points. */
@@ -73,7 +103,8 @@ export function differenceText(difference: number, measured: Measured, study: St
 export function differenceFigure(difference: number, { quantity, decimals }: Measured, study: Study): string {
   const unit = readingUnit(quantity, study.report.units);
   const size = Math.abs((difference * unit.divisor) / unit.factor);
-  return size !== 0 && Number(size.toFixed(decimals)) === 0 ? size.toPrecision(1) : formatFigure(size, decimals);
+  const usual = readingDecimals(decimals, quantity, study.report.units);
+  return size !== 0 && Number(size.toFixed(usual)) === 0 ? size.toPrecision(1) : formatFigure(size, usual);
 }
 
 /** A value in the unit people read, as a plain number; for options the index. */

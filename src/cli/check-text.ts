@@ -1,4 +1,5 @@
 /** The outcome of `check` for people. */
+import { givenText } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
 import type { Axis, Study } from '../core/study/study.ts';
@@ -9,14 +10,13 @@ import { count, countOf, durationText, shareText, sizeText } from './figure-text
 import { warningSentence } from './open-study.ts';
 import { columns } from './table.ts';
 import { capped, ink } from './terminal.ts';
-import { givenText, trialConditions } from './trial-text.ts';
+import { trialConditions } from './trial-text.ts';
 
 const mostLines = 40;
 
 /** A valid study: what would run, how long, how large, and what to keep an eye on. */
-export function checkText({ opened, outlook }: Extract<CheckedStudy, { outlook: unknown }>): string {
+export function checkText({ opened, outlook, warnings }: Extract<CheckedStudy, { outlook: unknown }>): string {
   const { study, file } = opened;
-  const warnings = opened.warnings.map((warning) => `  ${warningSentence(warning, opened)}`);
   const parts = [
     `${ink('bold', file)} has ${ink('green', 'no mistakes')}. ${visibleText(study.title)}`,
     block('Trials', trialLines(study)),
@@ -25,7 +25,10 @@ export function checkText({ opened, outlook }: Extract<CheckedStudy, { outlook: 
       : [block('Varied', axisLines(study)), costLine(outlook.estimate), block(sampleTitle(outlook.estimate), sampleLines(outlook.estimate, study))]
           .filter((part) => part !== '')
           .join('\n\n'),
-    block(warnings.length === 1 ? 'Warning' : 'Warnings', warnings),
+    block(
+      'What to keep an eye on',
+      warnings.map((warning) => `  ${warningSentence(warning, opened)}`),
+    ),
   ];
   return parts.filter((part) => part !== '').join('\n\n');
 }

@@ -1,13 +1,18 @@
 /** Figures for the terminal: cells of tables, counts, durations, shares and sizes. The words of a study's figures are those of the charts. */
-import { type Measured, unitWord } from '../charts/figure-words.ts';
+import { figureAlone, type Measured, neededDecimals, unitWord } from '../charts/figure-words.ts';
 import type { Study } from '../core/study/study.ts';
-import { formatFigure } from '../core/units/format-quantity.ts';
-import { fromSi, readingUnit } from '../core/units/units.ts';
+import { formatFigure, readingDecimals } from '../core/units/format-quantity.ts';
 
 /** Figure and unit as two cells, so that a table can align them; money carries the study's currency, NaN is a dash. */
-export function figureCells(si: number, { quantity, decimals }: Measured, study: Study): [string, string] {
-  const unit = readingUnit(quantity, study.report.units);
-  return [formatFigure(fromSi(si, unit), decimals), Number.isNaN(si) ? '' : unitWord(quantity, study)];
+export function figureCells(si: number, measured: Measured, study: Study): [string, string] {
+  const decimals = readingDecimals(measured.decimals, measured.quantity, study.report.units);
+  return [figureAlone(si, measured, decimals, study), Number.isNaN(si) ? '' : unitWord(measured.quantity, study)];
+}
+
+/** The same for an input, exactly as far as a person would type it again: up to three decimals more than usual, and none that it does not need. */
+export function inputCells(si: number, { quantity, decimals }: Measured, study: Study): [string, string] {
+  const exact = { quantity, decimals: decimals + 3 };
+  return [figureAlone(si, exact, neededDecimals(si, exact, study), study), Number.isNaN(si) ? '' : unitWord(quantity, study)];
 }
 
 /** A whole number of things: `62 400`. */

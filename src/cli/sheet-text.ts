@@ -1,12 +1,12 @@
 /** A design's sheet for people: inputs, trials with what limits them, cycles side by side, requirements with their margins. */
-import { neededDecimals, unitWord } from '../charts/figure-words.ts';
+import { unitWord } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { ComputedDesign, DesignMetric, Setting } from '../core/search/design-bench.ts';
 import { cautionLine } from '../core/study/cautions.ts';
 import type { OptionChoice } from '../core/study/read-setting.ts';
 import type { Study, Trial } from '../core/study/study.ts';
 import { boundWords, meets, valueAgainst } from '../page/wording.ts';
-import { count, figureCells } from './figure-text.ts';
+import { figureCells, inputCells } from './figure-text.ts';
 import { verdictText } from './requirement-text.ts';
 import { columns } from './table.ts';
 import { ink } from './terminal.ts';
@@ -50,7 +50,7 @@ function block(title: string, rows: readonly (readonly string[])[], align: reado
 }
 
 function whichDesign(sheet: DesignSheet): string {
-  const base = sheet.number === 0 ? "Design 0, the reference: the study's own figures" : `Design ${count(sheet.number)} of the search`;
+  const base = sheet.number === 0 ? "Design 0, the reference: the study's own figures" : `Design ${sheet.number} of the search`;
   const names = [...sheet.choices.map(({ list }) => visibleText(list)), ...sheet.settings.map(({ name }) => name)];
   return names.length === 0 ? base : `${base}, with ${names.join(', ')} set`;
 }
@@ -59,10 +59,7 @@ function inputRows(sheet: DesignSheet): string[][] {
   if (sheet.study.axes.length === 0 && sheet.settings.length === 0) return [];
   return sheet.inputs.map((input) => {
     if (input.row === null) return [visibleText(input.name), visibleText(input.option ?? "the study's own"), ''];
-    const { quantity } = input.row;
-    // Exactly as far as a person would type it again.
-    const decimals = neededDecimals(input.value, { quantity, decimals: input.row.decimals + 3 }, sheet.study);
-    return [visibleText(input.name), ...figureCells(input.value, { quantity, decimals }, sheet.study)];
+    return [visibleText(input.name), ...inputCells(input.value, input.row, sheet.study)];
   });
 }
 
@@ -102,8 +99,13 @@ function cycleBlock(sheet: DesignSheet, cycles: readonly Trial[]): string {
   const rows = (results[0] ?? []).flatMap(({ column }, at) => {
     const metrics = results.map((metricsOfOne) => metricsOfOne[at] as DesignMetric);
     if (metrics.every((metric) => Number.isNaN(metric.value) && metric.limit === '')) return [];
-    const label = column.row.name.startsWith('energy.') ? `  to ${column.row.label}` : column.row.label;
-    return [[label, unitWord(column.row.quantity, sheet.study), ...metrics.map((metric) => cycleCell(sheet, metric))]];
+    const sink = column.row.name.startsWith('energy.');
+    const row = [
+      sink ? `  ${column.row.label}` : column.row.label,
+      unitWord(column.row.quantity, sheet.study),
+      ...metrics.map((metric) => cycleCell(sheet, metric)),
+    ];
+    return column.row.name === 'energy.rolling' ? [['of the battery energy', '', ...metrics.map(() => '')], row] : [row];
   });
   const head = ['', '', ...cycles.map((trial) => visibleText(trial.name))];
   const align: Align[] = ['left', 'left', ...cycles.map((): Align => 'right')];

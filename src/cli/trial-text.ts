@@ -1,11 +1,10 @@
 /** Trials in words: their conditions, and what limits a result or keeps it from existing. */
-import { neededDecimals, withCurrency } from '../charts/figure-words.ts';
+import { givenText } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { LimitWord } from '../core/evaluate/evaluator.ts';
 import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
 import type { Study, Trial } from '../core/study/study.ts';
 import { trialKindRow } from '../core/study/trial-kinds.ts';
-import { formatLimit } from '../core/units/format-quantity.ts';
 
 /** `acceleration, from 0 km/h, to 80 km/h, laden mass 2800 kg, peak rating`: the conditions as given, defaults left out. */
 export function trialConditions(study: Study, trial: Trial): string {
@@ -24,12 +23,6 @@ export function trialConditions(study: Study, trial: Trial): string {
     ...(replaced.length === 0 ? [] : [`with ${replaced.join(', ')}`]),
   ];
   return visibleText(parts.join(', '));
-}
-
-/** A figure as given, in no more decimals than it needs. */
-export function givenText(value: number, row: ParameterRow, study: Study): string {
-  const format = { decimals: neededDecimals(value, row, study), system: study.report.units };
-  return withCurrency(formatLimit(value, row.quantity, format), row.quantity, study);
 }
 
 /** What stands beside a result: `limited by adhesion`; for one that does not exist, why. */

@@ -1,5 +1,5 @@
 /** One design in full: every metric of every trial with what limits it, as the page computed it. */
-import { capitalised, figureText, type Measured, neededDecimals } from '../charts/figure-words.ts';
+import { capitalised, figureText, inputText, type Measured } from '../charts/figure-words.ts';
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
 import type { ComputedDesign, DesignMetric } from '../core/search/design-bench.ts';
 import { type MetricColumn, trialMetrics } from '../core/study/metrics.ts';
@@ -26,8 +26,7 @@ function inputRows(design: ComputedDesign, { study }: ReportData): Piece[] {
     const { name, row } = input;
     if (row === null) return html`<div><dt>${name}</dt><dd>${input.option ?? "the study's own"}</dd></div>`;
     const label = name.startsWith('trials.') ? name.slice('trials.'.length) : row.label;
-    const decimals = neededDecimals(input.value, row, study);
-    return html`<div><dt>${label}</dt><dd>${figureText(input.value, { quantity: row.quantity, decimals }, study)}</dd></div>`;
+    return html`<div><dt>${label}</dt><dd>${inputText(input.value, row, study)}</dd></div>`;
   });
 }
 

@@ -1,11 +1,9 @@
 /** The front as a table that its reader can sort. */
-import { capitalised, columnPhrase, neededDecimals, unitWord } from '../charts/figure-words.ts';
+import { capitalised, columnPhrase, figureAlone, neededDecimals, optionText, unitWord } from '../charts/figure-words.ts';
 import type { ReportData, ReportDesign } from '../charts/report-data.ts';
 import { proposalLetter } from '../charts/trade-off-view.ts';
-import { shortText } from '../charts/visible-text.ts';
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
-import { formatFigure } from '../core/units/format-quantity.ts';
-import { fromSi, readingUnit } from '../core/units/units.ts';
+import { formatFigure, readingDecimals } from '../core/units/format-quantity.ts';
 import { html, type Markup } from './markup.ts';
 
 /** How the table stands: the column sorted by (-1: design number), which way, and whether all rows are shown. */
@@ -83,12 +81,12 @@ function headWords(column: ResultColumn, { study }: ReportData): string {
 
 /** As many decimals in every row of a column, so that points stand below one another. */
 function columnDecimals(column: ResultColumn, rows: readonly ReportDesign[], index: number, { study }: ReportData): number {
-  if (column.role === 'metric') return column.decimals;
+  if (column.role === 'metric') return readingDecimals(column.decimals, column.quantity, study.report.units);
   return Math.max(0, ...rows.map(({ values }) => neededDecimals(values[index] ?? Number.NaN, column, study)));
 }
 
 function cellText(value: number | null, column: ResultColumn, decimals: number, { study }: ReportData): string {
   if (value === null) return '—';
-  if (column.labels !== null) return shortText(column.labels[value] ?? '—', 40);
-  return formatFigure(fromSi(value, readingUnit(column.quantity, study.report.units)), decimals);
+  if (column.labels !== null) return optionText(value, column.labels, 40);
+  return figureAlone(value, column, decimals, study);
 }

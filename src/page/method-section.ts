@@ -1,5 +1,5 @@
 /** How the figures came about: the trials, the study's figures, the model in words, what it leaves out, the cautions, the run. */
-import { figureText, neededDecimals } from '../charts/figure-words.ts';
+import { givenText } from '../charts/figure-words.ts';
 import type { ReportData } from '../charts/report-data.ts';
 import { cautions, leftOut } from '../core/study/cautions.ts';
 import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
@@ -37,11 +37,11 @@ export function trialSettings(trial: Trial, study: Study): string {
   const own = kind.takes.flatMap((key) => {
     const row: ParameterRow = trialParameters[key];
     const value = study.values[`trials.${trial.name}.${key}`];
-    return value === undefined || value === row.default ? [] : [`${row.label} ${shortFigure(value, row, study)}`];
+    return value === undefined || value === row.default ? [] : [`${row.label} ${givenText(value, row, study)}`];
   });
   const replaced = Object.entries(trial.with).map(([name, value]) => {
     const row = findParameter(name);
-    return row === undefined ? name : `${row.label} ${shortFigure(value, row, study)}`;
+    return row === undefined ? name : `${row.label} ${givenText(value, row, study)}`;
   });
   return [
     ...(trial.trace === null ? [] : [`trace ${trial.trace.name}`]),
@@ -50,10 +50,6 @@ export function trialSettings(trial: Trial, study: Study): string {
     ...(kind.rating === null ? [] : [`${trial.rating} rating`]),
     ...(replaced.length === 0 ? [] : [`for this trial ${replaced.join(', ')}`]),
   ].join(', ');
-}
-
-function shortFigure(value: number, row: ParameterRow, study: Study): string {
-  return figureText(value, { quantity: row.quantity, decimals: neededDecimals(value, row, study) }, study);
 }
 
 function runWords({ study, provenance, counts }: ReportData): Markup {
@@ -73,7 +69,7 @@ function figureList(study: Study): Markup {
     const row = findParameter(name);
     return row === undefined
       ? []
-      : [html`<tr><th scope="row">${name}</th><td class="figure">${figureText(value, row, study)}</td><td>${row.sentence}</td></tr>`];
+      : [html`<tr><th scope="row">${name}</th><td class="figure">${givenText(value, row, study)}</td><td>${row.sentence}</td></tr>`];
   });
   return html`<div class="scroll" tabindex="0" role="region" aria-label="Every figure of the reference design"><table><thead><tr><th scope="col">Name</th><th scope="col" class="figure">Figure</th><th scope="col">What it is</th></tr></thead><tbody>${rows}</tbody></table></div>`;
 }

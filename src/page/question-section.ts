@@ -1,10 +1,10 @@
 /** The question of the study as one sentence. */
-import { columnPhrase, neededDecimals, valueText } from '../charts/figure-words.ts';
+import { columnPhrase, figureAlone, neededDecimals, valueText, withUnit } from '../charts/figure-words.ts';
 import type { ReportData } from '../charts/report-data.ts';
 import { shortText } from '../charts/visible-text.ts';
-import type { ResultColumn } from '../core/evaluate/result-columns.ts';
+import { axisOf, type ResultColumn } from '../core/evaluate/result-columns.ts';
 import type { Axis } from '../core/study/study.ts';
-import { formatFigure, formatQuantity } from '../core/units/format-quantity.ts';
+import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup, type Piece } from './markup.ts';
 import { countWords, listWords, objectiveWords, requirementClause } from './wording.ts';
 
@@ -18,7 +18,7 @@ export function questionSection(data: ReportData): Markup {
 
 function questionSentence(data: ReportData): Markup {
   const { study, counts } = data;
-  const varied = study.axes.map((axis, index) => axisWords(axis, data.columns[index] as ResultColumn, data));
+  const varied = study.axes.map((axis) => axisWords(axis, data));
   const designs = html`Of <b>${countWords(formatFigure(counts.designs, 0), 'design')}</b>${varied.length === 0 ? '' : ` with ${listWords(varied)}`}`;
   const objectives = study.objectives.map((objective) => html`<b>${objectiveWords(objective, data)}</b>`);
   const trade = objectives.length === 1 ? html`which has the ${objectives[0] as Markup}` : html`what is the best trade between ${listed(objectives, 'and')}`;
@@ -41,15 +41,23 @@ function listed(pieces: readonly Markup[], last: string): Piece {
   return pieces.map((piece, index) => (index === 0 ? piece : html`${index === pieces.length - 1 ? ` ${last} ` : ', '}${piece}`));
 }
 
-/** `ratio from 7.5 to 12.25`, `3 of motor on offer`. */
-function axisWords(axis: Axis, column: ResultColumn, data: ReportData): string {
+/** `ratio from 7.5 to 12.25`, `motor on offer (slow-wound or fast-wound)`, `4 pairs of first and second ratio`. */
+function axisWords(axis: Axis, data: ReportData): string {
+  const columns = data.columns.filter((column) => axisOf(column, data.study) === axis);
+  const column = columns[0] as ResultColumn;
   const phrase = columnPhrase(column, data.study);
-  if (axis.labels !== null) return `${axis.labels.length} of ${phrase}`;
+  if (axis.labels !== null) return `${phrase} (${optionWords(axis.labels)})`;
+  if (columns.length > 1) return `${axis.points.length} pairs of ${listWords(columns.map((each) => columnPhrase(each, data.study)))}`;
   const values = axis.range === null ? axis.points.map((point) => point[0] as number) : [axis.range.from, axis.range.to];
   const low = Math.min(...values);
   const high = Math.max(...values);
   if (low === high) return `${phrase} ${valueText(low, column, data.study)}`;
   const decimals = Math.max(neededDecimals(low, column, data.study), neededDecimals(high, column, data.study));
-  const shown = (value: number) => formatQuantity(value, column.quantity, { decimals, system: data.study.report.units });
+  const shown = (value: number) => withUnit(figureAlone(value, column, decimals, data.study), column, data.study);
   return `${phrase} from ${shown(low)} to ${shown(high)}`;
+}
+
+function optionWords(labels: readonly string[]): string {
+  const names = labels.map((label) => shortText(label, 30));
+  return names.length > 4 ? `${names.length} of them` : names.join(' or ');
 }

@@ -1,12 +1,12 @@
 /** Requirements, loads and differences in the words of a sentence. */
-import { columnPhrase, columnWords, differenceText, figureText, type Measured, neededDecimals, unitWord, withCurrency } from '../charts/figure-words.ts';
+import { columnPhrase, columnWords, differenceText, figureText, givenText, type Measured, unitWord, withCurrency, withUnit } from '../charts/figure-words.ts';
 import type { ReportData, ReportDesign, RequirementCount } from '../charts/report-data.ts';
 import { shortText } from '../charts/visible-text.ts';
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
 import { trialMetrics } from '../core/study/metrics.ts';
 import { type TrialParameter, trialParameters } from '../core/study/parameters.ts';
 import type { Objective, Requirement, Study, Trial } from '../core/study/study.ts';
-import { formatAgainstLimit, formatFigure, formatLimit } from '../core/units/format-quantity.ts';
+import { formatAgainstLimit, formatFigure, readingDecimals } from '../core/units/format-quantity.ts';
 import { fromSi, readingUnit } from '../core/units/units.ts';
 
 /** `a`, `a and b`, `a, b and c`. */
@@ -26,15 +26,9 @@ export function metricColumn(data: ReportData, metric: string): { column: Result
   return { column: data.columns[index] as ResultColumn, index };
 }
 
-/** A limit with its unit, in no more decimals than it needs. */
-export function limitWords({ limit }: Pick<Requirement, 'limit'>, column: Measured, study: Study): string {
-  const { quantity } = column;
-  return withCurrency(formatLimit(limit, quantity, { decimals: neededDecimals(limit, column, study), system: study.report.units }), quantity, study);
-}
-
 /** `at least 20 %`. */
 export function boundWords(requirement: Pick<Requirement, 'limit' | 'bound'>, column: Measured, study: Study): string {
-  return `${requirement.bound === 'atLeast' ? 'at least' : 'at most'} ${limitWords(requirement, column, study)}`;
+  return `${requirement.bound === 'atLeast' ? 'at least' : 'at most'} ${givenText(requirement.limit, column, study)}`;
 }
 
 /** A value in decimals enough to stand on its own side of the limit. */
@@ -45,13 +39,13 @@ export function valueAgainst(value: number | null, { limit, bound }: Pick<Requir
 }
 
 /** A limit that a value just meets, rounded to the side where it still does. */
-export function easedLimit(value: number, { bound }: Pick<Requirement, 'bound'>, { quantity, decimals }: Measured, study: Study): string {
-  const unit = readingUnit(quantity, study.report.units);
-  const steps = 10 ** (decimals + 1);
+export function easedLimit(value: number, { bound }: Pick<Requirement, 'bound'>, measured: Measured, study: Study): string {
+  const unit = readingUnit(measured.quantity, study.report.units);
+  const decimals = readingDecimals(measured.decimals, measured.quantity, study.report.units) + 1;
+  const steps = 10 ** decimals;
   const written = Number((fromSi(value, unit) * steps).toPrecision(12));
   const rounded = (bound === 'atLeast' ? Math.floor(written) : Math.ceil(written)) / steps;
-  const words = [formatFigure(rounded, decimals + 1), unitWord(quantity, study)].filter((word) => word !== '');
-  return words.join('\u202f');
+  return withUnit(formatFigure(rounded, decimals), measured, study);
 }
 
 /** Inclusive; a figure that does not exist meets nothing. */
@@ -72,7 +66,7 @@ export function requirementClause(requirement: RequirementCount, data: ReportDat
   const { column } = metricColumn(data, requirement.metric);
   const { measure, trial: trialName } = columnWords(column, study);
   const trial = study.trials.find(({ name }) => name === trialName);
-  const limit = limitWords(requirement, column, study);
+  const limit = givenText(requirement.limit, column, study);
   const usual = requirement.bound === (column.better === 'more' ? 'atLeast' : 'atMost');
   if (trial !== undefined && usual) {
     const load = loadWords(trial, study);
@@ -103,7 +97,7 @@ export function loadWords(trial: Trial, study: Study): string {
 /** A trial's own figure as written, without needless decimals. */
 function settingText(trial: Trial, key: TrialParameter, study: Study): string {
   const value = study.values[`trials.${trial.name}.${key}`];
-  return value === undefined ? '—' : formatLimit(value, trialParameters[key].quantity, { decimals: 0, system: study.report.units });
+  return value === undefined ? '—' : givenText(value, trialParameters[key], study);
 }
 
 /** `least battery energy in stops`. */

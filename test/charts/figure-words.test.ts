@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { columnPhrase, columnWords, differenceText, neededDecimals, valueText } from '../../src/charts/figure-words.ts';
+import { columnPhrase, columnWords, differenceText, givenText, neededDecimals, valueText } from '../../src/charts/figure-words.ts';
 import type { ResultColumn } from '../../src/core/evaluate/result-columns.ts';
 import { inventedReport } from './invented-report.ts';
 
@@ -46,5 +46,15 @@ describe('figures in words', () => {
         expect(neededDecimals(value, column('gearing.ratio'), study)).toBeLessThanOrEqual(3);
       }),
     );
+  });
+
+  it('stand in US customary units where the study asks for them, in decimals that tell as much', () => {
+    const us = { ...study, report: { units: 'US' } } as const;
+    expect(plain(valueText(3.6 * 185, column('stops.batteryEnergy'), us))).toBe('297.7 Wh/mi');
+    expect(plain(valueText(270, column('motor.peakTorque'), us))).toBe('199 lbf·ft');
+    expect(plain(valueText((4300 * 2 * Math.PI) / 60, column('motor.baseSpeed'), us))).toBe('4300 rpm');
+    expect(plain(differenceText(3.6 * 2, column('stops.batteryEnergy'), us))).toBe('3.2 Wh/mi');
+    expect(plain(givenText(0.85, { quantity: 'area', decimals: 3 }, us))).toBe('9.149 ft²');
+    expect(plain(givenText(60 * 0.44704, { quantity: 'speed', decimals: 0 }, us))).toBe('60 mph');
   });
 });

@@ -79,7 +79,7 @@ describe('a sheet for people', () => {
 
   it('puts cycles side by side, energy by sink under them, without metrics that none of them has', () => {
     expect(text).toMatch(/battery energy +Wh\/km +181\.2$/m);
-    expect(text).toMatch(/to rolling +Wh\/km +42\.0$/m);
+    expect(text).toMatch(/of the battery energy\n +rolling +Wh\/km +42\.0$/m);
     expect(text).not.toContain('outside the map');
   });
 

@@ -12,7 +12,7 @@ export interface MetricRow {
   readonly quantity: Quantity;
   /** What a buyer wants; null where neither is better in itself. */
   readonly better: 'less' | 'more' | null;
-  /** Decimals for people, in the reading unit. */
+  /** Decimals for people who read SI; others get as many as tell about the same (units/format-quantity.ts). */
   readonly decimals: number;
   /** Short label for axes and tables. */
   readonly label: string;

@@ -20,7 +20,7 @@ export interface ParameterRow {
   readonly atMost?: number;
   readonly above?: number;
   readonly below?: number;
-  /** Decimals for people in the reading unit. */
+  /** Decimals for people who read SI; others get as many as tell about the same (units/format-quantity.ts). */
   readonly decimals: number;
 }
 
@@ -114,7 +114,7 @@ export const parameters: readonly ParameterRow[] = [
     ...notNegative,
     atMost: 100,
   }),
-  row('motor.inertia.perTorque', 'inertiaPerTorque', 6, 'rotor inertia per torque', 'Rotor inertia per newton metre of peak torque.', {
+  row('motor.inertia.perTorque', 'inertiaPerTorque', 6, 'rotor inertia per torque', 'Rotor inertia per peak torque.', {
     ...notNegative,
     atMost: 0.01,
   }),
@@ -124,7 +124,7 @@ export const parameters: readonly ParameterRow[] = [
     ...coefficient,
     atMost: 1e-6,
   }),
-  row('motor.losses.copper', 'lossPerTorque', 1, 'copper loss', 'Winding loss at peak torque, per newton metre of it.', { ...coefficient, atMost: 1000 }),
+  row('motor.losses.copper', 'lossPerTorque', 1, 'copper loss', 'Winding loss at peak torque, over peak torque.', { ...coefficient, atMost: 1000 }),
   row('motor.losses.acCopper', 'timeSquared', 8, 'ac copper rise', 'Rise of winding loss with the square of motor speed (skin and proximity effect).', {
     ...coefficient,
     atMost: 1e-3,
@@ -164,37 +164,30 @@ export const parameters: readonly ParameterRow[] = [
     'Internal resistance times usable energy: a larger pack of the same cells has less resistance.',
     { ...notNegative, atMost: 1e9 },
   ),
-  row('battery.discharge', 'power', 0, 'discharge limit', 'Largest terminal power of the pack.', { above: 0, atMost: 5e6 }),
-  row('battery.regenerative', 'power', 0, 'charge limit', 'Largest terminal power the pack takes back while driving.', { ...notNegative, atMost: 5e6 }),
+  row('battery.discharge', 'batteryPower', 0, 'discharge limit', 'Largest terminal power of the pack.', { above: 0, atMost: 5e6 }),
+  row('battery.regenerative', 'batteryPower', 0, 'charge limit', 'Largest terminal power the pack takes back while driving.', { ...notNegative, atMost: 5e6 }),
   row('battery.usable', 'energy', 1, 'usable energy', 'Usable energy of the pack at open-circuit voltage.', { above: 0, atMost: 3.6e10 }),
   row('battery.chargingEfficiency', 'share', 0, 'charging efficiency', 'Energy into the pack over energy from the grid.', { above: 0.3, atMost: 1 }),
   row('massAndCost.mass.motor.fixed', 'mass', 1, 'motor mass', 'Motor mass that does not follow the design.', { ...notNegative, atMost: 10_000 }),
-  row('massAndCost.mass.motor.perTorque', 'massPerTorque', 3, 'motor mass per torque', 'Motor mass per newton metre of peak torque.', {
+  row('massAndCost.mass.motor.perTorque', 'massPerTorque', 3, 'motor mass per torque', 'Motor mass per peak torque.', {
     ...notNegative,
     atMost: 100,
   }),
   row('massAndCost.mass.inverter.fixed', 'mass', 1, 'inverter mass', 'Inverter mass that does not follow the design.', { ...notNegative, atMost: 10_000 }),
   row('massAndCost.mass.inverter.perPower', 'massPerPower', 3, 'inverter mass per power', 'Inverter mass per peak power.', { ...notNegative, atMost: 1 }),
   row('massAndCost.mass.gearing.fixed', 'mass', 1, 'gearing mass', 'Gearing mass that does not follow the design.', { ...notNegative, atMost: 10_000 }),
-  row('massAndCost.mass.gearing.perTorque', 'massPerTorque', 4, 'gearing mass per torque', 'Gearing mass per newton metre of peak output torque.', {
+  row('massAndCost.mass.gearing.perTorque', 'massPerTorque', 4, 'gearing mass per torque', 'Gearing mass per peak output torque.', {
     ...notNegative,
     atMost: 100,
   }),
   row('massAndCost.mass.gearing.perExtraRatio', 'mass', 1, 'mass per extra ratio', 'Mass that a second ratio adds.', { ...notNegative, atMost: 10_000 }),
   row('massAndCost.mass.battery.perEnergy', 'massPerEnergy', 2, 'battery mass per energy', 'Battery mass per usable energy.', { ...notNegative, atMost: 1e-3 }),
   row('massAndCost.cost.motor.fixed', 'money', 0, 'motor cost', 'Motor cost that does not follow the design.', notNegative),
-  row('massAndCost.cost.motor.perTorque', 'moneyPerTorque', 2, 'motor cost per torque', 'Motor cost per newton metre of peak torque.', notNegative),
+  row('massAndCost.cost.motor.perTorque', 'moneyPerTorque', 2, 'motor cost per torque', 'Motor cost per peak torque.', notNegative),
   row('massAndCost.cost.inverter.fixed', 'money', 0, 'inverter cost', 'Inverter cost that does not follow the design.', notNegative),
   row('massAndCost.cost.inverter.perPower', 'moneyPerPower', 2, 'inverter cost per power', 'Inverter cost per peak power.', notNegative),
   row('massAndCost.cost.gearing.fixed', 'money', 0, 'gearing cost', 'Gearing cost that does not follow the design.', notNegative),
-  row(
-    'massAndCost.cost.gearing.perTorque',
-    'moneyPerTorque',
-    3,
-    'gearing cost per torque',
-    'Gearing cost per newton metre of peak output torque.',
-    notNegative,
-  ),
+  row('massAndCost.cost.gearing.perTorque', 'moneyPerTorque', 3, 'gearing cost per torque', 'Gearing cost per peak output torque.', notNegative),
   row('massAndCost.cost.gearing.perExtraRatio', 'money', 0, 'cost per extra ratio', 'Cost that a second ratio adds.', notNegative),
   row('massAndCost.cost.battery.perEnergy', 'moneyPerEnergy', 1, 'battery cost per energy', 'Battery cost per usable energy.', notNegative),
   row('air.temperature', 'temperature', 0, 'air temperature', 'Ambient temperature, at the altitude of the study.', {

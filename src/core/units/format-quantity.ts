@@ -4,7 +4,7 @@ import { fromSi, type Quantity, readingUnit, toSi } from './units.ts';
 /** How a number is to be shown. */
 export interface Format {
   readonly system?: 'SI' | 'US';
-  /** From the catalogue; used in the reading unit. */
+  /** From the catalogue, for the SI reading unit; the unit of another system gets `readingDecimals`. */
   readonly decimals: number;
 }
 
@@ -14,6 +14,8 @@ const MINUS = '\u2212';
 /** toFixed is exact up to here; beyond, an exponent. */
 const LARGEST_FIXED = 1e21;
 const MOST_DECIMALS = 20;
+/** A last digit may be worth so much more in another unit than in SI before one more is shown: mph stand as km/h do, inches with one digit less than metres. */
+const COARSENING = 2;
 
 /** A number without its unit: a real minus sign, thin spaces between thousands from 10 000 up, no negative zero; — for NaN. */
 export function formatFigure(value: number, decimals: number): string {
@@ -30,27 +32,46 @@ function groupThousands(fixed: string): string {
   return fraction === undefined ? grouped : `${grouped}.${fraction}`;
 }
 
+/** The fewest decimals whose last digit is worth at most twice what the last of `decimals` is worth in the SI reading unit. */
+export function readingDecimals(decimals: number, quantity: Quantity, system: 'SI' | 'US'): number {
+  const [own, si] = [readingUnit(quantity, system), readingUnit(quantity, 'SI')];
+  let digit = (own.factor / own.divisor) * (si.divisor / si.factor);
+  let shown = decimals;
+  for (; digit > COARSENING; digit /= 10) shown++;
+  for (; shown > 0 && digit * 10 <= COARSENING; digit *= 10) shown--;
+  return shown;
+}
+
 /** `15.2 km/h` with a narrow no-break space; — for NaN, no unit for pure numbers and money. */
 export function formatQuantity(si: number, quantity: Quantity, format: Format): string {
-  const unit = readingUnit(quantity, format.system ?? 'SI');
-  return withUnit(formatFigure(fromSi(si, unit), format.decimals), Number.isNaN(si) ? '' : unit.symbol);
+  return inUnit(si, quantity, format, readingDecimals(format.decimals, quantity, format.system ?? 'SI'));
+}
+
+function inUnit(si: number, quantity: Quantity, { system = 'SI' }: Format, decimals: number): string {
+  const unit = readingUnit(quantity, system);
+  return withUnit(formatFigure(fromSi(si, unit), decimals), Number.isNaN(si) ? '' : unit.symbol);
 }
 
 function withUnit(digits: string, symbol: string): string {
   return symbol === '' ? digits : `${digits}${NARROW_NO_BREAK}${symbol}`;
 }
 
-/** A limit as people read it: up to three decimals more than `format.decimals` where that shows it exactly, one more where not. */
+/** A limit as people read it: in as many decimals as show it exactly, up to three more than usual; in one more than usual where those do not. */
 export function formatLimit(limit: number, quantity: Quantity, format: Format): string {
-  return formatQuantity(limit, quantity, { ...format, decimals: decimalsOfLimit(limit, quantity, format) });
+  return inUnit(limit, quantity, format, decimalsOfLimit(limit, quantity, format));
 }
 
-function decimalsOfLimit(limit: number, quantity: Quantity, format: Format): number {
-  const written = fromSi(limit, readingUnit(quantity, format.system ?? 'SI'));
-  if (!Number.isFinite(written)) return format.decimals;
+function decimalsOfLimit(limit: number, quantity: Quantity, { system = 'SI', decimals }: Format): number {
+  const usual = readingDecimals(decimals, quantity, system);
+  return exactDecimals(fromSi(limit, readingUnit(quantity, system)), usual + 3) ?? usual + 1;
+}
+
+/** The fewest decimals, at most `most`, that show a number exactly, to twelve digits; null where none do. */
+export function exactDecimals(written: number, most: number): number | null {
+  if (!Number.isFinite(written)) return 0;
   const exact = Number(written.toPrecision(12));
-  for (let more = 0; more <= 3; more++) if (Number(exact.toFixed(format.decimals + more)) === exact) return format.decimals + more;
-  return format.decimals + 1;
+  for (let decimals = 0; decimals <= most; decimals++) if (Number(exact.toFixed(decimals)) === exact) return decimals;
+  return null;
 }
 
 /**
@@ -63,7 +84,7 @@ export function formatAgainstLimit(value: number, limit: number, bound: 'atLeast
   if (!Number.isFinite(written) || Math.abs(written) >= LARGEST_FIXED) return formatQuantity(value, quantity, format);
   const printedLimit = Number(fromSi(limit, unit).toFixed(decimalsOfLimit(limit, quantity, format)));
   const met = meets(value, limit, bound);
-  for (let decimals = format.decimals; decimals <= MOST_DECIMALS; decimals++) {
+  for (let decimals = readingDecimals(format.decimals, quantity, format.system ?? 'SI'); decimals <= MOST_DECIMALS; decimals++) {
     const printed = Number(written.toFixed(decimals));
     if (meets(printed, printedLimit, bound) === met && meets(toSi(printed, unit), limit, bound) === met)
       return withUnit(formatFigure(written, decimals), unit.symbol);

@@ -53,7 +53,7 @@ export const quantities = {
   mass: { noun: 'mass', us: 'lb', units: [unit('kg', 'kg'), unit('t', 't', 1000), unit('lb', 'lb', POUND_KG, { spellings: ['lbs', 'lbm'] })] },
   length: {
     noun: 'length',
-    us: 'ft',
+    us: 'in',
     units: [
       unit('m', 'm'),
       unit('mm', 'mm', 1, { divisor: 1000 }),
@@ -112,6 +112,11 @@ export const quantities = {
     us: 'hp',
     units: [unit('kW', 'kW', 1000), unit('W', 'W'), unit('hp', 'hp', HORSEPOWER_W, { spellings: ['bhp'] }), unit('PS', 'PS', METRIC_HORSEPOWER_W)],
   },
+  /** Electrical power is read in kW and W on both sides of the Atlantic. */
+  batteryPower: {
+    noun: 'power',
+    units: [unit('kW', 'kW', 1000), unit('W', 'W'), unit('hp', 'hp', HORSEPOWER_W, { spellings: ['bhp'] }), unit('PS', 'PS', METRIC_HORSEPOWER_W)],
+  },
   auxiliaryPower: {
     noun: 'power',
     units: [unit('W', 'W'), unit('kW', 'kW', 1000), unit('hp', 'hp', HORSEPOWER_W, { spellings: ['bhp'] }), unit('PS', 'PS', METRIC_HORSEPOWER_W)],
@@ -131,6 +136,7 @@ export const quantities = {
   timeSquared: { noun: 'time squared', units: [unit('s²', 's2')] },
   perSpeedSquared: {
     noun: 'rise per speed squared',
+    us: '1/mph²',
     units: [
       unit('s²/m²', 's2_per_m2', 1, { spellings: ['1/(m/s)²'] }),
       unit('1/(km/h)²', 'per_kmh2', 12.96, { spellings: ['h²/km²', '1/kmh²'] }),
@@ -148,6 +154,7 @@ export const quantities = {
   },
   density: {
     noun: 'density',
+    us: 'lb/ft³',
     units: [
       unit('kg/m³', 'kg_per_m3'),
       unit('lb/ft³', 'lb_per_ft3', POUND_KG / (FOOT_M * FOOT_M * FOOT_M)),
@@ -166,6 +173,7 @@ export const quantities = {
   },
   inertiaPerTorque: {
     noun: 'inertia per torque',
+    us: 'lb·ft²/(lbf·ft)',
     units: [
       unit('kg·m²/(N·m)', 'kg_m2_per_Nm'),
       unit('g·m²/(N·m)', 'g_m2_per_Nm', 1, { divisor: 1000 }),
@@ -174,11 +182,18 @@ export const quantities = {
   },
   lossPerTorque: {
     noun: 'loss per torque',
+    us: 'W/(lbf·ft)',
     units: [unit('W/(N·m)', 'W_per_Nm'), unit('W/(lbf·ft)', 'W_per_lbf_ft', 1 / (POUND_FORCE_N * FOOT_M), { spellings: ['W/(lb·ft)'] })],
   },
   torquePerSpeed: {
     noun: 'torque per rotational speed',
-    units: [unit('N·m·s', 'Nms', 1, { spellings: ['N·m/(rad/s)', 'N·m·s/rad'] }), unit('N·m/rpm', 'Nm_per_rpm', 60, { divisor: REV_RAD })],
+    us: 'lbf·ft·s',
+    units: [
+      unit('N·m·s', 'Nms', 1, { spellings: ['N·m/(rad/s)', 'N·m·s/rad'] }),
+      unit('N·m/rpm', 'Nm_per_rpm', 60, { divisor: REV_RAD }),
+      unit('lbf·ft·s', 'lbf_ft_s', POUND_FORCE_N * FOOT_M, { spellings: ['lb·ft·s', 'lbf·ft/(rad/s)', 'lbf·ft·s/rad'] }),
+      unit('lbf·ft/rpm', 'lbf_ft_per_rpm', 60 * POUND_FORCE_N * FOOT_M, { divisor: REV_RAD, spellings: ['lb·ft/rpm'] }),
+    ],
   },
   voltage: { noun: 'voltage', units: [unit('V', 'V')] },
   resistance: {
@@ -188,19 +203,26 @@ export const quantities = {
   resistanceEnergy: { noun: 'resistance times energy', units: [unit('Ω·kWh', 'Ohm_kWh', 3_600_000, { spellings: ['ohm·kWh', 'Ohm·kWh'] })] },
   massPerTorque: {
     noun: 'mass per torque',
+    us: 'lb/(lbf·ft)',
     units: [unit('kg/(N·m)', 'kg_per_Nm'), unit('lb/(lbf·ft)', 'lb_per_lbf_ft', POUND_KG / (POUND_FORCE_N * FOOT_M), { spellings: ['lb/(lb·ft)'] })],
   },
-  massPerPower: { noun: 'mass per power', units: [unit('kg/kW', 'kg_per_kW', 1, { divisor: 1000 }), unit('lb/hp', 'lb_per_hp', POUND_KG / HORSEPOWER_W)] },
+  massPerPower: {
+    noun: 'mass per power',
+    us: 'lb/hp',
+    units: [unit('kg/kW', 'kg_per_kW', 1, { divisor: 1000 }), unit('lb/hp', 'lb_per_hp', POUND_KG / HORSEPOWER_W)],
+  },
   massPerEnergy: {
     noun: 'mass per energy',
+    us: 'lb/kWh',
     units: [unit('kg/kWh', 'kg_per_kWh', 1, { divisor: 3_600_000 }), unit('lb/kWh', 'lb_per_kWh', POUND_KG / 3_600_000)],
   },
   money: { noun: 'cost', bare: true, units: [unit('', '')] },
   moneyPerTorque: {
     noun: 'cost per torque',
+    us: '/(lbf·ft)',
     units: [unit('/(N·m)', 'per_Nm'), unit('/(lbf·ft)', 'per_lbf_ft', 1 / (POUND_FORCE_N * FOOT_M), { spellings: ['/(lb·ft)'] })],
   },
-  moneyPerPower: { noun: 'cost per power', units: [unit('/kW', 'per_kW', 1, { divisor: 1000 }), unit('/hp', 'per_hp', 1 / HORSEPOWER_W)] },
+  moneyPerPower: { noun: 'cost per power', us: '/hp', units: [unit('/kW', 'per_kW', 1, { divisor: 1000 }), unit('/hp', 'per_hp', 1 / HORSEPOWER_W)] },
   moneyPerEnergy: { noun: 'cost per energy', units: [unit('/kWh', 'per_kWh', 1, { divisor: 3_600_000 })] },
 } as const satisfies Record<string, QuantityRow>;
 
