@@ -1,6 +1,7 @@
 /** Ticks that read well and never collide: as many as there is room for, in steps of 1, 2 or 5. */
 import { type ScaleLinear, scaleLinear, tickStep } from 'd3';
 import { formatFigure } from '../core/units/format-quantity.ts';
+import { noOption, ownFigures } from './figure-words.ts';
 import type { ChartAxis } from './trade-off-view.ts';
 
 /** Mean width of a character as a share of the type size; on the wide side of common sans-serif faces. */
@@ -41,7 +42,7 @@ export interface Tick {
 
 /** The scale over what is shown with a little room at both ends; values that differ by rounding alone get room as one. */
 export function axisScale(values: readonly number[], axis: ChartAxis, from: number, to: number): ScaleLinear<number, number> {
-  if (axis.names !== null) return scaleLinear([-0.5, axis.names.length - 0.5], [from, to]);
+  if (axis.names !== null) return scaleLinear([values.includes(noOption) ? noOption - 0.5 : -0.5, axis.names.length - 0.5], [from, to]);
   let low = Number.POSITIVE_INFINITY;
   let high = Number.NEGATIVE_INFINITY;
   for (const value of values) {
@@ -57,7 +58,7 @@ export function axisScale(values: readonly number[], axis: ChartAxis, from: numb
 
 /** Ticks of an axis along `length` pixels; `lying` when texts stand side by side, otherwise one above the other. */
 export function axisTicks(scale: ScaleLinear<number, number>, axis: ChartAxis, length: number, size: number, lying: boolean): Tick[] {
-  if (axis.names !== null) return nameTicks(axis.names, length, size, lying);
+  if (axis.names !== null) return nameTicks(scale, axis.names, length, size, lying);
   for (let count = Math.max(2, Math.floor(length / (lying ? 70 : 56))); count > 1; count--) {
     const ticks = numberTicks(scale, count);
     const widest = Math.max(0, ...ticks.map(({ text }) => textWidth(text, size)));
@@ -75,9 +76,10 @@ function numberTicks(scale: ScaleLinear<number, number>, count: number): Tick[] 
 }
 
 /** Every name where there is room for all, else every second, third, … */
-function nameTicks(names: readonly string[], length: number, size: number, lying: boolean): Tick[] {
-  const apart = length / names.length;
-  const needed = lying ? Math.max(...names.map((name) => textWidth(name, size))) + size : size * 1.6;
+function nameTicks(scale: ScaleLinear<number, number>, names: readonly string[], length: number, size: number, lying: boolean): Tick[] {
+  const places = [...(scale.domain()[0]! < noOption ? [{ value: noOption, text: ownFigures }] : []), ...names.map((text, value) => ({ value, text }))];
+  const apart = length / places.length;
+  const needed = lying ? Math.max(...places.map(({ text }) => textWidth(text, size))) + size : size * 1.6;
   const every = Math.max(1, Math.ceil(needed / apart));
-  return names.map((text, value) => ({ value, text })).filter(({ value }) => value % every === 0);
+  return places.filter((_, index) => index % every === 0);
 }

@@ -2,7 +2,7 @@
 import { columnPhrase, differenceFigure, valueText } from '../charts/figure-words.ts';
 import type { ReportData, ReportDesign } from '../charts/report-data.ts';
 import { proposalLetter } from '../charts/trade-off-view.ts';
-import type { ResultColumn } from '../core/evaluate/result-columns.ts';
+import { axisOf, type ResultColumn } from '../core/evaluate/result-columns.ts';
 import { cautionLine } from '../core/study/cautions.ts';
 import type { Axis, Objective } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
@@ -80,7 +80,7 @@ function inputRows(design: ReportDesign, data: ReportData): Piece[] {
   return data.columns.flatMap((column, index) => {
     if (column.role === 'metric') return [];
     const value = design.values[index] ?? null;
-    const edge = edgeWords(value, data.study.axes[index]);
+    const edge = edgeWords(value, axisOf(column, data.study));
     return [
       html`<div><dt>${columnPhrase(column, data.study)}</dt><dd>${valueText(value, column, data.study)}${edge !== '' && html` <small>${edge}</small>`}</dd></div>`,
     ];
@@ -89,7 +89,7 @@ function inputRows(design: ReportDesign, data: ReportData): Piece[] {
 
 /** Says that an input is the last that was tried, so that something better may lie beyond. */
 function edgeWords(value: number | null, axis: Axis | undefined): string {
-  if (value === null || axis === undefined || axis.labels !== null || axis.points.length < 2) return '';
+  if (value === null || axis === undefined || axis.labels !== null || axis.sets.length > 1 || axis.points.length < 2) return '';
   const tried = axis.points.map((point) => point[0] as number);
   if (value === Math.min(...tried)) return 'lowest tried';
   return value === Math.max(...tried) ? 'highest tried' : '';
