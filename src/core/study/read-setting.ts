@@ -95,12 +95,12 @@ function firstDisorder(name: string, values: Study['values'], study: Study): str
     const another = lower === name ? upper : lower;
     if (low === undefined || high === undefined || varied.has(another) || low < high || (equal && low === high)) continue;
     const bound = lower === name ? (equal ? 'at most' : 'below') : equal ? 'at least' : 'above';
-    return `${name}: expected ${bound} ${another} (${shown(another, values)}), found ${shown(name, values)}; ${why}.`;
+    return `${name}: expected ${bound} ${another} (${shown(another, values, study)}), found ${shown(name, values, study)}; ${why}.`;
   }
   return null;
 }
 
-function shown(name: string, values: Study['values']): string {
+function shown(name: string, values: Study['values'], { report }: Study): string {
   const { quantity, decimals } = findParameter(name) as ParameterRow;
-  return formatQuantity(values[name] as number, quantity, { decimals });
+  return formatQuantity(values[name] as number, quantity, { decimals, system: report.units });
 }

@@ -221,7 +221,7 @@ function seeSpeedCap({ study }: WarningContext): Sight[] {
     if (trace === null || caps === null) return [];
     const [whole, left] = [Number.POSITIVE_INFINITY, caps.low].map((cap) => distanceM(trace.timesS, trace.speedsMPerS, cap)) as [number, number];
     if (!(left < whole)) return [];
-    const length = (value: number) => shown(value, 'distance', 0, study);
+    const length = (value: number) => shown(value, 'range', 2, study);
     return [
       {
         path,
@@ -251,7 +251,7 @@ function seeDischargeLimit({ study }: WarningContext): Sight[] {
   return [
     {
       path: 'battery.discharge',
-      found: `${shown(discharge, 'power', 0, study)} where voltage and resistance allow ${shown(most, 'power', 0, study)}`,
+      found: `${shown(discharge, 'batteryPower', 0, study)} where voltage and resistance allow ${shown(most, 'batteryPower', 0, study)}`,
       hint: 'The pack never gives more than V²/(4 R); check voltage and resistance.',
     },
   ];

@@ -268,7 +268,7 @@ const cases: readonly Case[] = [
     case: 'a van held to 80 km/h',
     text: edited(calm, ['cycle: hwfet, payload: 400 kg', 'cycle: hwfet, capSpeed: 80 km/h, payload: 400 kg']),
     path: 'trials.trunk.capSpeed',
-    says: 'the cap of 80 km/h shortens hwfet from 16 507 m to 15 5',
+    says: 'the cap of 80 km/h shortens hwfet from 16.51 km to 15.5',
     nearMiss: edited(calm, ['cycle: hwfet, payload: 400 kg', 'cycle: hwfet, capSpeed: 100 km/h, payload: 400 kg']),
   },
   {
