@@ -42,12 +42,16 @@ function trialLines(study: Study): string[] {
 }
 
 function axisLines(study: Study): string[] {
-  return lines(study.axes.map((axis) => [visibleText(axis.name), countOf(axis.points.length, 'value'), axisText(axis, study)]));
+  return lines(study.axes.map((axis) => [visibleText(axis.name), countOf(axis.points.length, pointNoun(axis)), axisText(axis, study)]));
 }
 
-function axisText({ name, points, labels }: Axis, study: Study): string {
-  const row = findParameter(name);
-  const words = labels?.map(visibleText) ?? points.map(([value]) => givenText(value as number, row as ParameterRow, study));
+function pointNoun({ sets, labels }: Axis): string {
+  return labels !== null ? 'option' : sets.length > 1 ? 'pair' : 'value';
+}
+
+function axisText({ sets, points, labels }: Axis, study: Study): string {
+  const figure = (value: number, k: number) => givenText(value, findParameter(sets[k] as string) as ParameterRow, study);
+  const words = labels?.map(visibleText) ?? points.map((point) => point.map(figure).join(' / '));
   return words.length <= 4 || labels !== null ? words.slice(0, 12).join(', ') + (words.length > 12 ? ', …' : '') : `${words[0]} to ${words.at(-1)}`;
 }
 

@@ -1,6 +1,7 @@
 /** One design in full: every metric of every trial with what limits it, as the page computed it. */
 import { capitalised, figureText, inputText, type Measured } from '../charts/figure-words.ts';
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
+import { chooseDesign } from '../core/search/choose-design.ts';
 import type { ComputedDesign, DesignMetric } from '../core/search/design-bench.ts';
 import { type MetricColumn, trialMetrics } from '../core/study/metrics.ts';
 import type { Trial } from '../core/study/study.ts';
@@ -12,9 +13,10 @@ import { boundWords, meets, metricColumn, valueAgainst } from './wording.ts';
 /** The design under its own heading, which can take the focus. */
 export function designInFull(design: ComputedDesign, name: string, data: ReportData): Markup {
   const { study } = data;
+  const own = chooseDesign(study, design.number);
   const trials = study.trials.map(
     (trial) =>
-      html`<section class="trial"><h4>${trial.name}</h4><p class="hint">${capitalised(trial.kind)}, ${trialSettings(trial, study)}</p>${metricList(design, trial, data)}</section>`,
+      html`<section class="trial"><h4>${trial.name}</h4><p class="hint">${capitalised(trial.kind)}, ${trialSettings(trial, own)}</p>${metricList(design, trial, data)}</section>`,
   );
   return html`<h3 id="design-heading" tabindex="-1">Design ${formatFigure(design.number, 0)}${name !== '' && `, ${name}`}: all figures</h3>
 <dl class="inputs row">${inputRows(design, data)}</dl>
@@ -32,7 +34,7 @@ function inputRows(design: ComputedDesign, { study }: ReportData): Piece[] {
 
 /** Metrics of one trial, or of the whole design (null); those the study has no figures for are left out, energy by sink stands apart. */
 function metricList(design: ComputedDesign, trial: Trial | null, data: ReportData): Markup {
-  const own = design.metrics.filter(({ column, value }) => column.trial === (trial?.name ?? null) && isOfUse(column, value, data));
+  const own = design.metrics.filter(({ column, value }) => column.trial === (trial?.name ?? null) && isOfUse(column, value));
   const sinks = own.filter(({ column }) => column.row.name.startsWith('energy.'));
   const others = own.filter((metric) => !sinks.includes(metric));
   const list = (metrics: readonly DesignMetric[]) => html`<dl>${metrics.map((metric) => metricRow(metric, trial, data))}</dl>`;
@@ -46,9 +48,9 @@ function metricRow(metric: DesignMetric, trial: Trial | null, data: ReportData):
   return html`<div><dt>${column.row.label}</dt><dd>${shownValue(value, column.row, asked[0], data)}${notes}</dd></div>`;
 }
 
-function isOfUse({ trial, row }: MetricColumn, value: number, { study }: ReportData): boolean {
+function isOfUse({ trial, row }: MetricColumn, value: number): boolean {
   if (!Number.isNaN(value)) return true;
-  return trial !== null && (row !== trialMetrics.outsideMap || study.lossMap !== null);
+  return trial !== null && row !== trialMetrics.outsideMap;
 }
 
 function shownValue(value: number, row: Measured, asked: RequirementCount | undefined, data: ReportData): string {

@@ -1,9 +1,9 @@
 /** How the figures came about: the trials, the study's figures, the model in words, what it leaves out, the cautions, the run. */
-import { givenText } from '../charts/figure-words.ts';
+import { givenText, ownFigures } from '../charts/figure-words.ts';
 import type { ReportData } from '../charts/report-data.ts';
 import { cautions, leftOut } from '../core/study/cautions.ts';
 import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
-import type { Study, Trial } from '../core/study/study.ts';
+import type { Axis, Study, Trial } from '../core/study/study.ts';
 import { trialKindRow } from '../core/study/trial-kinds.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup } from './markup.ts';
@@ -25,6 +25,7 @@ export function methodSection(data: ReportData): Markup {
 <dl class="left-out">${leftOut.map(({ subject, sentence }) => html`<div><dt>${subject}</dt><dd>${sentence}</dd></div>`)}</dl>
 <h3>The run</h3>
 ${runWords(data)}
+${study.axes.filter(({ labels }) => labels !== null).map((list) => html`<details><summary>${list.name}: what each option sets</summary>${optionTable(list, study)}</details>`)}
 <details><summary>Every figure of the reference design</summary>${figureList(study)}</details>
 <details><summary>The study as written, ${data.studyFile}</summary><pre tabindex="0">${data.studyText}</pre></details>
 </div>
@@ -72,4 +73,23 @@ function figureList(study: Study): Markup {
       : [html`<tr><th scope="row">${name}</th><td class="figure">${givenText(value, row, study)}</td><td>${row.sentence}</td></tr>`];
   });
   return html`<div class="scroll" tabindex="0" role="region" aria-label="Every figure of the reference design"><table><thead><tr><th scope="col">Name</th><th scope="col" class="figure">Figure</th><th scope="col">What it is</th></tr></thead><tbody>${rows}</tbody></table></div>`;
+}
+
+/** A row for each option; numbers that no option changes are left out, those without a part to play are a dash. */
+function optionTable({ name, sets, points, labels }: Axis, study: Study): Markup {
+  const shown = sets.map((set, k) => ({ set, k })).filter(({ set, k }) => points.some((point) => !Number.isNaN(point[k]) && point[k] !== study.values[set]));
+  const heads = shown.map(({ set }) => html`<th scope="col" class="figure">${set}</th>`);
+  const rows = (labels ?? []).map(
+    (label, index) =>
+      html`<tr><th scope="row">${label}</th>${shown.map(({ set, k }) => html`<td class="figure">${settingText(set, points[index]?.[k] ?? Number.NaN, study)}</td>`)}</tr>`,
+  );
+  return html`<div class="scroll" tabindex="0" role="region" aria-label="${name}: what each option sets"><table><thead><tr><th scope="col">Option</th>${heads}</tr></thead><tbody>${rows}</tbody></table></div>`;
+}
+
+/** A number as the study gives it; a curve or map by its file. */
+function settingText(name: string, value: number, study: Study): string {
+  const files = name === 'motor.fullLoad' ? study.optionCurves : name === 'motor.map' ? study.optionMaps : null;
+  const row = findParameter(name);
+  if (files !== null) return files[value]?.file ?? ownFigures;
+  return row === undefined || Number.isNaN(value) ? '—' : givenText(value, row, study);
 }

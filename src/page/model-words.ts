@@ -3,24 +3,42 @@ import type { Study } from '../core/study/study.ts';
 
 /** One sentence per law, each for a reader who will judge whether it fits the case. */
 export function modelSentences(study: Study): string[] {
-  const coastDown = study.values['vehicle.coastDown.f0'] !== undefined;
-  const adhesion = study.values['vehicle.axles.adhesion'] !== undefined;
-  const fixedFactor = study.values['vehicle.massFactor'] !== undefined;
-  const budget = Object.keys(study.values).some((name) => name.startsWith('massAndCost.'));
+  // With options several ways may stand side by side: each has its sentence.
+  const used = (name: string) => study.values[name] !== undefined || study.axes.some(({ sets }) => sets.includes(name));
+  const adhesion = used('vehicle.axles.adhesion');
+  const budget = [...Object.keys(study.values), ...study.axes.flatMap(({ sets }) => sets)].some((name) => name.startsWith('massAndCost.'));
   const cycle = study.trials.some(({ kind }) => kind === 'cycle');
+  const sentence = (says: boolean, words: string) => (says ? [words] : []);
   return [
-    coastDown
-      ? 'Road load: a constant, a linear and a square term in speed from a coast-down, scaled with mass, and the weight along the slope.'
-      : 'Road load: rolling resistance per weight with a rise by the square of speed, air drag with any head wind, and the weight along the slope.',
-    fixedFactor
-      ? 'Turning parts are counted by one fixed mass factor.'
-      : 'Turning parts are counted by a mass factor from the inertia of the wheels and, by the square of the ratio, of the rotor.',
-    study.fullLoad === null
-      ? 'Motor: peak torque up to base speed, then constant power, then power falling with speed where the study says so; nothing above maximum speed.'
-      : 'Motor: the measured full-load curve, its axes scaled with peak torque and base speed where they are varied.',
-    study.lossMap === null
-      ? 'Losses of motor and inverter: iron, winding, field weakening and inverter terms that grow with the size of the motor.'
-      : 'Losses of motor and inverter: interpolated from a measured map, scaled with the motor’s peak power.',
+    ...sentence(
+      used('vehicle.coastDown.f0'),
+      'Road load: a constant, a linear and a square term in speed from a coast-down, scaled with mass, and the weight along the slope.',
+    ),
+    ...sentence(
+      used('vehicle.rolling.c0'),
+      'Road load: rolling resistance per weight with a rise by the square of speed, air drag with any head wind, and the weight along the slope.',
+    ),
+    ...sentence(used('vehicle.massFactor'), 'Turning parts are counted by one fixed mass factor.'),
+    ...sentence(
+      used('vehicle.wheelInertia'),
+      'Turning parts are counted by a mass factor from the inertia of the wheels and, by the square of the ratio, of the rotor.',
+    ),
+    ...sentence(
+      study.fullLoad === null,
+      'Motor: peak torque up to base speed, then constant power, then power falling with speed where the study says so; nothing above maximum speed.',
+    ),
+    ...sentence(
+      study.fullLoad !== null || study.optionCurves.length > 0,
+      'Motor: the measured full-load curve, its axes scaled with peak torque and base speed where they are varied.',
+    ),
+    ...sentence(
+      study.lossMap === null,
+      'Losses of motor and inverter: iron, winding, field weakening and inverter terms that grow with the size of the motor.',
+    ),
+    ...sentence(
+      study.lossMap !== null || study.optionMaps.length > 0,
+      'Losses of motor and inverter: interpolated from a measured map, scaled with the motor’s peak power.',
+    ),
     'Gearing: one efficiency per ratio and a drag torque that rises with speed.',
     `At full pedal the force is the least of what motor, battery${adhesion ? ' and the adhesion of the driven axle, with load transfer,' : ''} allow.`,
     'Times and distances are integrated over speed; top speed, gradeability and hill start are solved for directly.',

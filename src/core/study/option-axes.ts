@@ -112,10 +112,12 @@ function statedBy({ figures, stands }: OptionFound['found']): Set<string> {
   return names;
 }
 
-/** What options state comes first; then what gives way to one of them. */
+/** What options state comes first; then what gives way to one of them. Coefficients stay beside a map: they have no part in its design anyway. */
 function axisOf({ name, options }: OptionList, studies: readonly OptionStudy[], { values: reference }: OptionBase): Axis {
   const stated = new Set(studies.flatMap((study) => [...study.stated]));
-  const giveWay = Object.keys(reference).filter((key) => !stated.has(key) && studies.some(({ values }) => values[key] === undefined));
+  const giveWay = Object.keys(reference).filter(
+    (key) => !stated.has(key) && !key.startsWith('motor.losses.') && studies.some(({ values }) => values[key] === undefined),
+  );
   const sets = [...stated, ...giveWay];
   const points = studies.map(({ values }) => sets.map((key) => values[key] ?? Number.NaN));
   return { name, sets, points, labels: options.map((option) => option.name), range: null };

@@ -279,7 +279,7 @@ describe('a mistake in options is answered with one message', () => {
     [
       'a loss that varies beside a map on offer',
       `vary:\n  motor.losses.copper: { oneOf: [40 W/(N·m), 44 W/(N·m)] }\n${offer(option('motor.map: map.csv'))}`,
-      ['vary.motor.losses.copper on line 37, and options.motor on offer on line 39 with options that leave it none'],
+      ['motor.map or motor.losses.copper, not both', 'vary.motor.losses.copper on line 37'],
     ],
   ])('%s', (_, section, parts) => {
     const text = complaint(withSection(section), files);
