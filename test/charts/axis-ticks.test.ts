@@ -55,6 +55,28 @@ describe('ticks', () => {
   });
 });
 
+describe('an axis of options', () => {
+  const axis: ChartAxis = { title: 'motor', better: null, names: ['slow', 'fast'] };
+
+  it('has a tick with its name for each', () => {
+    const scale = axisScale([0, 1, 1], axis, 0, 600);
+    expect(axisTicks(scale, axis, 600, 13, true).map(({ value, text }) => [value, text])).toEqual([
+      [0, 'slow'],
+      [1, 'fast'],
+    ]);
+  });
+
+  it('has a place of its own for the reference, which chose none of them', () => {
+    const scale = axisScale([-1, 0, 1], axis, 0, 600);
+    expect(scale(-1)).toBeGreaterThan(0);
+    expect(axisTicks(scale, axis, 600, 13, true).map(({ value, text }) => [value, text])).toEqual([
+      [-1, "the study's own"],
+      [0, 'slow'],
+      [1, 'fast'],
+    ]);
+  });
+});
+
 describe('lines of text', () => {
   it('break between words and stay within their width', () => {
     const lines = textLines('Battery energy in a trial with a rather long name, Wh/km', 13, 200, 3);

@@ -1,13 +1,13 @@
 /** Designs with options: their names in stored results, their files in sheets, single figures on top of them. */
 import { describe, expect, it } from 'vitest';
-import { machineValue } from '../../../src/core/evaluate/result-columns.ts';
+import { axisOf, machineValue } from '../../../src/core/evaluate/result-columns.ts';
 import { chooseDesign } from '../../../src/core/search/choose-design.ts';
 import { createBench, machineSheet } from '../../../src/core/search/design-bench.ts';
 import { createDesignEvaluator, studyColumns } from '../../../src/core/search/evaluate-designs.ts';
 import { readChoice, readSetting } from '../../../src/core/study/read-setting.ts';
 import { readStudyJson, type Study } from '../../../src/core/study/study.ts';
-import { curve, map, withSection } from '../study/options.ts';
-import { studyOf } from '../study/study-from-disk.ts';
+import { curve, map, still, withSection } from '../study/options.ts';
+import { edited, studyOf } from '../study/study-from-disk.ts';
 
 const study = studyOf(
   withSection(`vary:
@@ -59,6 +59,22 @@ describe('stored results', () => {
       const { metrics } = machineSheet(bench.compute(number)!);
       expect(row(number).slice(3)).toEqual(columns.slice(3).map(({ key }) => metrics[key]));
     }
+  });
+});
+
+describe('pairs of ratios', () => {
+  it('have a column for each ratio', () => {
+    const two = edited(still, ['ratio: 9.5 ', 'ratios: [11.2, 6.4] #']);
+    const pairs = studyOf(`${two}vary: { gearing.ratios: { oneOf: [[11, 6], [12, 7]] } }\n`);
+    const columns = studyColumns(pairs);
+    expect(columns.slice(0, 2).map(({ key, role }) => [key, role])).toEqual([
+      ['gearing.ratios.1', 'input'],
+      ['gearing.ratios.2', 'input'],
+    ]);
+    const out = new Float64Array(columns.length);
+    createDesignEvaluator(pairs, columns).evaluate(2, out, 0, 1);
+    expect([...out.subarray(0, 2)]).toEqual([12, 7]);
+    expect(columns.slice(0, 2).map((column) => axisOf(column, pairs))).toEqual([pairs.axes[0], pairs.axes[0]]);
   });
 });
 

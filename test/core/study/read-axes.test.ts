@@ -111,3 +111,55 @@ describe('a varied number', () => {
     expect(pointsOf('vehicle.wheelRadius', edited(harbour, [RATIO, 'vehicle.wheelRadius: { oneOf: [0.32 m, 0.34 m] }']))).toEqual([0.32, 0.34]);
   });
 });
+
+describe('ratios that vary together', () => {
+  const two = edited(harbour, ['ratio: 9.5 ', 'ratios: [11.2, 6.4]\n  shiftTime: 0.25 s #']);
+  const varied = (axis: string) => edited(two, [RATIO, axis]);
+
+  it('are one axis that sets both, from a list of pairs', () => {
+    const [axis] = studyOf(varied('gearing.ratios: { oneOf: [[11.2, 6.4], [12, 7], [10, 6.4]] }')).axes;
+    expect(axis).toEqual({
+      name: 'gearing.ratios',
+      sets: ['gearing.ratios.1', 'gearing.ratios.2'],
+      points: [
+        [11.2, 6.4],
+        [12, 7],
+        [10, 6.4],
+      ],
+      labels: null,
+      range: null,
+    });
+  });
+
+  it('may be varied apart as well', () => {
+    const study = studyOf(varied('gearing.ratios.1: { oneOf: [10, 11, 12] }\n  gearing.ratios.2: { from: 6, to: 8, steps: 3 }'));
+    expect(study.axes.slice(0, 2).map(({ name, points }) => [name, points.length])).toEqual([
+      ['gearing.ratios.1', 3],
+      ['gearing.ratios.2', 3],
+    ]);
+  });
+
+  it('and their efficiencies, which may be one figure too', () => {
+    const pair = edited(two, ['efficiency: 97 %', 'efficiency: [96 %, 97 %]'], [RATIO, 'gearing.efficiency: { oneOf: [[96 %, 97 %], [97 %, 98 %]] }']);
+    expect(studyOf(pair).axes[0]?.points[1]).toEqual([0.97, 0.98]);
+    expect(pointsOf('gearing.efficiency', varied('gearing.efficiency: { oneOf: [96 %, 97 %] }'))).toEqual([0.96, 0.97]);
+  });
+
+  it.each([
+    ['the wrong way round', 'gearing.ratios: { oneOf: [[6.4, 11.2]] }', 'Exchange the two'],
+    ['twice', 'gearing.ratios: { oneOf: [[11, 6], [11, 6]] }', 'each pair once'],
+    ['not as pairs', 'gearing.ratios: { oneOf: [11, 6] }', 'a pair, such as [11.2, 6.4]'],
+    ['three of them', 'gearing.ratios: { oneOf: [[11, 6, 4]] }', 'a list of 3'],
+    ['as a range', 'gearing.ratios: { from: 6, to: 9, steps: 4 }', 'vary gearing.ratios.1 and gearing.ratios.2 apart'],
+    ['with a slip in a figure', 'gearing.ratios: { oneOf: [[11, 6 m]] }', 'a plain number'],
+    ['together and apart', 'gearing.ratios: { oneOf: [[11, 6]] }\n  gearing.ratios.1: { oneOf: [10, 11] }', 'gearing.ratios.1 in one place'],
+  ])('are refused %s', (_, axis, says) => {
+    const text = complaint(varied(axis));
+    expect(text).toContain(says);
+    expect(text.match(/error in/gu)).toHaveLength(axis.includes('oneOf: [11, 6]') ? 2 : 1);
+  });
+
+  it('are refused in a study with one ratio', () => {
+    expect(complaint(edited(harbour, [RATIO, 'gearing.ratios: { oneOf: [[11.2, 6.4]] }']))).toContain('gearing.ratio');
+  });
+});
