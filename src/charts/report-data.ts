@@ -1,5 +1,6 @@
 /** What the report holds: everything the page shows without asking anyone. Plain JSON; missing values are null. */
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
+import type { Issue } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
 
 /** What a design is to the study. */
@@ -58,6 +59,7 @@ export interface ReportData {
   readonly proposals: readonly Proposal[];
   /** When nothing is feasible: the design that comes closest, by fewest requirements missed, then least sum of relative shortfalls. */
   readonly closest: { readonly number: number; readonly missed: readonly string[] } | null;
-  readonly warnings: readonly string[];
+  /** What to keep an eye on, from study and results, in the order of the study file. */
+  readonly warnings: readonly Issue[];
   readonly provenance: Provenance;
 }

@@ -1,7 +1,7 @@
 /** A study as `check` sees it: its mistakes, or the outlook of a run. */
 import { machineValue } from '../core/evaluate/result-columns.ts';
 import { whatRunNeeds } from '../core/study/check-study.ts';
-import { issueRecord } from '../core/study/issue.ts';
+import { type Issue, inFileOrder, issueRecord } from '../core/study/issue.ts';
 import { metricColumns } from '../core/study/metric-columns.ts';
 import type { MetricColumn } from '../core/study/metrics.ts';
 import type { Requirement, Study } from '../core/study/study.ts';
@@ -11,17 +11,20 @@ import { type OpenStudy, readStudy, type WrongStudy } from './open-study.ts';
 /** What a run of a study without mistakes would do, or what it still needs. */
 export type Outlook = { readonly needs: NonNullable<ReturnType<typeof whatRunNeeds>> } | { readonly estimate: RunEstimate };
 
-/** A study file after the check. */
-export type CheckedStudy = { readonly opened: WrongStudy } | { readonly opened: OpenStudy; readonly outlook: Outlook };
+/** A study file after the check; the warnings are those of the study and of the designs looked at. */
+export type CheckedStudy = { readonly opened: WrongStudy } | { readonly opened: OpenStudy; readonly outlook: Outlook; readonly warnings: readonly Issue[] };
 
-/** Reads and checks a file; measures a sample of its designs where a run could take it. */
+/** Reads and checks a file; looks at a sample of its designs, and measures it where a run could take the study. */
 export async function checkStudyFile(file: string): Promise<CheckedStudy> {
   const opened = readStudy(file);
   if (!opened.ok) return { opened };
   const needs = whatRunNeeds(opened.study);
-  if (needs !== null) return { opened, outlook: { needs } };
-  const { estimateRun } = await import('../run/estimate-run.ts');
-  return { opened, outlook: { estimate: estimateRun(opened.study) } };
+  const [{ estimateRun }, { resultWarnings }] = await Promise.all([import('../run/estimate-run.ts'), import('../run/result-warnings.ts')]);
+  const estimate = needs === null ? estimateRun(opened.study) : null;
+  const told = { ...opened, studyFile: file, studyText: opened.text };
+  const more = resultWarnings(told, estimate?.seen ?? { requirements: null, proposals: null });
+  const outlook: Outlook = estimate === null ? { needs: needs as NonNullable<typeof needs> } : { estimate };
+  return { opened, outlook, warnings: inFileOrder([...opened.warnings, ...more], file) };
 }
 
 /** The column of a required metric. */
@@ -35,8 +38,8 @@ export function checkJson(checked: CheckedStudy): object {
     const { file, unreadable, issues } = checked.opened;
     return { study: file, valid: false, unreadable, issues: issues.map(issueRecord) };
   }
-  const { opened, outlook } = checked;
-  const { study, file, warnings } = opened;
+  const { opened, outlook, warnings } = checked;
+  const { study, file } = opened;
   return {
     study: file,
     valid: true,

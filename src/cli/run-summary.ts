@@ -14,8 +14,8 @@ import { ink } from './terminal.ts';
 /** Designs that stand side by side in the table. */
 const mostAbreast = 7;
 
-/** The whole summary of one run. */
-export function runSummary(report: ReportData, folder: string, seconds: number): string {
+/** The whole summary of one run; `warnings` are those that its results gave cause for, a line each. */
+export function runSummary(report: ReportData, folder: string, seconds: number, warnings: readonly string[]): string {
   const candidates = candidatesOf(report).slice(0, mostAbreast);
   const parts = [
     headline(report, seconds),
@@ -24,6 +24,7 @@ export function runSummary(report: ReportData, folder: string, seconds: number):
     ),
     candidateTable(candidates, report),
     requirementBlock(report),
+    warnings.length === 0 ? '' : [ink('bold', 'What to keep an eye on'), ...warnings.map((line) => `  ${line}`)].join('\n'),
     `Report: ${join(folder, 'report.html')}\nOne design in full: layshaft sheet ${report.studyFile} --design ${candidates[0]?.design.number ?? 0}`,
     cautionLine,
   ];

@@ -3,6 +3,7 @@ import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
 import { createSearch } from '../core/search/search.ts';
 import { whatRunNeeds } from '../core/study/check-study.ts';
+import type { Issue } from '../core/study/issue.ts';
 import { runFolderName } from '../run/run-folder.ts';
 import { RunProblem } from '../run/run-problem.ts';
 import { type CommandRow, type ExitStatus, exitStatus, jsonOption, type OptionValues, wholeNumber, worstStatus } from './command.ts';
@@ -100,9 +101,14 @@ function runnable(file: string): OpenStudy | null {
 async function runOne(opened: OpenStudy, folder: string, options: OptionValues): Promise<Ended> {
   const { study, file, text, digests } = opened;
   const workers = (options['workers'] as number | undefined) ?? availableParallelism();
-  const warnings = opened.warnings.map((warning) => warningSentence(warning, opened));
+  const warningLines = (warnings: readonly Issue[]) =>
+    capped(
+      warnings.map((warning) => warningSentence(warning, opened)),
+      mostWarnings,
+      'warnings',
+    );
   say(`${ink('bold', file)} into ${folder}`);
-  for (const line of capped(warnings, mostWarnings, 'warnings')) say(`${ink('yellow', 'warning:')} ${line}`);
+  for (const line of warningLines(opened.warnings)) say(`${ink('yellow', 'warning:')} ${line}`);
   // Threads, charts and page are heavy: only a run loads them.
   const [{ runStudy, summaryOf }, { renderReport }, { runSummary }] = await Promise.all([
     import('../run/run-study.ts'),
@@ -116,7 +122,7 @@ async function runOne(opened: OpenStudy, folder: string, options: OptionValues):
       studyFile: file,
       studyText: text,
       digests,
-      warnings,
+      warnings: opened.warnings,
       outFolder: folder,
       workers,
       version,
@@ -124,7 +130,9 @@ async function runOne(opened: OpenStudy, folder: string, options: OptionValues):
       onProgress: progress.update,
     });
     progress.end();
-    say(`\n${runSummary(report, folder, seconds)}\n`);
+    // What the study itself gave cause for was said before the run began.
+    const seen = warningLines(report.warnings.filter((warning) => !opened.warnings.includes(warning)));
+    say(`\n${runSummary(report, folder, seconds, seen)}\n`);
     const status = report.counts.feasible > 0 ? exitStatus.done : exitStatus.nothingFeasible;
     return { status, entry: { study: file, status, folder, seconds, ...summaryOf(report) } };
   } catch (error) {

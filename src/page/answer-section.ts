@@ -21,7 +21,6 @@ export function answerSection(data: ReportData): Markup {
 ${data.counts.feasible === 0 ? nothingPasses(data) : choiceWords(data)}
 <div class="cards">${candidates.map((candidate) => card(candidate, candidates, data))}</div>
 ${marginTable(candidates, data)}
-${data.warnings.map((warning) => html`<p class="note">Note on the study: ${warning}</p>`)}
 <p class="caution">${cautionLine}</p>
 </div>
 </section>`;

@@ -7,6 +7,7 @@ import { methodSection } from './method-section.ts';
 import { questionSection } from './question-section.ts';
 import { requirementSection } from './requirement-section.ts';
 import { tradeSection } from './trade-section.ts';
+import { watchSection } from './watch-section.ts';
 
 /** The built script and style sheet of the page (dist/page.js, dist/style.css). */
 export interface PageAssets {
@@ -50,6 +51,7 @@ export function reportDocument(data: ReportData, assets: PageAssets, sha256Base6
 </header>
 ${questionSection(data)}
 ${answerSection(data)}
+${watchSection(data)}
 ${tradeSection(data)}
 ${requirementSection(data)}
 ${frontSection(data)}

@@ -72,12 +72,8 @@ function bestShown(metric: string, data: ReportData): { letter: string; value: n
 
 function costliestWords(data: ReportData): Piece {
   const most = data.requirements.reduce((found, each) => (each.failingAlone > found.failingAlone ? each : found));
-  const idle = data.requirements.filter(({ failing, implied }) => failing === 0 && !implied);
   const { column } = metricColumn(data, most.metric);
-  return [
-    most.failingAlone === 0
-      ? 'No single requirement keeps a design out that the others would let pass.'
-      : html`The requirement that alone keeps out most designs is <b>${columnPhrase(column, data.study)} ${boundWords(most, column, data.study)}</b>: ${formatFigure(most.failingAlone, 0)} designs miss only this one.`,
-    idle.length > 0 && ` Met by every design: ${idle.map(({ metric }) => columnPhrase(metricColumn(data, metric).column, data.study)).join(', ')}.`,
-  ];
+  return most.failingAlone === 0
+    ? 'No single requirement keeps a design out that the others would let pass.'
+    : html`The requirement that alone keeps out most designs is <b>${columnPhrase(column, data.study)} ${boundWords(most, column, data.study)}</b>: ${formatFigure(most.failingAlone, 0)} designs miss only this one.`;
 }

@@ -1,9 +1,11 @@
 /** What a run would cost and bring, from a small sample: for `check`. */
 import { availableParallelism } from 'node:os';
-import { hashNumber } from '../core/numerics/hash.ts';
 import { createDesignEvaluator, studyColumns } from '../core/search/evaluate-designs.ts';
 import type { Study } from '../core/study/study.ts';
+import { sampleNumbers } from './design-sample.ts';
 import { PartRows, partBytes } from './part-file.ts';
+import { proposalsOf, proposedDesigns, requirementsSeen } from './report-account.ts';
+import type { ResultsSeen } from './result-warnings.ts';
 import { RunAccount } from './run-account.ts';
 
 /** Designs in the sample, at most, the time spent on it, at most, and then on measuring. */
@@ -27,6 +29,8 @@ export interface RunEstimate {
   readonly bytes: number;
   /** Per requirement of the study: sampled designs that miss it. */
   readonly failing: readonly number[];
+  /** For the warnings that results give. */
+  readonly seen: ResultsSeen;
 }
 
 /** Evaluates a sample spread over all design numbers by hash, in this thread. */
@@ -34,7 +38,7 @@ export function estimateRun(study: Study, workers = availableParallelism()): Run
   const columns = studyColumns(study);
   const designs = createDesignEvaluator(study, columns);
   const account = new RunAccount(study, columns);
-  const numbers = sampleNumbers(designs.count);
+  const numbers = sampleNumbers(designs.count, sampleDesigns);
   const rows = new PartRows(numbers.length, columns.length);
   const row = new Float64Array(columns.length);
   const began = performance.now();
@@ -48,6 +52,7 @@ export function estimateRun(study: Study, workers = availableParallelism()): Run
   }
   const secondsPerDesign = steadySeconds(numbers.slice(0, sampled), (number) => designs.evaluate(number, row, 0, 1));
   const bytesPerDesign = partBytes(rows, columns).length / sampled;
+  const requirements = requirementsSeen(account, designs.count);
   return {
     designs: designs.count,
     sampled,
@@ -56,7 +61,8 @@ export function estimateRun(study: Study, workers = availableParallelism()): Run
     workers,
     seconds: aroundS + (secondsPerDesign * designs.count) / workers,
     bytes: Math.ceil(bytesPerDesign * designs.count) + besidesBytes,
-    failing: account.tally.result().requirements.map(({ failing }) => failing),
+    failing: requirements.failing,
+    seen: { requirements, proposals: requirements.whole ? proposedDesigns(proposalsOf(study, account.filter.front()), designs) : null },
   };
 }
 
@@ -69,15 +75,4 @@ function steadySeconds(numbers: readonly number[], evaluate: (number: number) =>
     passes.push((performance.now() - began) / 1000 / numbers.length);
   }
   return passes.sort((a, b) => a - b)[passes.length >> 1];
-}
-
-/** Distinct numbers of 1…count, ascending: all of a small search, else one hashed pick from each of equal stretches. */
-function sampleNumbers(count: number): number[] {
-  if (count <= sampleDesigns) return Array.from({ length: count }, (_, k) => k + 1);
-  const stretch = count / sampleDesigns;
-  return Array.from({ length: sampleDesigns }, (_, k) => {
-    const first = Math.floor(k * stretch);
-    const width = Math.floor((k + 1) * stretch) - first;
-    return first + 1 + (hashNumber(k) % width);
-  });
 }

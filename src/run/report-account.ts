@@ -6,8 +6,9 @@ import type { RequirementOutcome, RequirementResult } from '../core/front/requir
 import { thinFront } from '../core/front/thin-front.ts';
 import { hashNumber } from '../core/numerics/hash.ts';
 import type { DesignEvaluator } from '../core/search/evaluate-designs.ts';
+import { type Issue, inFileOrder } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
-import { resultWarnings } from './result-warnings.ts';
+import { type ProposedDesign, type RequirementsSeen, resultWarnings } from './result-warnings.ts';
 import type { RunAccount } from './run-account.ts';
 
 /** Front designs shown, at most; a finer resolution than this tells people nothing. */
@@ -18,7 +19,8 @@ export interface ReportSource {
   readonly study: Study;
   readonly studyFile: string;
   readonly studyText: string;
-  readonly warnings: readonly string[];
+  /** From the check of the study. */
+  readonly warnings: readonly Issue[];
   readonly provenance: Provenance;
 }
 
@@ -51,13 +53,19 @@ export function findingsOf(source: ReportSource, account: RunAccount, designs: D
       requirements: study.requirements.map((requirement, r) => requirementCount(study, requirement, tally.requirements[r])),
       proposals,
       closest: closestOf(study, tally),
-      warnings: [...source.warnings, ...resultWarnings({ study, columns: designs.columns, tally, proposals, valuesOf: (number) => valuesOf(number, designs) })],
+      warnings: inFileOrder(
+        [
+          ...source.warnings,
+          ...resultWarnings(source, { requirements: requirementsSeen(account, designs.count), proposals: proposedDesigns(proposals, designs) }),
+        ],
+        source.studyFile,
+      ),
     },
   };
 }
 
 /** Best in each objective and the balanced one over the exact front, each design once with all the rules that chose it; the rules in the order of the objectives. */
-function proposalsOf(study: Study, { objectives, numbers }: Front): Proposal[] {
+export function proposalsOf(study: Study, { objectives, numbers }: Front): Proposal[] {
   if (numbers.length === 0) return [];
   const chosen: (readonly [number: number, rule: string])[] = [
     ...bestInEach(objectives).map((index, k): [number, string] => [numbers[index], study.objectives[k].metric]),
@@ -66,6 +74,21 @@ function proposalsOf(study: Study, { objectives, numbers }: Front): Proposal[] {
   const byNumber = new Map<number, string[]>();
   for (const [number, rule] of chosen) byNumber.set(number, [...(byNumber.get(number) ?? []), rule]);
   return [...byNumber].map(([number, rules]) => ({ number, rules }));
+}
+
+/** What the account says of the requirements of a search of `count` designs. */
+export function requirementsSeen({ tally, best }: RunAccount, count: number): RequirementsSeen {
+  const { designs, requirements, withoutObjectives } = tally.result();
+  return { designs, whole: designs === count, failing: requirements.map(({ failing }) => failing), best: [...best], withoutObjectives };
+}
+
+/** The designs put forward, with what varies in them. */
+export function proposedDesigns(proposals: readonly Proposal[], designs: DesignEvaluator): ProposedDesign[] {
+  const at = (input: string) => designs.columns.findIndex(({ role, name }) => role === 'input' && name === input);
+  return proposals.map(({ number, rules }) => {
+    const values = valuesOf(number, designs);
+    return { rules, inputOf: (name) => values[at(name)] };
+  });
 }
 
 /** Indices of the front designs that people see, ascending: every proposal and one design per box of the resolution, those by hashed number where they are too many. */

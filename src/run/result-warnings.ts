@@ -1,45 +1,236 @@
-/** What the results themselves warn of: proposals at the edge of what was searched, designs that lack an objective. */
-import { columnPhrase, valueText } from '../charts/figure-words.ts';
-import type { Proposal } from '../charts/report-data.ts';
-import type { ResultColumn } from '../core/evaluate/result-columns.ts';
-import type { RequirementResult } from '../core/front/requirements.ts';
-import type { Study } from '../core/study/study.ts';
-import { formatFigure } from '../core/units/format-quantity.ts';
+/**
+ * What only results can warn of: a sample evaluated in full, the counts of requirements, the designs put forward. One row per rule;
+ * each names the place and the reason, once. What the study alone told before is not told again.
+ */
+import { givenText, withCurrency } from '../charts/figure-words.ts';
+import { axisPath } from '../core/study/design-corners.ts';
+import { type Issue, IssueList } from '../core/study/issue.ts';
+import { metricColumns } from '../core/study/metric-columns.ts';
+import type { MetricRow } from '../core/study/metrics.ts';
+import { isBeyondEveryMotor } from '../core/study/motor-warnings.ts';
+import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
+import { placesInText } from '../core/study/place-in-text.ts';
+import type { Axis, Requirement, Study, Trial } from '../core/study/study.ts';
+import { type Sight, shown, someOf, type WarningRow } from '../core/study/warning-row.ts';
+import { formatAgainstLimit, formatFigure } from '../core/units/format-quantity.ts';
+import { observeDesigns, peakLastsS, type SampleSeen } from './observe-designs.ts';
 
-/** The results to look at. */
-export interface ResultsSeen {
+/** A study and what was told of it before. */
+export interface ToldStudy {
   readonly study: Study;
-  readonly columns: readonly ResultColumn[];
-  readonly tally: RequirementResult;
-  readonly proposals: readonly Proposal[];
-  /** Stored values of a design by number, SI, one per column. */
-  valuesOf(number: number): Float64Array;
+  readonly studyFile: string;
+  readonly studyText: string;
+  readonly warnings: readonly Issue[];
 }
 
-/** Sentences in the order of the study's axes, then about missing objectives. What each requirement removes is told with the requirements. */
-export function resultWarnings(seen: ResultsSeen): string[] {
-  return [...seen.study.axes.flatMap((axis) => edgeWarnings(axis, seen)), ...missingObjectives(seen.tally)];
+/** How many designs miss each requirement, over those counted. */
+export interface RequirementsSeen {
+  readonly designs: number;
+  /** Every design of the search is counted. */
+  readonly whole: boolean;
+  /** Per requirement of the study. */
+  readonly failing: readonly number[];
+  /** Per requirement: the value that comes closest to its good end, SI; NaN where no design has one. */
+  readonly best: readonly number[];
+  /** Designs that meet every requirement but lack an objective. */
+  readonly withoutObjectives: number;
 }
 
-/** A list or options end where the choice ends; only a range could have been drawn wider. */
-function edgeWarnings({ name, range, points }: Study['axes'][number], { study, columns, proposals, valuesOf }: ResultsSeen): string[] {
-  if (range === null || points.length < 2) return [];
-  const at = columns.findIndex((column) => column.role === 'input' && column.name === name);
-  const ends = [
-    ['lowest', points[0][0]],
-    ['highest', points[points.length - 1][0]],
-  ] as const;
-  return ends.flatMap(([word, end]) => {
-    const there = proposals.filter(({ number }) => valuesOf(number)[at] === end).map(({ number }) => formatFigure(number, 0));
-    if (there.length === 0) return [];
-    const who = there.length === 1 ? `design ${there[0]} lies` : `designs ${there.slice(0, -1).join(', ')} and ${there.at(-1)} lie`;
-    const value = valueText(end, columns[at], study);
-    return [`Of the designs put forward, ${who} at the ${word} ${columnPhrase(columns[at], study)} searched, ${value}: a wider range may hold better ones.`];
+/** What designs have shown. */
+export interface ResultsSeen {
+  /** Null where nothing was counted. */
+  readonly requirements: RequirementsSeen | null;
+  /** Null where not every design was looked at. */
+  readonly proposals: readonly ProposedDesign[] | null;
+}
+
+/** A design put forward: the rules that chose it, and its varied numbers, SI. */
+export interface ProposedDesign {
+  readonly rules: readonly string[];
+  inputOf(name: string): number;
+}
+
+interface Context extends ResultsSeen {
+  readonly study: Study;
+  readonly sample: SampleSeen;
+  readonly told: readonly Issue[];
+}
+
+/** Every rule that takes results. */
+export const resultWarningRows: readonly WarningRow<Context>[] = [
+  { rule: 'grip at the start', expected: 'a start that motor and ratio decide', look: seeGrip },
+  { rule: 'battery limit', expected: 'a pack that feeds the motors looked at', look: seeBattery },
+  { rule: 'long at peak', expected: `at most about ${peakLastsS} s at peak torque`, look: seeLongPulls },
+  { rule: 'range edge', expected: 'the best designs inside the range', look: seeEdges },
+  { rule: 'idle requirement', expected: 'a requirement that tells designs apart', look: seeIdle },
+  { rule: 'requirement out of reach', expected: 'a requirement that some design meets', look: seeOutOfReach },
+  { rule: 'missing objective', expected: 'a figure for every objective', look: seeMissingObjectives },
+];
+
+/** The warnings that results add, in the order of the study file. Looks at a sample of designs, about half a second. */
+export function resultWarnings({ study, studyFile, studyText, warnings: told }: ToldStudy, seen: ResultsSeen): Issue[] {
+  const text = studyText.startsWith('\ufeff') ? studyText.slice(1) : studyText;
+  const issues = new IssueList(studyFile, text);
+  const offsetOf = placesInText(text);
+  const context = { ...seen, study, told, sample: observeDesigns(study) };
+  for (const { rule, expected, look } of resultWarningRows) {
+    for (const { path, found, hint } of look(context)) issues.warn(offsetOf(path), path, { rule, expected, found, hint });
+  }
+  return issues.list('warning');
+}
+
+function count(designs: number): string {
+  return formatFigure(designs, 0);
+}
+
+/** `all 468 designs`, `all 400 designs of a sample`. */
+function allOf({ designs, whole }: { readonly designs: number; readonly whole: boolean }): string {
+  return `all ${count(designs)} designs${whole ? '' : ' of a sample'}`;
+}
+
+function shareText(share: number): string {
+  const percent = 100 * share;
+  return `${percent < 99.5 || percent === 100 ? formatFigure(percent, 0) : 'over 99'} %`;
+}
+
+/** Grip decides the start of a trial in every design: motor and ratio change nothing there. */
+function seeGrip({ sample }: Context): Sight[] {
+  if (sample.designs < 2) return [];
+  return sample.trials
+    .filter(({ starts, gripStarts }) => starts > 0 && gripStarts === starts)
+    .map(({ trial }) => ({
+      path: `trials.${trial.name}`,
+      found: `grip, not the drive, limits the start in ${allOf(sample)}`,
+      hint:
+        trial.kind === 'hill start'
+          ? 'More torque or a larger ratio changes nothing in this trial; check adhesion and axle loads.'
+          : 'More torque or a larger ratio does not help at low speed in this trial; check adhesion and axle loads.',
+    }));
+}
+
+/** Battery power, not the motor, is the limit in more than half of the designs. */
+function seeBattery({ study, sample }: Context): Sight[] {
+  if (sample.designs < 2) return [];
+  const limited = sample.trials.filter(({ designs, byBattery }) => byBattery > designs / 2).sort((a, b) => b.byBattery / b.designs - a.byBattery / a.designs);
+  if (limited.length === 0) return [];
+  const where = limited.map(
+    ({ trial, designs, byBattery }) => `${shareText(byBattery / designs)} of the designs in ${trial.name}${trial.kind === 'cycle' ? ' (steps clipped)' : ''}`,
+  );
+  const path = ['battery.discharge', 'battery.resistance'].find((name) => study.values[name] !== undefined) ?? 'battery';
+  return [
+    {
+      path,
+      found: `battery power, not the motor, is the limit in ${someOf(where)}`,
+      hint: 'Motor power beyond what the pack gives is paid for and not used: look at smaller motors or a stronger pack.',
+    },
+  ];
+}
+
+/** Full pedal for longer than peak torque commonly lasts, in a design that may be chosen. */
+function seeLongPulls({ study, sample }: Context): Sight[] {
+  return sample.pedalTimes
+    .filter(({ longerThanPeak }) => longerThanPeak > 0)
+    .map(({ trial, designs, longerThanPeak, longestS }) => {
+      const which =
+        sample.designs === 1 ? '' : ` in ${shareText(longerThanPeak / designs)} of the designs${sample.passing > 0 ? ' that meet every requirement' : ''}`;
+      return {
+        path: `trials.${trial.name}`,
+        found: `full pedal at peak rating for more than ${peakLastsS} s${which}, up to ${shown(longestS, 'time', 0, study)}`,
+        hint: 'Ask for how long peak torque is rated, or write "rating: continuous" in the trial.',
+      };
+    });
+}
+
+/** Designs put forward at an end of a range: something better may lie beyond. Lists and options end where the choice ends. */
+function seeEdges({ study, proposals, told }: Context): Sight[] {
+  if (proposals === null || proposals.length === 0) return [];
+  return study.axes.flatMap((axis): Sight[] => {
+    const path = axisPath(axis);
+    if (axis.range === null || axis.points.length < 3 || told.some((issue) => issue.rule === 'unpriced circumstance' && issue.path === path)) return [];
+    const row = findParameter(axis.name) as ParameterRow;
+    const ends = endsOf(axis, row).flatMap(({ word, value }) => {
+      const there = proposals.filter(({ inputOf }) => inputOf(axis.name) === value);
+      if (there.length === 0) return [];
+      return [`${givenText(value, row, study)}, the ${word} searched, in the design${there.length === 1 ? '' : 's'} put forward as ${ruleWords(there)}`];
+    });
+    return ends.length === 0
+      ? []
+      : [{ path, found: ends.join('; '), hint: 'Something better may lie beyond: widen the range, unless no such part can be had.' }];
   });
 }
 
-function missingObjectives({ withoutObjectives }: RequirementResult): string[] {
-  if (withoutObjectives === 0) return [];
-  const [who, lacks] = withoutObjectives === 1 ? ['1 design meets', 'lacks'] : [`${formatFigure(withoutObjectives, 0)} designs meet`, 'lack'];
-  return [`${who} every requirement but ${lacks} a figure for an objective, and so cannot enter the front.`];
+/** The ends of a range beyond which there could be more: none where the figure itself ends there (100 %). */
+function endsOf({ points }: Axis, { atLeast, atMost }: ParameterRow): { word: string; value: number }[] {
+  const values = points.map(([value]) => value);
+  const [low, high] = [Math.min(...values), Math.max(...values)];
+  return [...(low === atLeast ? [] : [{ word: 'lowest', value: low }]), ...(high === atMost ? [] : [{ word: 'highest', value: high }])];
+}
+
+function ruleWords(proposals: readonly ProposedDesign[]): string {
+  return someOf(proposals.flatMap(({ rules }) => rules.map((rule) => (rule === 'balanced' ? rule : `best in ${rule}`))));
+}
+
+/** Each requirement with its row, the designs that miss it, and where it stands. */
+function requirementsOf(study: Study, { failing, best }: RequirementsSeen) {
+  const columns = metricColumns(study);
+  return study.requirements.map((requirement, r) => {
+    const column = columns.find(({ name }) => name === requirement.metric);
+    const row = column?.row as MetricRow;
+    const path = requirement.implied ? `trials.${column?.trial}` : `requirements.${requirement.metric}`;
+    const trial = study.trials.find(({ name }) => name === column?.trial);
+    return { requirement, row, trial, path, failing: failing[r], best: best[r], bound: boundText(requirement, row, study) };
+  });
+}
+
+function boundText({ bound, limit }: Requirement, row: MetricRow, study: Study): string {
+  return `${row.label} ${bound === 'atLeast' ? 'at least' : 'at most'} ${givenText(limit, row, study)}`;
+}
+
+/** A requirement that removes nothing; that cycles are followed is asked of itself and may well be so. */
+function seeIdle({ study, requirements }: Context): Sight[] {
+  if (requirements === null || requirements.designs < 2) return [];
+  return requirementsOf(study, requirements)
+    .filter(({ requirement, failing }) => failing === 0 && !requirement.implied)
+    .map(({ path, bound }) => ({
+      path,
+      found: `${bound}, met by ${allOf(requirements)}`,
+      hint: 'It removes nothing and plays no part in the choice: tighten it, or leave it out.',
+    }));
+}
+
+/** A requirement that removes everything, unless the reason was told. */
+function seeOutOfReach({ study, requirements, told }: Context): Sight[] {
+  if (requirements === null || requirements.designs < 2) return [];
+  return requirementsOf(study, requirements)
+    .filter(({ failing, best, trial }) => failing === requirements.designs && !wasTold(trial, best, study, told))
+    .map(({ path, bound, best, requirement, row }) => ({
+      path,
+      found: `${bound}, missed by ${allOf(requirements)}, ${Number.isNaN(best) ? 'none of which has a value' : `the best with ${besideLimit(best, requirement, row, study)}`}`,
+      hint: 'It removes everything: ease it, or search where it can be met.',
+    }));
+}
+
+/** Was it told that every design lacks the speed, or that designs have no values at all? */
+function wasTold(trial: Trial | undefined, best: number, study: Study, told: readonly Issue[]): boolean {
+  if (trial === undefined) return false;
+  if (Number.isNaN(best) && told.some(({ rule, path }) => rule === 'speeds out of order' || (rule === 'too heavy' && path === `trials.${trial.name}.laden`)))
+    return true;
+  return isBeyondEveryMotor(study, trial);
+}
+
+function besideLimit(value: number, { limit, bound }: Requirement, { quantity, decimals }: MetricRow, study: Study): string {
+  return withCurrency(formatAgainstLimit(value, limit, bound, quantity, { decimals, system: study.report.units }), quantity, study);
+}
+
+function seeMissingObjectives({ requirements }: Context): Sight[] {
+  if (requirements === null || requirements.withoutObjectives === 0) return [];
+  const { withoutObjectives, whole } = requirements;
+  const who = withoutObjectives === 1 ? '1 design' : `${count(withoutObjectives)} designs`;
+  return [
+    {
+      path: 'tradeOff',
+      found: `${who}${whole ? '' : ' of a sample'} that ${withoutObjectives === 1 ? 'meets' : 'meet'} every requirement but ${withoutObjectives === 1 ? 'has' : 'have'} no value for an objective`,
+      hint: 'They cannot enter the front; require what the objective needs, so that the reason shows.',
+    },
+  ];
 }

@@ -12,6 +12,9 @@ const sampleSize = 4_000;
 export class RunAccount {
   readonly tally: RequirementTally;
   readonly filter: FrontFilter;
+  /** Per requirement: the required figure that comes closest to its good end so far, SI; NaN where no design has one. */
+  readonly best: Float64Array;
+  private readonly requirements: Study['requirements'];
   private readonly objectiveColumns: readonly { readonly at: number; readonly sign: number }[];
   private readonly requirementColumns: readonly number[];
   private readonly feasibleSample = new HashedSample(sampleSize);
@@ -21,6 +24,8 @@ export class RunAccount {
   constructor(study: Study, columns: readonly ResultColumn[]) {
     const at = (metric: string) => columns.findIndex((column) => column.role === 'metric' && column.name === metric);
     this.objectiveColumns = study.objectives.map(({ metric, aim }) => ({ at: at(metric), sign: aim === 'minimise' ? 1 : -1 }));
+    this.requirements = study.requirements;
+    this.best = new Float64Array(study.requirements.length).fill(Number.NaN);
     this.requirementColumns = study.requirements.map(({ metric }) => at(metric));
     this.tally = new RequirementTally(study.requirements, study.objectives.length);
     this.filter = new FrontFilter(study.objectives.length);
@@ -44,11 +49,22 @@ export class RunAccount {
       feasible,
     );
     this.filter.add(count, numbers, objectives, feasible);
+    this.takeBest(count, columns);
     for (let i = 0; i < count; i++) {
       this.feasibleCount += feasible[i];
       (feasible[i] === 1 ? this.feasibleSample : this.removedSample).offer(first + i);
     }
     return feasible;
+  }
+
+  private takeBest(count: number, columns: readonly Float64Array[]): void {
+    for (const [r, { bound }] of this.requirements.entries()) {
+      const figures = columns[this.requirementColumns[r]];
+      for (let i = 0; i < count; i++) {
+        const better = bound === 'atLeast' ? figures[i] > this.best[r] : figures[i] < this.best[r];
+        if (better || Number.isNaN(this.best[r])) this.best[r] = figures[i];
+      }
+    }
   }
 
   /** Objectives of some designs, turned so that less is better. */

@@ -4,6 +4,7 @@ import { chartFiles } from '../charts/chart-files.ts';
 import type { ReportData } from '../charts/report-data.ts';
 import { machineValue } from '../core/evaluate/result-columns.ts';
 import { createDesignEvaluator, studyColumns } from '../core/search/evaluate-designs.ts';
+import { type Issue, issueRecord } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
 import { designsPerTask, evaluateInThreads } from './design-pool.ts';
 import { frontCsv } from './front-file.ts';
@@ -32,8 +33,8 @@ export interface RunOptions {
   readonly studyText: string;
   /** Digests of the further files the study uses. */
   readonly digests: readonly FileDigest[];
-  /** Sentences, from the check of the study. */
-  readonly warnings: readonly string[];
+  /** From the check of the study. */
+  readonly warnings: readonly Issue[];
   readonly outFolder: string;
   readonly workers: number;
   readonly version: string;
@@ -156,6 +157,6 @@ export function summaryOf(report: ReportData): object {
       return { metric: column?.key ?? metric, [bound]: machine(limit), implied, failing, failingAlone, relaxedTo: machine(relaxedTo) };
     }),
     closest: closest && { ...closest, ...figures(closest.number) },
-    warnings,
+    warnings: warnings.map(issueRecord),
   };
 }

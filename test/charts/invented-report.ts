@@ -7,6 +7,7 @@ import { balancedDesign, bestInEach } from '../../src/core/front/proposals.ts';
 import { RequirementTally } from '../../src/core/front/requirements.ts';
 import { thinFront } from '../../src/core/front/thin-front.ts';
 import { createSearch } from '../../src/core/search/search.ts';
+import type { Issue } from '../../src/core/study/issue.ts';
 import type { Study } from '../../src/core/study/study.ts';
 import { inventedStudy } from './invented-study.ts';
 
@@ -77,7 +78,7 @@ export function inventedReport({ study: given, harder = 0 }: InventedWishes = {}
     proposals: shown.length === 0 ? [] : proposals(study, shownNumbers, bestInEach(shownObjectives), balancedDesign(shownObjectives)),
     closest:
       result.closest === null ? null : { number: result.closest.number, missed: result.closest.missed.map((index) => study.requirements[index]!.metric) },
-    warnings: ['The figures of this study are invented.'],
+    warnings: [inventedWarning('the figures of this study are invented')],
     provenance: {
       version: '0.1.0',
       node: 'v20.20.2',
@@ -87,6 +88,12 @@ export function inventedReport({ study: given, harder = 0 }: InventedWishes = {}
       digests: [{ name: 'harbour-parcel-van.yaml', sha256: '9f2c7a41'.repeat(8) }],
     },
   };
+}
+
+/** A warning that has found this. */
+export function inventedWarning(found: string): Issue {
+  const place = { severity: 'warning' as const, file: 'harbour-parcel-van.yaml', line: 2, column: 1, source: '', caret: 0, path: 'about' };
+  return { ...place, rule: 'invented figures', expected: 'measured ones', found, hint: 'Measure them.' };
 }
 
 /** Every design as a row of result columns, the reference first. NaN: does not exist. */

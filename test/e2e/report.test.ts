@@ -4,7 +4,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ReportData } from '../../src/charts/report-data.ts';
 import { createBench, type MachineSheet, machineSheet } from '../../src/core/search/design-bench.ts';
 import { openBrowser } from '../browser.ts';
-import { inventedReport } from '../charts/invented-report.ts';
+import { inventedReport, inventedWarning } from '../charts/invented-report.ts';
 import { inventedStudy } from '../charts/invented-study.ts';
 import { emptyFolder } from './built-program.ts';
 import { openReport, writeReport } from './report-page.ts';
@@ -231,7 +231,7 @@ describe('the report in a browser', () => {
 describe('hostile text in a browser', () => {
   it('is harmless everywhere it is shown', async () => {
     const study = inventedStudy({ title: nasty, rampName: `ra${nasty}`.replaceAll('.', '') });
-    const report: ReportData = { ...inventedReport({ study }), studyText: nasty.repeat(200), studyFile: nasty, warnings: [nasty] };
+    const report: ReportData = { ...inventedReport({ study }), studyText: nasty.repeat(200), studyFile: nasty, warnings: [inventedWarning(nasty)] };
     const { page, said, asked } = await openReport(browser, writeReport(report, folder.path, 'hostile.html'));
     await page.selectOption('#axis-x', '6');
     await page.locator('.card button').first().click();

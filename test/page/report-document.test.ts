@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest';
 import type { ReportData } from '../../src/charts/report-data.ts';
 import { cautionLine, cautions } from '../../src/core/study/cautions.ts';
 import { reportDocument } from '../../src/page/report-document.ts';
-import { inventedReport } from '../charts/invented-report.ts';
+import { inventedReport, inventedWarning } from '../charts/invented-report.ts';
 import { inventedStudy } from '../charts/invented-study.ts';
 
 const sha256 = (text: string) => createHash('sha256').update(text, 'utf8').digest('base64');
@@ -87,6 +87,15 @@ describe('the report without script', () => {
     expect(words(page, '.left-out')).toContain('Peak duration');
   });
 
+  it('says what to keep an eye on once, in a section of its own after the answer, with rule, reason and place', () => {
+    const heads = [...page.querySelectorAll('h2')].map(({ id }) => id);
+    expect(heads.slice(0, 4)).toEqual(['question', 'answer', 'watch', 'trade']);
+    expect([...page.querySelectorAll('.watch dt')].map((term) => term.textContent)).toEqual(['Invented figures']);
+    expect(words(page, '.watch dd')).toBe('The figures of this study are invented; expected measured ones. Measure them. Line 2, about');
+    expect(words(page, 'main').split('figures of this study are invented')).toHaveLength(2);
+    expect(read({ ...data, warnings: [] }).getElementById('watch')).toBeNull();
+  });
+
   it('tells versions, digests, traces, settings and the study as written', () => {
     const method = words(page, 'main > section:last-of-type');
     for (const part of [
@@ -149,14 +158,14 @@ describe('the report when no design passes', () => {
 describe('hostile text', () => {
   const nasty = `</script><script>alert(1)</script><!-- "'&\u202e\u2028 🚚`;
   const study = inventedStudy({ title: nasty, rampName: `ra${nasty}`.replaceAll('.', '') });
-  const report: ReportData = { ...inventedReport({ study }), studyText: nasty.repeat(50), studyFile: nasty, warnings: [nasty] };
+  const report: ReportData = { ...inventedReport({ study }), studyText: nasty.repeat(50), studyFile: nasty, warnings: [inventedWarning(nasty)] };
 
   it('stays text wherever it is shown', () => {
     const page = read(report);
     expect(page.querySelectorAll('script')).toHaveLength(2);
     expect(words(page, 'h1')).toContain('</script><script>alert(1)</script><!--');
     expect(page.querySelector('pre')?.textContent).toContain('[U+202E]');
-    expect(page.querySelectorAll('main > section')).toHaveLength(6);
+    expect(page.querySelectorAll('main > section')).toHaveLength(7);
   });
 
   it('survives the way into the data and back unchanged', () => {

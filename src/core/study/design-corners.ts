@@ -18,13 +18,13 @@ export function valuesAt(values: DesignValues, { sets }: Pick<Axis, 'sets'>, poi
   return design;
 }
 
-/** Every combination of the lowest and the highest value of each number under `vary`, and of all options, where `matters` says yes to a name they set. */
+/** Every combination of the lowest and the highest value of each number under `vary`, of all its pairs, and of all options, where `matters` says yes to a name they set. */
 export function cornersOf(study: Pick<Study, 'axes' | 'values'>, matters: (name: string) => boolean): DesignValues[] {
   return study.axes
     .filter(({ sets }) => sets.some(matters))
     .reduce<DesignValues[]>(
       (corners, axis) => {
-        const ends = axis.labels === null ? endsOf(axis) : axis.points;
+        const ends = axis.labels === null && axis.sets.length === 1 ? endsOf(axis) : axis.points;
         if (corners.length * ends.length > MOST_CORNERS) return corners;
         return corners.flatMap((values) => ends.map((point) => valuesAt(values, axis, point)));
       },

@@ -99,8 +99,10 @@ export class IssueList {
 
   /** All issues in the order of the file, those of other files after them; errors only, or warnings only. */
   list(severity: Issue['severity']): Issue[] {
-    const own = (issue: Issue) => (issue.file === this.file ? 0 : 1);
-    return this.issues.filter((issue) => issue.severity === severity).sort((a, b) => own(a) - own(b) || a.line - b.line || a.column - b.column);
+    return inFileOrder(
+      this.issues.filter((issue) => issue.severity === severity),
+      this.file,
+    );
   }
 
   private add(severity: Issue['severity'], offset: number, path: string, words: IssueWords): void {
@@ -116,6 +118,12 @@ export class IssueList {
     const { rule = '', expected, found, hint = '' } = words;
     this.issues.push({ ...place, rule, expected: printable(expected), found: printable(clip(found, 200)), hint: printable(hint) });
   }
+}
+
+/** Issues in the order of the study file, those of other files after them. */
+export function inFileOrder(issues: readonly Issue[], studyFile: string): Issue[] {
+  const own = (issue: Issue) => (issue.file === studyFile ? 0 : 1);
+  return [...issues].sort((a, b) => own(a) - own(b) || a.line - b.line || a.column - b.column);
 }
 
 function lineStartsOf(text: string): number[] {

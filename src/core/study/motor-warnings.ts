@@ -24,24 +24,44 @@ function reachMPerS(study: Study, values: DesignValues): number {
   return (maxSpeedRadPerS(study, values) * (values['vehicle.wheelRadius'] as number)) / ratio;
 }
 
+/** A speed that a trial asks for, and the points of the ratio's axis (one, where it does not vary) at which no motor of the study allows it. */
+interface SpeedShortfall {
+  readonly wantedMPerS: number;
+  readonly axis: Axis | undefined;
+  readonly reachesMPerS: readonly number[];
+  readonly short: readonly number[];
+}
+
+function speedShortfall(study: Study, { name, kind, trace, with: replaced }: Study['trials'][number]): SpeedShortfall | null {
+  const wantedMPerS = speedWanted(study, name, kind, trace);
+  if (!(wantedMPerS > 0)) return null;
+  const axis = RATIOS.filter((ratio) => replaced[ratio] === undefined)
+    .map((ratio) => study.axes.find(({ sets }) => sets.includes(ratio)))
+    .find((each) => each !== undefined);
+  const others = cornersOf({ ...study, axes: study.axes.filter((each) => each !== axis) }, (each) => REACH.includes(each));
+  const best = (at: (values: DesignValues) => DesignValues) =>
+    others.reduce((most, values) => Math.max(most, reachMPerS(study, { ...at(values), ...replaced })), 0);
+  const reachesMPerS = axis === undefined ? [best((values) => values)] : axis.points.map((point) => best((values) => valuesAt(values, axis, point)));
+  const short = reachesMPerS.flatMap((reach, index) => (reach < wantedMPerS * (1 - 1e-12) ? [index] : []));
+  return { wantedMPerS, axis, reachesMPerS, short };
+}
+
+/** Does a trial ask for more speed than any design has? */
+export function isBeyondEveryMotor(study: Study, trial: Study['trials'][number]): boolean {
+  const shortfall = speedShortfall(study, trial);
+  return shortfall !== null && shortfall.short.length === shortfall.reachesMPerS.length;
+}
+
 /** Speeds that requirements, objectives and cycles ask for, against the highest that any motor of the study allows at each ratio. */
 export function seeMotorSpeed({ study }: WarningContext): Sight[] {
-  return study.trials.flatMap(({ name, kind, trace, with: replaced }): Sight[] => {
-    const wanted = speedWanted(study, name, kind, trace);
-    if (!(wanted > 0)) return [];
-    const axis = RATIOS.filter((ratio) => replaced[ratio] === undefined)
-      .map((ratio) => study.axes.find(({ sets }) => sets.includes(ratio)))
-      .find((each) => each !== undefined);
-    const others = cornersOf({ ...study, axes: study.axes.filter((each) => each !== axis) }, (each) => REACH.includes(each));
-    const reachOf = (at: (values: DesignValues) => DesignValues) =>
-      others.reduce((best, values) => Math.max(best, reachMPerS(study, { ...at(values), ...replaced })), 0);
-    const reaches = axis === undefined ? [reachOf((values) => values)] : axis.points.map((point) => reachOf((values) => valuesAt(values, axis, point)));
-    const short = reaches.flatMap((reach, index) => (reach < wanted * (1 - 1e-12) ? [index] : []));
-    if (short.length === 0) return [];
+  return study.trials.flatMap((trial): Sight[] => {
+    const shortfall = speedShortfall(study, trial);
+    if (shortfall === null || shortfall.short.length === 0) return [];
+    const wanted = formatLimit(shortfall.wantedMPerS, 'speed', { decimals: 0, system: study.report.units });
     return [
       {
-        path: `trials.${name}`,
-        found: `${formatLimit(wanted, 'speed', { decimals: 0, system: study.report.units })} wanted, beyond maximum motor speed at ${partOf(axis, short, reaches, wanted, study)}`,
+        path: `trials.${trial.name}`,
+        found: `${wanted} wanted, beyond maximum motor speed at ${partOf(shortfall, study)}`,
         hint: 'Those designs cannot meet it: raise motor.maxSpeed, lower the ratio, or cap the speed of the cycle.',
       },
     ];
@@ -49,12 +69,13 @@ export function seeMotorSpeed({ study }: WarningContext): Sight[] {
 }
 
 /** Where on an axis the speed does not suffice. */
-function partOf(axis: Axis | undefined, short: readonly number[], reaches: readonly number[], wanted: number, study: Study): string {
+function partOf({ wantedMPerS, axis, reachesMPerS, short }: SpeedShortfall, study: Study): string {
   if (axis === undefined) return 'the ratio of the study';
   if (axis.labels !== null) return `${someOf(short.map((index) => axis.labels?.[index] as string))} of ${axis.name}`;
   if (short.length === axis.points.length) return `every ${axis.name}`;
+  if (axis.sets.length > 1) return `${short.length} of the ${axis.points.length} values of ${axis.name}`;
   const first = short[0] as number;
-  const most = ((axis.points[first]?.[0] as number) * (reaches[first] as number)) / wanted;
+  const most = ((axis.points[first]?.[0] as number) * (reachesMPerS[first] as number)) / wantedMPerS;
   return `${axis.name} above ${shown(most, 'number', 2, study)}`;
 }
 
