@@ -1,10 +1,12 @@
 /** Motion at full pedal in one gear on one slope: how long and how far a change of speed takes, exactly by pieces. */
 import { addMoments, type Moments } from '../numerics/quadrature.ts';
 import type { RealFunction } from '../numerics/roots.ts';
-import { type Gear, maxVehicleSpeedMPerS } from '../vehicle/gearing.ts';
-import { EDGE } from '../vehicle/motor.ts';
+import { adhesionLimitN } from '../vehicle/adhesion.ts';
+import { clipToBatteryNm, dischargeLimitW } from '../vehicle/battery.ts';
+import { type Gear, maxVehicleSpeedMPerS, motorSpeedRadPerS, wheelForceN } from '../vehicle/gearing.ts';
+import { EDGE, motorLossW } from '../vehicle/motor.ts';
 import { resistanceN, type Slope } from '../vehicle/road-load.ts';
-import { tractiveForceN } from '../vehicle/traction.ts';
+import { torqueLimitNm } from '../vehicle/traction.ts';
 import { type DrivingRating, tractionBreakSpeeds } from '../vehicle/traction-breaks.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 
@@ -48,11 +50,39 @@ export function isBeyondMotorSpeed(vehicle: Vehicle, gear: Gear, speedMPerS: num
 /** Full pedal in that gear. */
 export function pullInGear(vehicle: Vehicle, gear: Gear, { slope, rating }: PedalConditions): Pull {
   return {
-    netForceN: (speedMPerS) => tractiveForceN(vehicle, gear, speedMPerS, rating, slope) - resistanceN(vehicle.road, speedMPerS, slope),
+    netForceN: netForce(vehicle, gear, slope, rating),
     effectiveMassKg: vehicle.effectiveMassKg[gear],
     topMPerS: maxVehicleSpeedMPerS(vehicle, gear),
     breaksMPerS: (fromMPerS, toMPerS) => tractionBreakSpeeds(vehicle, gear, rating, slope, fromMPerS, toMPerS),
   };
+}
+
+/**
+ * Tractive force less resistance, for many speeds: the same bits as `tractiveForceN` gives, but battery and adhesion are only asked where they
+ * might bind.
+ */
+function netForce(vehicle: Vehicle, gear: Gear, slope: Slope, rating: DrivingRating): RealFunction {
+  const { motor, road } = vehicle;
+  const sparedW = powerWithinBatteryW(vehicle);
+  const sparedN = Math.min(adhesionLimitN(vehicle, 0, slope.cos), adhesionLimitN(vehicle, maxVehicleSpeedMPerS(vehicle, gear), slope.cos));
+  return (speedMPerS) => {
+    const speedRadPerS = motorSpeedRadPerS(vehicle, gear, speedMPerS);
+    const limitNm = torqueLimitNm(motor, speedRadPerS, rating);
+    const spared = limitNm * speedRadPerS <= sparedW && limitNm <= motor.peakTorqueNm;
+    const torqueNm = spared ? limitNm : clipToBatteryNm(vehicle, limitNm, speedRadPerS);
+    const driveN = wheelForceN(vehicle, gear, torqueNm, speedRadPerS);
+    // Adhesion rises or falls throughout with speed: it is least at one of the ends.
+    const tractiveN = driveN <= sparedN ? driveN : Math.min(driveN, adhesionLimitN(vehicle, speedMPerS, slope.cos));
+    return tractiveN - resistanceN(road, speedMPerS, slope);
+  };
+}
+
+/** Shaft power below which the battery cannot bind up to peak torque: it has room for the largest loss besides. */
+function powerWithinBatteryW({ motor, battery, auxiliariesW }: Vehicle): number {
+  const allowedW = dischargeLimitW(battery) - auxiliariesW;
+  if (allowedW === Infinity) return Infinity;
+  // Losses from coefficients rise with torque and speed; a map is asked each time.
+  return motor.lossMap === null ? allowedW - motorLossW(motor, motor.peakTorqueNm, motor.maxSpeedRadPerS) : -Infinity;
 }
 
 /**
@@ -77,12 +107,14 @@ export function afterSpeedChange(pull: Pull, from: Motion, toMPerS: number, rise
 
 /** The motion after speeding up to `toMPerS`, over breaks; null where F − R ≤ 0 anywhere on the way, its ends included. */
 export function afterSpeedingUp(pull: Pull, from: Motion, toMPerS: number): Motion | null {
-  if (!(pull.netForceN(from.speedMPerS) > 0 && pull.netForceN(toMPerS) > 0)) return null;
+  const pulls = (speedMPerS: number) => pull.netForceN(speedMPerS) > 0;
+  if (!(pulls(from.speedMPerS) && pulls(toMPerS))) return null;
   let motion = from;
-  for (const next of [...pull.breaksMPerS(from.speedMPerS, toMPerS), toMPerS]) {
-    if (!(pull.netForceN(next) > 0)) return null;
+  for (const next of pull.breaksMPerS(from.speedMPerS, toMPerS)) {
+    if (!pulls(next)) return null;
     motion = afterSpeedChange(pull, motion, next);
     if (Number.isNaN(motion.timeS)) return null;
   }
-  return motion;
+  motion = afterSpeedChange(pull, motion, toMPerS);
+  return Number.isNaN(motion.timeS) ? null : motion;
 }

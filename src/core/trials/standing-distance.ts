@@ -23,7 +23,7 @@ const SETTLED = 1e-10;
 /** Share of the way to that speed that one step goes. */
 const STRIDE = 0.75;
 /** Share of the distance within which the end is found by its last slope, and rounds of coming closer at most. */
-const CLOSE = 1e-7;
+const CLOSE = 2e-6;
 const ROUNDS = 50;
 
 /**
@@ -64,19 +64,32 @@ function held(from: Motion, speedMPerS: number, distanceM: number): Motion {
  * to rest. Against a negative net force (after a shift to a gear that cannot hold the speed) speed falls.
  */
 function pullAlong(pull: Pull, from: Motion, untilMPerS: number, distanceM: number): Motion | null {
-  const rises = pull.netForceN(from.speedMPerS) > 0;
+  let here = pointAt(from, pull.netForceN(from.speedMPerS));
+  const rises = here.netN > 0;
   if (rises && from.speedMPerS >= untilMPerS) return from;
+  if (here.netN === 0) return settled(pull, here, from.speedMPerS, distanceM);
   const ends = rises ? [...pull.breaksMPerS(from.speedMPerS, untilMPerS), untilMPerS] : [0, ...pull.breaksMPerS(0, from.speedMPerS)].reverse();
-  const keepsSign = (speedMPerS: number) => (rises ? pull.netForceN(speedMPerS) > 0 : pull.netForceN(speedMPerS) < 0);
-  let motion = from;
   for (const end of ends) {
-    if (!keepsSign(motion.speedMPerS)) return settled(pull, motion, motion.speedMPerS, distanceM);
-    const ahead = keepsSign(end) ? afterSpeedChange(pull, motion, end) : { speedMPerS: end, timeS: Number.NaN, distanceM: Number.NaN };
-    if (Number.isNaN(ahead.timeS)) return settled(pull, motion, balanceMPerS(pull, motion.speedMPerS, ahead.speedMPerS), distanceM);
-    if (ahead.distanceM >= distanceM) return between(pull, motion, ahead, distanceM);
-    motion = ahead;
+    const netN = pull.netForceN(end);
+    const keepsSign = rises ? netN > 0 : netN < 0;
+    const ahead = keepsSign ? afterSpeedChange(pull, here, end) : null;
+    if (ahead === null || Number.isNaN(ahead.timeS)) {
+      return settled(pull, here, balanceMPerS(pull, here.speedMPerS, ahead === null ? end : ahead.speedMPerS), distanceM);
+    }
+    const there = pointAt(ahead, netN);
+    if (there.distanceM >= distanceM) return between(pull, here, there, distanceM);
+    here = there;
   }
-  return rises ? motion : null;
+  return rises ? here : null;
+}
+
+/** A motion with the net force at its speed. */
+interface Point extends Motion {
+  netN: number;
+}
+
+function pointAt({ speedMPerS, timeS, distanceM }: Motion, netN: number): Point {
+  return { speedMPerS, timeS, distanceM, netN };
 }
 
 /** The speed, first on the way from one to another, at which net force vanishes; it has different signs at the two. */
@@ -86,47 +99,49 @@ function balanceMPerS(pull: Pull, fromMPerS: number, toMPerS: number): number {
 }
 
 /** The motion at the distance while speed approaches `balanceMPerS`, at which net force vanishes; null when that is rest. */
-function settled(pull: Pull, from: Motion, balanceMPerS: number, distanceM: number): Motion | null {
-  let motion = from;
-  while (Math.abs(balanceMPerS - motion.speedMPerS) > SETTLED * Math.max(balanceMPerS, 1e-3)) {
-    const ahead = afterSpeedChange(pull, motion, motion.speedMPerS + STRIDE * (balanceMPerS - motion.speedMPerS));
+function settled(pull: Pull, from: Point, balanceMPerS: number, distanceM: number): Motion | null {
+  let here = from;
+  while (Math.abs(balanceMPerS - here.speedMPerS) > SETTLED * Math.max(balanceMPerS, 1e-3)) {
+    const ahead = afterSpeedChange(pull, here, here.speedMPerS + STRIDE * (balanceMPerS - here.speedMPerS));
     // Rounding hides the sign of net force: as close as it gets.
     if (Number.isNaN(ahead.timeS)) break;
-    if (ahead.distanceM >= distanceM) return between(pull, motion, ahead, distanceM);
-    motion = ahead;
+    const there = pointAt(ahead, pull.netForceN(ahead.speedMPerS));
+    if (there.distanceM >= distanceM) return between(pull, here, there, distanceM);
+    here = there;
   }
-  return balanceMPerS > 0 ? held(motion, balanceMPerS, distanceM) : null;
+  return balanceMPerS > 0 ? held(here, balanceMPerS, distanceM) : null;
 }
 
 /**
- * The motion at the distance, between two of the same stretch: a guess from the square of speed as a cubic of distance through both ends
- * and their slopes d(v²)/dx = 2 (F − R)/m_e, the nearer end moved there exactly, and again.
+ * The motion at the distance, between two of one stretch: guesses the speed, moves the nearer end there exactly, and again; the last
+ * little way is a straight line.
  */
-function between(pull: Pull, from: Motion, to: Motion, distanceM: number): Motion {
+function between(pull: Pull, from: Point, to: Point, distanceM: number): Motion {
   let [before, beyond] = [from, to];
   for (let round = 1; ; round++) {
     const guess = guessMPerS(pull, before, beyond, distanceM);
     const nearer = distanceM - before.distanceM < beyond.distanceM - distanceM ? before : beyond;
-    const motion = afterSpeedChange(pull, nearer, guess, to.speedMPerS > from.speedMPerS);
-    const leftM = distanceM - motion.distanceM;
+    const there = pointAt(afterSpeedChange(pull, nearer, guess, to.speedMPerS > from.speedMPerS), pull.netForceN(guess));
+    const leftM = distanceM - there.distanceM;
     if (Math.abs(leftM) <= CLOSE * distanceM || round === ROUNDS) {
-      const timeS = leftM / guess;
-      return { speedMPerS: guess + (timeS * pull.netForceN(guess)) / pull.effectiveMassKg, timeS: motion.timeS + timeS, distanceM };
+      const leftS = leftM / guess;
+      return { speedMPerS: guess + (leftS * there.netN) / pull.effectiveMassKg, timeS: there.timeS + leftS, distanceM };
     }
-    if (leftM > 0) before = motion;
-    else beyond = motion;
+    if (leftM > 0) before = there;
+    else beyond = there;
   }
 }
 
-function guessMPerS(pull: Pull, before: Motion, beyond: Motion, distanceM: number): number {
+/** A speed at which the distance might be reached: the square of speed as a cubic of distance with the slopes 2 (F − R)/m_e at both ends. */
+function guessMPerS({ effectiveMassKg }: Pull, before: Point, beyond: Point, distanceM: number): number {
   const spanM = beyond.distanceM - before.distanceM;
   const share = (distanceM - before.distanceM) / spanM;
   const rest = 1 - share;
-  const slope = (motion: Motion) => (2 * spanM * pull.netForceN(motion.speedMPerS)) / pull.effectiveMassKg;
   const [low, high] = [before.speedMPerS * before.speedMPerS, beyond.speedMPerS * beyond.speedMPerS];
-  const rise = slope(before);
-  const cubic = rest * rest * (low * (1 + 2 * share) + rise * share) + share * share * (high * (1 + 2 * rest) - slope(beyond) * rest);
+  const rise = (2 * spanM * before.netN) / effectiveMassKg;
+  const lastRise = (2 * spanM * beyond.netN) / effectiveMassKg;
   const inside = (square: number) => (square - low) * (high - square) > 0;
+  const cubic = rest * rest * (low * (1 + 2 * share) + rise * share) + share * share * (high * (1 + 2 * rest) - lastRise * rest);
   if (inside(cubic)) return Math.sqrt(cubic);
   // Far into the approach to a steady speed the cubic overshoots.
   const line = low + rise * share;
