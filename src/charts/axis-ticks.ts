@@ -1,7 +1,7 @@
 /** Ticks that read well and never collide: as many as there is room for, in steps of 1, 2 or 5. */
 import { type ScaleLinear, scaleLinear, tickStep } from 'd3';
 import { formatFigure } from '../core/units/format-quantity.ts';
-import { noOption, ownFigures } from './figure-words.ts';
+import { noOption } from './figure-words.ts';
 import type { ChartAxis } from './trade-off-view.ts';
 
 /** Mean width of a character as a share of the type size; on the wide side of common sans-serif faces. */
@@ -75,11 +75,14 @@ function numberTicks(scale: ScaleLinear<number, number>, count: number): Tick[] 
   return scale.ticks(count).map((value) => ({ value, text: formatFigure(value, decimals) }));
 }
 
-/** Every name where there is room for all, else every second, third, … */
+/** Every name where there is room for all, else every second, third, …; the reference, where it has a place, first. */
 function nameTicks(scale: ScaleLinear<number, number>, names: readonly string[], length: number, size: number, lying: boolean): Tick[] {
-  const places = [...(scale.domain()[0]! < noOption ? [{ value: noOption, text: ownFigures }] : []), ...names.map((text, value) => ({ value, text }))];
+  const places = [...(scale.domain()[0]! < noOption ? [{ value: noOption, text: 'reference' }] : []), ...names.map((text, value) => ({ value, text }))];
   const apart = length / places.length;
-  const needed = lying ? Math.max(...places.map(({ text }) => textWidth(text, size))) + size : size * 1.6;
-  const every = Math.max(1, Math.ceil(needed / apart));
-  return places.filter((_, index) => index % every === 0);
+  const needed = (a: string, b: string) => (lying ? (textWidth(a, size) + textWidth(b, size)) / 2 + size : size * 1.6);
+  for (let every = 1; every < places.length; every++) {
+    const kept = places.filter((_, index) => index % every === 0);
+    if (kept.slice(1).every(({ text }, index) => every * apart >= needed(kept[index]!.text, text))) return kept;
+  }
+  return places.slice(0, 1);
 }

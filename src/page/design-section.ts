@@ -1,5 +1,5 @@
 /** One design in full: every metric of every trial with what limits it, as the page computed it. */
-import { capitalised, figureText, inputText, type Measured } from '../charts/figure-words.ts';
+import { capitalised, figureText, inputText, type Measured, ownFigures } from '../charts/figure-words.ts';
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
 import { chooseDesign } from '../core/search/choose-design.ts';
 import type { ComputedDesign, DesignMetric } from '../core/search/design-bench.ts';
@@ -23,10 +23,13 @@ export function designInFull(design: ComputedDesign, name: string, data: ReportD
 <div class="trial-grid">${trials}<section class="trial"><h4>Drive unit and vehicle</h4>${metricList(design, null, data)}</section></div>`;
 }
 
+/** Files that options bring. */
+const fileLabels: Readonly<Record<string, string>> = { 'motor.fullLoad': 'full-load curve', 'motor.map': 'measured map' };
+
 function inputRows(design: ComputedDesign, { study }: ReportData): Piece[] {
   return design.inputs.map((input) => {
     const { name, row } = input;
-    if (row === null) return html`<div><dt>${name}</dt><dd>${input.option ?? "the study's own"}</dd></div>`;
+    if (row === null) return html`<div><dt>${fileLabels[name] ?? name}</dt><dd>${input.option ?? ownFigures}</dd></div>`;
     const label = name.startsWith('trials.') ? name.slice('trials.'.length) : row.label;
     return html`<div><dt>${label}</dt><dd>${inputText(input.value, row, study)}</dd></div>`;
   });

@@ -83,7 +83,7 @@ function optionTable({ name, sets, points, labels }: Axis, study: Study): Markup
     (label, index) =>
       html`<tr><th scope="row">${label}</th>${shown.map(({ set, k }) => html`<td class="figure">${settingText(set, points[index]?.[k] ?? Number.NaN, study)}</td>`)}</tr>`,
   );
-  return html`<div class="scroll" tabindex="0" role="region" aria-label="${name}: what each option sets"><table><thead><tr><th scope="col">Option</th>${heads}</tr></thead><tbody>${rows}</tbody></table></div>`;
+  return html`<div class="scroll" tabindex="0" role="region" aria-label="${name}: what each option sets"><table class="options"><thead><tr><th scope="col">Option</th>${heads}</tr></thead><tbody>${rows}</tbody></table></div>`;
 }
 
 /** A number as the study gives it; a curve or map by its file. */

@@ -66,11 +66,26 @@ describe('an axis of options', () => {
     ]);
   });
 
+  it('never has names that collide, however long they are', () => {
+    fc.assert(
+      fc.property(fc.array(fc.integer({ min: 1, max: 24 }), { minLength: 1, maxLength: 60 }), fc.integer({ min: 120, max: 900 }), (lengths, width) => {
+        const named: ChartAxis = { title: 'motor', better: null, names: lengths.map((long) => 'm'.repeat(long)) };
+        const scale = axisScale([-1], named, 0, width);
+        const ticks = axisTicks(scale, named, width, 13, true);
+        for (const [index, tick] of ticks.slice(1).entries()) {
+          const room = (textWidth(tick.text, 13) + textWidth(ticks[index]!.text, 13)) / 2;
+          expect(scale(tick.value) - scale(ticks[index]!.value)).toBeGreaterThanOrEqual(room);
+        }
+        expect(ticks[0]?.text).toBe('reference');
+      }),
+    );
+  });
+
   it('has a place of its own for the reference, which chose none of them', () => {
     const scale = axisScale([-1, 0, 1], axis, 0, 600);
     expect(scale(-1)).toBeGreaterThan(0);
     expect(axisTicks(scale, axis, 600, 13, true).map(({ value, text }) => [value, text])).toEqual([
-      [-1, "the study's own"],
+      [-1, 'reference'],
       [0, 'slow'],
       [1, 'fast'],
     ]);
