@@ -35,6 +35,8 @@ const WEIGHTS = [
  * about the square of the difference: 1e-12.
  */
 const AGREEMENT = 1e-6;
+/** The same between the two rules before. */
+const NEAR = 1e-2;
 /** Halvings of an interval, one inside the other, after which it is taken as it is. */
 const DEEPEST = 50;
 /** Halvings of a whole integral after which it is: a guard against values that are rougher than they claim. */
@@ -46,12 +48,13 @@ const differences = new Float64Array(POINTS.length);
 let halvingsLeft = MOST;
 
 /**
- * Adds ∫ f dx and ∫ x f dx from `from` to `to` (either may be the greater) to `total`. For f that is smooth on the interval and
- * may have a pole close to it: the interval is halved where 31 points do not settle it. Relative error about 1e-12, and what `noise` makes:
+ * Adds ∫ f dx and ∫ x f dx from `from` to `to` (0 or more, either may be the greater) to `total`. For f of one sign that is smooth on the
+ * interval and may have a pole close to it: the interval is halved where 31 points do not settle it. Relative error about 1e-12, and what `noise` makes:
  * values of f are taken to be uncertain by the share noise · |f|, and no more is asked of them. A NaN of f, wherever it is met,
  * makes both NaN at once.
  */
 export function addMoments(f: RealFunction, from: number, to: number, noise: number, total: Moments): void {
+  if (from === to) return;
   halvingsLeft = MOST;
   addPart(f, from, to, noise, total, DEEPEST);
 }
@@ -59,19 +62,26 @@ export function addMoments(f: RealFunction, from: number, to: number, noise: num
 function addPart(f: RealFunction, from: number, to: number, noise: number, total: Moments, depthLeft: number): void {
   const middle = 0.5 * (from + to);
   const half = 0.5 * (to - from);
-  let [integral, moment, points] = [Infinity, Infinity, 0];
+  let integral = Number.NaN;
+  let moment = Number.NaN;
+  let points = 0;
   let settled = false;
-  for (const weights of WEIGHTS) {
+  // Two rules may agree by chance, where the error of the former passes through zero: those before must have come near already.
+  let near = true;
+  for (let rule = 0; rule < WEIGHTS.length && !settled; rule++) {
+    const weights = WEIGHTS[rule];
     for (; points < weights.length; points++) evaluatePair(f, middle, half, points);
-    const [lastIntegral, lastMoment] = [integral, moment];
+    const lastIntegral = integral;
+    const lastMoment = moment;
     integral = half * weighted(weights, sums);
     moment = middle * integral + half * half * weighted(weights, differences);
-    const allowed = AGREEMENT + noise * Math.abs(integral / half);
-    // Asked so that NaN settles it.
-    settled = !(Math.abs(integral - lastIntegral) > allowed * Math.abs(integral) || Math.abs(moment - lastMoment) > allowed * Math.abs(moment));
-    if (settled) break;
+    if (Number.isNaN(integral)) break;
+    if (rule === 0) continue;
+    const apart = Math.max(Math.abs((integral - lastIntegral) / integral), Math.abs((moment - lastMoment) / moment));
+    settled = near && apart <= AGREEMENT + noise * Math.abs(integral / half);
+    near = apart <= NEAR;
   }
-  if (settled || depthLeft === 0 || halvingsLeft === 0) {
+  if (settled || Number.isNaN(integral) || depthLeft === 0 || halvingsLeft === 0) {
     total.integral += integral;
     total.moment += moment;
     return;
