@@ -35,13 +35,12 @@ export interface Proposal {
   readonly rules: readonly string[];
 }
 
-/** How the figures came about. */
+/** How the figures came about; between two runs of the same study only the date and the duration differ. */
 export interface Provenance {
   readonly version: string;
   readonly node: string;
   readonly started: string;
   readonly seconds: number;
-  readonly workers: number;
   /** SHA-256 of every input file, hexadecimal. */
   readonly digests: readonly { readonly name: string; readonly sha256: string }[];
 }

@@ -54,11 +54,11 @@ export function trialSettings(trial: Trial, study: Study): string {
 }
 
 function runWords({ study, provenance, counts }: ReportData): Markup {
-  const { version, node, started, seconds, workers, digests } = provenance;
+  const { version, node, started, seconds, digests } = provenance;
   const traces = [...new Map(study.trials.flatMap(({ trace }) => (trace === null ? [] : [[trace.name, trace] as const]))).values()];
   return html`<dl class="run">
 <div><dt>Designs</dt><dd>${formatFigure(counts.designs, 0)}, chosen by ${study.search.method}</dd></div>
-<div><dt>Computed</dt><dd>${started}, in ${formatFigure(seconds, 1)} s by ${workers} ${workers === 1 ? 'worker' : 'workers'}</dd></div>
+<div><dt>Computed</dt><dd>${started}, in ${formatFigure(seconds, 1)} s</dd></div>
 <div><dt>Versions</dt><dd>layshaft ${version}, Node ${node}</dd></div>
 ${traces.map(({ name, timesS, notes }) => html`<div><dt>Speed trace ${name}</dt><dd>${formatFigure((timesS.at(-1) ?? 0) - (timesS[0] ?? 0), 0)} s. ${notes.join(' ')}</dd></div>`)}
 ${digests.map(({ name, sha256 }) => html`<div><dt>SHA-256 of ${name}</dt><dd class="digest">${sha256}</dd></div>`)}

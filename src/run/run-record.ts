@@ -13,7 +13,6 @@ const runRecord = z.looseObject({
   study: z.string(),
   title: z.string(),
   started: z.iso.datetime(),
-  workers: count,
   /** Wall time, once finished. */
   seconds: z.number().nonnegative().optional(),
   counts: z.object({ designs: count, feasible: count, front: count, shownFront: count }).optional(),

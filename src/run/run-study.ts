@@ -65,7 +65,6 @@ export async function runStudy(options: RunOptions): Promise<RunOutcome> {
     study: options.studyFile,
     title: study.title,
     started: started.toISOString(),
-    workers: usefulWorkers,
   };
   const inputDigests = [digest(options.studyFile, options.studyText), ...options.digests];
 
@@ -93,7 +92,6 @@ export async function runStudy(options: RunOptions): Promise<RunOutcome> {
     node: record.node,
     started: record.started,
     seconds: secondsSince(started),
-    workers: usefulWorkers,
     digests: inputDigests,
   };
   const { report, front } = findingsOf({ ...options, provenance }, account, designs);

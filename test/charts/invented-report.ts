@@ -84,7 +84,6 @@ export function inventedReport({ study: given, harder = 0 }: InventedWishes = {}
       node: 'v20.20.2',
       started: '2026-12-01T05:12:00.000Z',
       seconds: 8.4,
-      workers: 2,
       digests: [{ name: 'harbour-parcel-van.yaml', sha256: '9f2c7a41'.repeat(8) }],
     },
   };

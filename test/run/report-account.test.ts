@@ -7,7 +7,7 @@ import { findingsOf } from '../../src/run/report-account.ts';
 import { RunAccount } from '../../src/run/run-account.ts';
 import { smallStudyText, studyOf } from './small-study.ts';
 
-const provenance = { version: '0.0.0', node: 'v20', started: '2026-01-01T00:00:00Z', seconds: 1, workers: 1, digests: [] };
+const provenance = { version: '0.0.0', node: 'v20', started: '2026-01-01T00:00:00Z', seconds: 1, digests: [] };
 const said: Issue = {
   severity: 'warning',
   rule: 'said before',

@@ -6,7 +6,7 @@ import { openRunFolder, runFolderName } from '../../src/run/run-folder.ts';
 import { writeWhole } from '../../src/run/write-whole.ts';
 
 const folder = mkdtempSync(join(tmpdir(), 'layshaft-write-'));
-const record = { state: 'running', version: '0.0.0', node: 'v20.19.0', study: 'a.yaml', title: 'A', started: '2026-01-01T00:00:00.000Z', workers: 1 } as const;
+const record = { state: 'running', version: '0.0.0', node: 'v20.19.0', study: 'a.yaml', title: 'A', started: '2026-01-01T00:00:00.000Z' } as const;
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
 test('a file is replaced as a whole and nothing is left beside it', () => {
