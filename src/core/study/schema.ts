@@ -128,6 +128,37 @@ function numbersByName(schemaOf: (row: ParameterRow) => Schema, more: Schema = {
 const metricName: Schema = { type: 'string', description: 'A metric: <trial>.<metric>, or one of the whole design.' };
 const limit: Schema = { type: ['number', 'string'], description: 'A figure with the unit of the metric.' };
 
+/** Names of which the file takes a list of two. */
+const pairs: readonly string[] = parameters.flatMap(({ name }) => (name.endsWith('.1') ? [name.slice(0, -2)] : []));
+const optionFile: Schema = { type: 'string', description: 'A CSV file with a row for each option: name,motor.peakTorque_Nm,motor.map' };
+
+function objectOf(properties: Schema): Schema {
+  return { type: 'object', properties, additionalProperties: false };
+}
+
+function withMore(schema: Schema, more: readonly (readonly [string, Schema])[]): Schema {
+  return { ...schema, properties: { ...(schema['properties'] as Schema), ...Object.fromEntries(more) } };
+}
+
+/** Two numbers that vary together, or the one number that may stand for both. */
+function pairAxisSchema(name: string): Schema {
+  const together = { ...objectOf({ oneOf: { type: 'array', items: pairSchema(placeAt(name)), minItems: 1 } }), required: ['oneOf'] };
+  const { parameter } = placeAt(name);
+  return parameter === null ? together : { anyOf: [{ $ref: `#/$defs/axis.${parameter.quantity}` }, together] };
+}
+
+/** One option: any number by its dotted name, pairs as lists, and what is named by a file or a text. */
+function optionSchema(): Schema {
+  const own = [...pairs, 'motor.fullLoad', 'motor.map', 'vehicle.tyre'].map((name): [string, Schema] => [name, placeSchema(placeAt(name), {})]);
+  const set = withMore({ ...numbersByName(figureSchema), patternProperties: { '^trials\\.': { type: ['string', 'number'] } } }, own);
+  const name = { type: ['string', 'number'], description: 'What results call the option.' };
+  return { ...objectOf({ name, set: { description: 'What it sets; the rest is as in the study.', ...set } }), required: ['name'] };
+}
+
+function placeAt(name: string): Place {
+  return name.split('.').reduce((place, key) => place.children.get(key) as Place, studyLayout);
+}
+
 const freeSchemas: Readonly<Record<string, Schema>> = {
   trials: {
     type: 'object',
@@ -135,10 +166,18 @@ const freeSchemas: Readonly<Record<string, Schema>> = {
     propertyNames: { pattern: '^[^.]+$' },
     additionalProperties: { anyOf: (Object.keys(trialKinds) as TrialKind[]).map(trialSchema) },
   },
-  vary: numbersByName((row) => ({ description: row.sentence, $ref: `#/$defs/axis.${row.quantity}` }), {
-    patternProperties: { '^trials\\.': { type: 'object' } },
-  }),
-  options: { not: {}, description: 'Not available yet.' },
+  vary: withMore(
+    numbersByName((row) => ({ description: row.sentence, $ref: `#/$defs/axis.${row.quantity}` }), { patternProperties: { '^trials\\.': { type: 'object' } } }),
+    pairs.map((name): [string, Schema] => [name, pairAxisSchema(name)]),
+  ),
+  options: {
+    type: 'object',
+    minProperties: 1,
+    propertyNames: { pattern: '^[^.=]+$' },
+    additionalProperties: {
+      anyOf: [optionFile, { ...objectOf({ file: optionFile }), required: ['file'] }, { type: 'array', items: optionSchema(), minItems: 1 }],
+    },
+  },
   search: { type: 'object', properties: { method: { enum: ['grid'], description: 'Every combination of the points of vary.' } }, additionalProperties: false },
   requirements: {
     type: 'object',

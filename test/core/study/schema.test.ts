@@ -95,6 +95,31 @@ describe('the schema of study files', () => {
     expect(answer(edited(harbour, edit))).not.toEqual([]);
   });
 
+  const offer = `options:
+  motor on offer:
+    - { name: slow-wound, set: { motor.peakTorque: 310 N·m, motor.map: { file: map.csv, peakTorque: 310 N·m } } }
+    - { name: 7, set: { trials.ramp.laden: 2600 kg, gearing.ratios: [11.2, 6.4], vehicle.tyre: 205/65 R16 } }
+    - { name: as drawn }
+  inverter: inverters.csv
+  body: { file: bodies.csv }
+`;
+
+  it('accepts options and pairs of ratios', () => {
+    expect(answer(harbour + offer)).toEqual([]);
+    const pair = edited(harbour, ['gearing.ratio:    { from: 7.5, to: 12.25, steps: 20 }', 'gearing.ratios: { oneOf: [[11.2, 6.4], [12, 7]] }']);
+    expect(answer(pair)).toEqual([]);
+  });
+
+  it.each<[string, [string, string]]>([
+    ['a figure without its unit', ['310 N·m, motor.map', '310, motor.map']],
+    ['an unknown name', ['motor.peakTorque', 'motor.peekTorque']],
+    ['an option without a name', ['{ name: as drawn }', '{ set: {} }']],
+    ['an unknown key', ['{ name: as drawn }', '{ name: as drawn, sets: {} }']],
+    ['a list name with a dot', ['motor on offer:', 'motor.offer:']],
+  ])('flags in options %s', (_, edit) => {
+    expect(answer(harbour + edited(offer, edit))).not.toEqual([]);
+  });
+
   it('describes every number of the catalogue, with its unit', () => {
     const text = JSON.stringify(schema);
     for (const row of parameters) expect(text).toContain(row.sentence.replaceAll('"', '\\"'));
