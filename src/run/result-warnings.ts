@@ -113,9 +113,7 @@ function seeBattery({ study, sample }: Context): Sight[] {
   if (sample.designs < 2) return [];
   const limited = sample.trials.filter(({ designs, byBattery }) => byBattery > designs / 2).sort((a, b) => b.byBattery / b.designs - a.byBattery / a.designs);
   if (limited.length === 0) return [];
-  const where = limited.map(
-    ({ trial, designs, byBattery }) => `${shareText(byBattery / designs)} of the designs in ${trial.name}${trial.kind === 'cycle' ? ' (steps clipped)' : ''}`,
-  );
+  const where = limited.map(({ trial, designs, byBattery }) => `${shareText(byBattery / designs)} of the designs ${placeIn(trial)}`);
   const path = ['battery.discharge', 'battery.resistance'].find((name) => study.values[name] !== undefined) ?? 'battery';
   return [
     {
@@ -124,6 +122,11 @@ function seeBattery({ study, sample }: Context): Sight[] {
       hint: 'Motor power beyond what the pack gives is paid for and not used: look at smaller motors or a stronger pack.',
     },
   ];
+}
+
+function placeIn({ kind, name }: Trial): string {
+  if (kind === 'cycle') return `in steps of ${name}`;
+  return kind === 'acceleration' || kind === 'standing distance' ? `at the end of ${name}` : `in ${name}`;
 }
 
 /** Full pedal for longer than peak torque commonly lasts, in a design that may be chosen. */
