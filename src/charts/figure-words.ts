@@ -36,9 +36,10 @@ export function capitalised(text: string): string {
   return text.slice(0, 1).toUpperCase() + text.slice(1);
 }
 
-/** Symbol of the unit people read, the currency for money; empty for pure numbers. */
+/** Symbol of the unit people read, the currency for money and in front of `/kW`; empty for pure numbers. */
 export function unitWord(quantity: Quantity, study: Study): string {
-  return quantity === 'money' ? shortText(study.currency ?? '', 12) : readingUnit(quantity, study.report.units).symbol;
+  const { symbol } = readingUnit(quantity, study.report.units);
+  return quantity === 'money' || symbol.startsWith('/') ? `${shortText(study.currency ?? '', 12)}${symbol}` : symbol;
 }
 
 /** A figure with its unit; a dash where it does not exist. */
@@ -47,10 +48,12 @@ export function figureText(value: number | null, measured: Measured, study: Stud
   return withCurrency(formatQuantity(value, measured.quantity, { decimals: measured.decimals, system: study.report.units }), measured.quantity, study);
 }
 
-/** Adds the currency to a figure that is money. */
+/** Adds the currency to a figure that is money, or money per something. */
 export function withCurrency(text: string, quantity: Quantity, study: Study): string {
-  const currency = unitWord(quantity, study);
-  return quantity === 'money' && currency !== '' ? `${text}\u202f${currency}` : text;
+  const { symbol } = readingUnit(quantity, study.report.units);
+  const unit = unitWord(quantity, study);
+  if (unit === symbol) return text;
+  return symbol === '' ? `${text}\u202f${unit}` : `${text.slice(0, -symbol.length)}${unit}`;
 }
 
 /** A value of a column: the option's name, or a figure with its unit; an input in no more decimals than it needs. */

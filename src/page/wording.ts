@@ -72,9 +72,9 @@ export function requirementClause(requirement: RequirementCount, data: ReportDat
     const load = loadWords(trial, study);
     const tag = load === '' ? ` (${shortText(trial.name, 40)})` : ` ${load} (${shortText(trial.name, 40)})`;
     const setting = (key: TrialParameter) => settingText(trial, key, study);
-    if (trial.kind === 'hill start') return { before: 'start on ', limit, after: ` or steeper${tag}` };
-    if (trial.kind === 'gradeability') return { before: 'climb ', limit, after: ` at ${setting('at')}${tag}` };
-    if (trial.kind === 'top speed') return { before: 'hold ', limit, after: tag };
+    if (trial.kind === 'hill start' && measure === trialMetrics.grade.label) return { before: 'start on ', limit, after: ` or steeper${tag}` };
+    if (trial.kind === 'gradeability' && measure === trialMetrics.grade.label) return { before: 'climb ', limit, after: ` at ${setting('at')}${tag}` };
+    if (trial.kind === 'top speed' && measure === trialMetrics.speed.label) return { before: 'hold ', limit, after: tag };
     if (trial.kind === 'acceleration' && measure === trialMetrics.time.label) {
       return { before: `go from ${setting('from')} to ${setting('to')} within `, limit, after: tag };
     }
@@ -86,12 +86,16 @@ export function requirementClause(requirement: RequirementCount, data: ReportDat
   return { before: `have ${requirement.bound === 'atLeast' ? 'at least' : 'at most'} `, limit, after: ` ${columnPhrase(column, study)}` };
 }
 
-/** `laden to 2800 kg`, `with 300 kg on board`; nothing where the trial carries nothing. */
-export function loadWords(trial: Trial, study: Study): string {
-  const laden = study.values[`trials.${trial.name}.laden`];
-  if (laden !== undefined) return `laden to ${settingText(trial, 'laden', study)}`;
-  const payload = study.values[`trials.${trial.name}.payload`];
-  return payload === undefined || payload === 0 ? '' : `with ${settingText(trial, 'payload', study)} on board`;
+/** `laden to 2800 kg`, `with 300 kg on board and a trailer of 1500 kg`; nothing where the trial carries and tows nothing. */
+function loadWords(trial: Trial, study: Study): string {
+  const given = (key: TrialParameter) => (study.values[`trials.${trial.name}.${key}`] ?? 0) > 0;
+  const load = given('laden')
+    ? `laden to ${settingText(trial, 'laden', study)}`
+    : given('payload')
+      ? `with ${settingText(trial, 'payload', study)} on board`
+      : '';
+  if (!given('trailer.mass')) return load;
+  return `${load}${load.startsWith('with') ? ' and' : ' with'} a trailer of ${settingText(trial, 'trailer.mass', study)}`.trimStart();
 }
 
 /** A trial's own figure as written, without needless decimals. */

@@ -30,6 +30,12 @@ describe('figures in words', () => {
     expect(valueText(null, column('driveUnit.cost'), study)).toBe('—');
   });
 
+  it('name the currency of money, and of money per something', () => {
+    expect(plain(givenText(2.4, { quantity: 'moneyPerTorque', decimals: 2 }, study))).toBe('2.4 EUR/(N·m)');
+    expect(plain(givenText(4.6e-3, { quantity: 'moneyPerPower', decimals: 2 }, study))).toBe('4.6 EUR/kW');
+    expect(plain(givenText(4.6e-3, { quantity: 'moneyPerPower', decimals: 2 }, { ...study, currency: null }))).toBe('4.6 /kW');
+  });
+
   it('never show a difference as none', () => {
     expect(plain(differenceText(0.00004, column('sprint.time'), study))).toBe('0.00004 s');
     expect(plain(differenceText(-0.021, column('ramp.grade'), study))).toBe('2.1 %-points');
