@@ -6,6 +6,7 @@
  */
 import { describe, expect, test } from 'vitest';
 import { exclusiveHypervolumes, hypervolume } from '../../../src/core/front/hypervolume.ts';
+import { compare } from '../../reference-table.ts';
 import { columnsOf } from './oracles.ts';
 import { dtlz2Angles, steps, zdt1, zdt2, zdt3, zdt6 } from './test-problems.ts';
 
@@ -38,7 +39,8 @@ describe('hypervolume of small sets', () => {
       expected: 13,
     },
   ])('up to $reference is $expected', ({ rows, reference, expected }) => {
-    expect(Math.abs(hypervolume(columnsOf(rows, reference.length), reference) - expected)).toBeLessThan(1e-14 * expected);
+    const got = hypervolume(columnsOf(rows, reference.length), reference);
+    compare({ check: `hypervolume up to ${reference}`, source: 'pagmo and moarchiving test values (read)', expected, got, within: 1e-14 });
   });
 
   test('six points in three objectives: 18, 2, 12, 1, 18 and 2 are each point’s own', () => {
@@ -61,13 +63,20 @@ describe('hypervolume of densely sampled fronts', () => {
     { name: 'ZDT2', front: (x: number) => zdt2(x, 1), published: 0.543333 },
     { name: 'ZDT3', front: (x: number) => zdt3(x, 1), published: 1.331763 },
     { name: 'ZDT6', front: (x: number) => zdt6(x, 1), published: 0.507878 },
-  ])('$name up to (1.1, 1.1) is $published', ({ front, published }) => {
+  ])('$name up to (1.1, 1.1) is $published', ({ name, front, published }) => {
     const rows = steps(samples).map(front);
     const measured = hypervolume(columnsOf(rows, 2), [1.1, 1.1]);
     // Stairs through samples of a curve lie inside it, by half the rectangles between neighbours and second-order
     // terms (below 1e-7 at this spacing). The published value is rounded to six decimals.
     expect(measured).toBeLessThan(published + 5e-7);
-    expect(Math.abs(measured + rectanglesBetween(rows) / 2 - published)).toBeLessThan(6e-7);
+    const got = measured + rectanglesBetween(rows) / 2;
+    compare({
+      check: `hypervolume of ${name} up to (1.1, 1.1)`,
+      source: 'Zitzler, Deb, Thiele 2000, closed form',
+      expected: published,
+      got,
+      within: 6e-7 / published,
+    });
   });
 
   test('DTLZ2 with three objectives up to (1.1, 1.1, 1.1) is 0.807401', () => {
@@ -83,7 +92,13 @@ describe('hypervolume of densely sampled fronts', () => {
     // What the samples leave out falls in proportion to their spacing, so that two spacings give the limit.
     expect(coarse).toBeLessThan(fine);
     expect(fine).toBeLessThan(0.807401);
-    expect(Math.abs(2 * fine - coarse - 0.807401)).toBeLessThan(5e-5);
+    compare({
+      check: 'hypervolume of DTLZ2 up to 1.1³',
+      source: 'Deb et al. 2002, closed form',
+      expected: 0.807401,
+      got: 2 * fine - coarse,
+      within: 5e-5 / 0.807401,
+    });
   });
 });
 

@@ -6,6 +6,7 @@ import { compileCycle } from '../../../src/core/trials/compiled-cycle.ts';
 import { type CycleResult, createCycleResult, runCycle } from '../../../src/core/trials/cycle.ts';
 import { roadLoadFromCoastDown } from '../../../src/core/vehicle/road-load.ts';
 import type { Vehicle } from '../../../src/core/vehicle/vehicle.ts';
+import { compare } from '../../reference-table.ts';
 import { sampleBattery, sampleGearing, sampleMotor, sampleVehicle } from '../vehicle/sample-vehicle.ts';
 import { onTheLevel, readSchedule, scheduleNames } from './schedules.ts';
 
@@ -68,8 +69,10 @@ describe('battery-electric cars of the annual test car lists', () => {
       ] as const) {
         const result = driven(car, cycle);
         const [demand, braking] = [Number(car[`${name}_pos_Wh_km`]), Number(car[`${name}_brake_Wh_km`])];
-        expect(Math.abs(result.wheelDemandJPerM / J_PER_M_PER_WH_PER_KM / demand - 1), `${car.model} ${name} demand`).toBeLessThan(1e-5);
-        expect(Math.abs(result.wheelBrakingJPerM / J_PER_M_PER_WH_PER_KM / braking - 1), `${car.model} ${name} braking`).toBeLessThan(1e-5);
+        const source = 'EPA, Data on Cars used for Testing Fuel Economy: A, B, C; wheel energy computed independently';
+        const of = `${car.make} ${car.model} ${car.test_vehicle}, ${name}`;
+        compare({ check: `${of}: wheel demand, Wh/km`, source, expected: demand, got: result.wheelDemandJPerM / J_PER_M_PER_WH_PER_KM, within: 1e-5 });
+        compare({ check: `${of}: wheel braking, Wh/km`, source, expected: braking, got: result.wheelBrakingJPerM / J_PER_M_PER_WH_PER_KM, within: 1e-5 });
       }
     }
   });
@@ -126,7 +129,14 @@ describe('schedules', () => {
       const printed = pattern.exec(checked)?.[1];
       if (printed === undefined) continue;
       compared++;
-      expect(Math.abs(totals[what] / unit - Number(printed)), `${what} ${totals[what] / unit} for ${printed}`).toBeLessThanOrEqual(rounding(printed));
+      const [expected, got] = [Number(printed), totals[what] / unit];
+      compare({
+        check: `schedule ${name}: ${what}`,
+        source: 'UN GTR No. 15 Annex 1 or 40 CFR Parts 86 and 600 Appendix I',
+        expected,
+        got,
+        within: rounding(printed) / expected,
+      });
     }
     expect(compared).toBeGreaterThanOrEqual(3);
   });
@@ -142,7 +152,13 @@ describe('schedules', () => {
       sums[ends.findIndex((end) => step < end)] += cycle.speedMPerS[i] * cycle.durationS[i] * 3.6;
     });
     published.forEach((sum, phase) => {
-      expect(sums[phase]).toBeCloseTo(sum, 1);
+      compare({
+        check: `schedule ${name}: sum of speed in phase ${phase + 1}, km/h`,
+        source: 'UN GTR No. 15 Annex 1',
+        expected: sum,
+        got: sums[phase],
+        within: 0.05 / sum,
+      });
     });
   });
 });
@@ -172,8 +188,15 @@ describe('a closed cycle without losses in the drive', () => {
     runCycle(vehicle, compileCycle(readSchedule(name), onTheLevel), result);
     const roadJPerM = result.rollingJPerM + result.airJPerM;
     expect(result.offTrace).toBe(0);
-    expect(Math.abs((result.wheelDemandJPerM - result.wheelBrakingJPerM) / roadJPerM - 1)).toBeLessThan(1e-9);
-    expect(Math.abs(result.batteryEnergyJPerM / roadJPerM - 1)).toBeLessThan(1e-9);
+    const source = 'conservation of energy';
+    compare({
+      check: `closed ${name} without losses: net wheel energy, J/m`,
+      source,
+      expected: roadJPerM,
+      got: result.wheelDemandJPerM - result.wheelBrakingJPerM,
+      within: 1e-9,
+    });
+    compare({ check: `closed ${name} without losses: battery energy, J/m`, source, expected: roadJPerM, got: result.batteryEnergyJPerM, within: 1e-9 });
     expect(result.recovered).toBeCloseTo(1, 12);
   });
 });

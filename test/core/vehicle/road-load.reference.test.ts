@@ -8,6 +8,7 @@ import {
   rollingResistanceN,
   slopeOf,
 } from '../../../src/core/vehicle/road-load.ts';
+import { compare } from '../../reference-table.ts';
 
 const POUND_KG = 0.45359237;
 const POUND_FORCE_N = POUND_KG * 9.80665;
@@ -30,7 +31,14 @@ describe('coast-down coefficients', () => {
       carriedMassKg: massKg,
     });
     // The table rounds the load to whole newtons and a, b to three figures.
-    expect(Math.abs(resistanceN(road, 80 / 3.6, slopeOf(0)) - loadN)).toBeLessThan(1);
+    const got = resistanceN(road, 80 / 3.6, slopeOf(0));
+    compare({
+      check: `dynamometer load at 80 km/h, ${massKg} kg, N`,
+      source: 'UN Regulation No. 83, table of settings (read in a copy)',
+      expected: loadN,
+      got,
+      within: 1 / loadN,
+    });
   });
 });
 
@@ -52,15 +60,23 @@ describe('a car at speed on a grade', () => {
   });
 
   it('meets the published drag and rolling resistance', () => {
-    expect(Math.abs(airResistanceN(road, speedMPerS) / POUND_FORCE_N - 86.22)).toBeLessThan(0.01);
-    expect(Math.abs(rollingResistanceN(road, speedMPerS, 1) / POUND_FORCE_N - 33.97)).toBeLessThan(0.01);
+    const source = 'type of Mannering & Washburn, ch. 2 (read in a copy)';
+    compare({ check: 'car at 70 mph: drag, lbf', source, expected: 86.22, got: airResistanceN(road, speedMPerS) / POUND_FORCE_N, within: 0.01 / 86.22 });
+    compare({
+      check: 'car at 70 mph: rolling, lbf',
+      source,
+      expected: 33.97,
+      got: rollingResistanceN(road, speedMPerS, 1) / POUND_FORCE_N,
+      within: 0.01 / 33.97,
+    });
   });
 
   // The published balance takes the rolling resistance at its level value; ours falls with the cosine of the slope, 0.2 % of it.
   const spareN = 255 * POUND_FORCE_N - airResistanceN(road, speedMPerS) - rollingResistanceN(road, speedMPerS, 1);
 
   it('meets the published grade by small angle and exactly', () => {
-    expect(Math.abs((100 * spareN) / road.weightN - 6.74)).toBeLessThan(0.005);
+    const source = 'type of Mannering & Washburn, ch. 2 (read in a copy)';
+    compare({ check: 'car at 70 mph: grade by small angle, %', source, expected: 6.74, got: (100 * spareN) / road.weightN, within: 0.005 / 6.74 });
     expect(spareN).toBeGreaterThan(road.weightN * slopeOf(0.067555).sin);
     expect(spareN).toBeLessThan(road.weightN * slopeOf(0.067565).sin);
   });
