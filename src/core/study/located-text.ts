@@ -4,6 +4,7 @@
  */
 import { Composer, isAlias, isMap, isScalar, isSeq, Lexer, type ParsedNode, Parser, type YAMLParseError } from 'yaml';
 import { clip, type IssueList } from './issue.ts';
+import { syntaxWords } from './syntax-words.ts';
 
 /** A text, a mapping or a list, with its offset in the file. */
 export type Located = LocatedText | LocatedMap | LocatedList;
@@ -52,7 +53,7 @@ export function readLocated(text: string, issues: IssueList): LocatedMap | null 
   const documents = [...composer.compose(tokens, true, text.length)];
   // What follows the first syntax error is mostly its echo.
   const problem = documents.flatMap((document) => document.errors).sort((a, b) => a.pos[0] - b.pos[0])[0];
-  if (problem !== undefined) addSyntaxIssue(problem, issues);
+  if (problem !== undefined) addSyntaxIssue(problem, text, issues);
   const second = documents[1]?.contents;
   if (second !== undefined) {
     issues.error(second?.range[0] ?? 0, '', {
@@ -110,26 +111,9 @@ function tokensOf(text: string, issues: IssueList) {
   return tokens;
 }
 
-/** What each syntax error means to a person who does not know the grammar. */
-const syntaxHints: Partial<Record<YAMLParseError['code'], string>> = {
-  TAB_AS_INDENT: 'Indent with spaces; tabs are not allowed in YAML.',
-  BAD_INDENT: 'Start the entries of one section in the same column, and close every bracket.',
-  BLOCK_AS_IMPLICIT_KEY: 'Put one "name: value" on each line, entries of a section indented below its name.',
-  MULTILINE_IMPLICIT_KEY: 'A colon is missing on this line, or the line before belongs elsewhere: write "name: value".',
-  MISSING_CHAR: 'Close the quotes or the bracket.',
-  BAD_SCALAR_START: 'No value starts with this sign: write the number first, such as 97 %, or put a text in quotes.',
-  UNEXPECTED_TOKEN: 'Remove the stray sign, or put the text in quotes.',
-  BLOCK_IN_FLOW: 'Inside { } and [ ] separate entries by commas.',
-};
-
-function addSyntaxIssue(problem: YAMLParseError, issues: IssueList): void {
-  const found = problem.message.split('\n')[0] as string;
-  const said = /followed by map values/u.test(found) ? syntaxHints.MULTILINE_IMPLICIT_KEY : syntaxHints[problem.code];
-  issues.error(problem.pos[0], '', {
-    expected: 'YAML that can be read',
-    found,
-    hint: `${said ?? 'Check the line, and the one above it.'} Everything else is checked once this can be read.`,
-  });
+function addSyntaxIssue(problem: YAMLParseError, text: string, issues: IssueList): void {
+  const { at, found, hint } = syntaxWords(problem, text);
+  issues.error(at, '', { expected: 'YAML that can be read', found, hint: `${hint} Everything else is checked once this can be read.` });
 }
 
 function rootOf(contents: ParsedNode | null, issues: IssueList): LocatedMap | null {

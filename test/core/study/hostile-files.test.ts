@@ -33,7 +33,7 @@ describe('a hostile file', () => {
     ['50 MB', 'a'.repeat(50_000_000), 'at most 300 kB'],
     ['a hundred thousand entries', 'a: 1\n'.repeat(50_000), 'some hundred entries'],
     ['an endless list in brackets', `a: [${'1,'.repeat(100_000)}]`, 'some hundred entries'],
-    ['quotes without end', `title: "${'x\n'.repeat(1000)}`, 'Missing closing'],
+    ['quotes without end', `title: "${'x\n'.repeat(1000)}`, 'without its second'],
   ])('of %s is answered clearly', (_, text, part) => {
     const answer = complaint(text);
     expect(answer).toContain(part);
