@@ -49,10 +49,11 @@ function pointNoun({ sets, labels }: Axis): string {
   return labels !== null ? 'option' : sets.length > 1 ? 'pair' : 'value';
 }
 
-function axisText({ sets, points, labels }: Axis, study: Study): string {
+function axisText({ sets, points, labels, range }: Axis, study: Study): string {
   const figure = (value: number, k: number) => givenText(value, findParameter(sets[k] as string) as ParameterRow, study);
   const words = labels?.map(visibleText) ?? points.map((point) => point.map(figure).join(' / '));
-  return words.length <= 4 || labels !== null ? words.slice(0, 12).join(', ') + (words.length > 12 ? ', …' : '') : `${words[0]} to ${words.at(-1)}`;
+  if (range !== null) return `${words[0]} to ${words.at(-1)}`;
+  return words.length <= 6 ? words.join(', ') : `${words.slice(0, 4).join(', ')}, … ${words.at(-1)}`;
 }
 
 function costLine({ designs, seconds, workers, bytes, sampled }: RunEstimate): string {
