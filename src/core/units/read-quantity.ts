@@ -88,7 +88,7 @@ function example(number: string, quantity: Quantity): string {
 
 /** Texts that do not start with a number. */
 function noFigure(text: string, quantity: Quantity): FigureProblem {
-  if (text === '') return problem(quantity, 'nothing', `Write a figure, such as ${example('1', quantity)}, or remove the line.`);
+  if (text === '') return problem(quantity, 'nothing', 'Write the figure after the colon, or remove the line.');
   if (/^(yes|no|true|false|on|off|null|none|~)$/iu.test(text)) return problem(quantity, `the word ${text}`, 'Write a number, or remove the line.');
   if (/^[+-]?\.?(inf|infinity|nan)$/iu.test(text)) return problem(quantity, text, 'Write a finite number.');
   if (/^[<>≤≥~≈]/u.test(text)) return problem(quantity, clip(text), `Write the number alone, without ${text[0]}.`);
@@ -105,13 +105,28 @@ function wrongUnit(text: string, number: string, rest: string, quantity: Quantit
   const owner = ownerOf(rest);
   if (owner !== null)
     return problem(quantity, `${clip(text)}: ${clip(rest)} is a unit of ${owner}`, `Check which figure belongs here; write it in ${unitList(quantity)}.`);
-  const symbols = quantityRow(quantity).units.flatMap((unit) => [unit.symbol, ...unit.spellings]);
-  const near = nearestName(rest, symbols);
-  return problem(
-    quantity,
-    `${clip(text)}: ${clip(rest)} is no unit known here`,
-    near === null ? `Write it in ${unitList(quantity)}.` : `Did you mean ${number} ${near}?`,
+  return problem(quantity, `${clip(text)}: ${clip(rest)} is no unit known here`, unknownUnitHint(number, rest, quantity));
+}
+
+function unknownUnitHint(number: string, rest: string, quantity: Quantity): string {
+  if (quantity === 'grade' && /^(°|deg)/u.test(rest)) return 'Write the rise over the run in percent: 100 % is 45°.';
+  const perUnit = /^[^/\d\s]{1,4}\s*(\/.+)$/u.exec(rest)?.[1] ?? '';
+  const rate = foldedUnits.get(quantity)?.get(foldUnit(perUnit));
+  if (quantity.startsWith('money') && rate !== undefined) return `Write ${number} ${rate.symbol}; massAndCost.cost.currency names the currency once.`;
+  const near = unitMeant(rest, quantity);
+  return near === null ? `Write it in ${unitList(quantity)}.` : `Did you mean ${number} ${near}?`;
+}
+
+/** The unit most likely misspelt. Not one that another prefix makes (kV for V) nor one for a single letter: the figure would be another. */
+function unitMeant(rest: string, quantity: Quantity): string | null {
+  const near = nearestName(
+    rest,
+    quantityRow(quantity).units.flatMap((unit) => [unit.symbol, ...unit.spellings]),
   );
+  if (near === null || near.toLowerCase() === rest.toLowerCase()) return near;
+  const bare = (unit: string) => unit.replace(/^[µumcdhkMG](?=.)/u, '');
+  const sameBut = [rest, bare(rest)].some((unit) => unit === near || unit === bare(near));
+  return rest.length === 1 || sameBut ? null : near;
 }
 
 function missingUnitHint(number: string, quantity: Quantity): string {
@@ -131,13 +146,16 @@ function separatorHint(text: string, number: string, rest: string): string | nul
   const groups = /^[+-]?\d{1,3}(?:[,'_’ ]\d{3})+(?!\d)/u.exec(text)?.[0];
   if (groups !== undefined) {
     const plain = text.replace(groups, groups.replace(/[,'_’ ]/gu, ''));
-    const decimal = groups.includes(',') ? `; if the comma is a decimal sign, write ${text.replace(',', '.')}` : '';
+    const decimal = groups.includes(',') && !text.includes('.') ? `; if the comma is a decimal sign, write ${text.replace(',', '.')}` : '';
     return `Numbers go without separators between thousands: write ${plain}${decimal}.`;
   }
+  if (/^,\d/u.test(rest) && number.includes('.'))
+    return `The decimal sign is a point, and nothing separates thousands: write ${text.replaceAll('.', '').replace(',', '.')}.`;
   if (/^,\d/u.test(rest)) return `The decimal sign is a point: write ${text.replace(',', '.')}.`;
   if (/^['_’]\d/u.test(rest)) return `Numbers go without separators: write ${text.replace(/['_’]/gu, '')}.`;
   if (/^[·*×x]\s*10\s*(\^|\*\*|⁻|[¹²³⁴-⁹])?/u.test(rest) && /10/u.test(rest)) return `Powers of ten are written with an e, such as ${number}e-4.`;
   if (/^[-/.:]\d+([-/.:]\d+)+/u.test(rest)) return 'This reads as a date or a time; write one number with its unit.';
+  if (/^\d/u.test(rest)) return 'Write one number here; several to try stand under vary, as oneOf: [ … ].';
   if (/^(-|–|\.\.|to\s)\s*\d/u.test(rest)) return 'Write one number here; a range stands under vary, with from and to.';
   if (/^\/\s*\d/u.test(rest) && !/^\/100/u.test(rest)) return 'Write the fraction as a decimal number.';
   return null;

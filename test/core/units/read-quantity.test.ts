@@ -77,8 +77,24 @@ describe('a figure', () => {
     ['', 'mass', 'nothing'],
     ['1e400 kg', 'mass', 'beyond every number'],
     ['1.2.3 kg', 'mass', 'kg, t or lb'],
+    ['1.450,5 kg', 'mass', 'write 1450.5 kg'],
+    ['9.2 9.4', 'number', 'one number here'],
+    ['10°', 'grade', 'in percent'],
+    ['2.4 EUR/Nm', 'moneyPerTorque', 'Write 2.4 /(N·m)'],
+    ['4.6 €/kW', 'moneyPerPower', 'Write 4.6 /kW'],
   ])('answers %j as %s with what to write', (text, quantity, part) => {
     expect(hint(text, quantity)).toContain(part);
+  });
+
+  it.each<[string, Quantity]>([
+    ['0.36 kV', 'voltage'],
+    ['0.19 kN·m', 'torque'],
+    ['12 krpm', 'rotationalSpeed'],
+    ['0.11 MW', 'power'],
+    ['8200 cm²', 'area'],
+    ['1450000 g', 'mass'],
+  ])('offers no other power of ten for %j as %s', (text, quantity) => {
+    expect(hint(text, quantity)).toMatch(/^Write it in /u);
   });
 
   it('never takes the milliohm for the megaohm or joule for kilojoule: letters keep their case', () => {
