@@ -4,7 +4,7 @@ import type { ReportData } from '../charts/report-data.ts';
 import { warningPlace, warningWords } from '../core/study/issue.ts';
 import { html, type Markup } from './markup.ts';
 
-/** One entry per warning: its rule, its sentence, and where in the study it belongs; null where there is none. */
+/** One entry per warning: its rule, where in the study it belongs, and its sentence; null where there is none. */
 export function watchSection({ warnings, studyFile }: ReportData): Markup | null {
   if (warnings.length === 0) return null;
   return html`<section aria-labelledby="watch">
@@ -12,7 +12,7 @@ export function watchSection({ warnings, studyFile }: ReportData): Markup | null
 <div class="body">
 <dl class="watch">${warnings.map(
     (warning) =>
-      html`<div><dt>${capitalised(warning.rule)}</dt><dd>${capitalised(warningWords(warning))} <span class="hint">${capitalised(warningPlace(warning, studyFile))}</span></dd></div>`,
+      html`<div><dt>${capitalised(warning.rule)} <small>${warningPlace(warning, studyFile)}</small></dt><dd>${capitalised(warningWords(warning))}</dd></div>`,
   )}</dl>
 </div>
 </section>`;

@@ -113,12 +113,12 @@ function seeBattery({ study, sample }: Context): Sight[] {
   if (sample.designs < 2) return [];
   const limited = sample.trials.filter(({ designs, byBattery }) => byBattery > designs / 2).sort((a, b) => b.byBattery / b.designs - a.byBattery / a.designs);
   if (limited.length === 0) return [];
-  const where = limited.map(({ trial, designs, byBattery }) => `${shareText(byBattery / designs)} of the designs ${placeIn(trial)}`);
+  const where = limited.map(({ trial, designs, byBattery }, k) => `${shareText(byBattery / designs)} ${k === 0 ? 'of the designs ' : ''}${placeIn(trial)}`);
   const path = ['battery.discharge', 'battery.resistance'].find((name) => study.values[name] !== undefined) ?? 'battery';
   return [
     {
       path,
-      found: `battery power, not the motor, is the limit in ${someOf(where)}`,
+      found: `battery power, not the motor, limits ${someOf(where)}`,
       hint: 'Motor power beyond what the pack gives is paid for and not used: look at smaller motors or a stronger pack.',
     },
   ];
@@ -149,12 +149,21 @@ function seeEdges({ study, proposals, told }: Context): Sight[] {
   if (proposals === null || proposals.length === 0) return [];
   return study.axes.flatMap((axis): Sight[] => {
     const path = axisPath(axis);
-    if (axis.range === null || axis.points.length < 3 || told.some((issue) => issue.rule === 'unpriced circumstance' && issue.path === path)) return [];
+    if (
+      axis.range === null ||
+      (axis.range.stepped && axis.points.length < 3) ||
+      told.some((issue) => issue.rule === 'unpriced circumstance' && issue.path === path)
+    )
+      return [];
     const row = findParameter(axis.name) as ParameterRow;
-    const ends = endsOf(axis, row).flatMap(({ word, value }) => {
-      const there = proposals.filter(({ inputOf }) => inputOf(axis.name) === value);
+    const { from, to, stepped } = axis.range;
+    // Drawn from a whole range, hardly a design lies on its very end.
+    const near = stepped ? 0 : 0.01 * (to - from);
+    const ends = endsOf(axis.range, row).flatMap(({ word, value }) => {
+      const there = proposals.filter(({ inputOf }) => Math.abs(inputOf(axis.name) - value) <= near);
       if (there.length === 0) return [];
-      return [`${givenText(value, row, study)}, the ${word} searched, in the design${there.length === 1 ? '' : 's'} put forward as ${ruleWords(there)}`];
+      const where = `${stepped ? '' : 'less than 1 % of the range from '}${givenText(value, row, study)}, the ${word} searched`;
+      return [`${where}, in the design${there.length === 1 ? '' : 's'} put forward as ${ruleWords(there)}`];
     });
     return ends.length === 0
       ? []
@@ -163,10 +172,8 @@ function seeEdges({ study, proposals, told }: Context): Sight[] {
 }
 
 /** The ends of a range beyond which there could be more: none where the figure itself ends there (100 %). */
-function endsOf({ points }: Axis, { atLeast, atMost }: ParameterRow): { word: string; value: number }[] {
-  const values = points.map(([value]) => value);
-  const [low, high] = [Math.min(...values), Math.max(...values)];
-  return [...(low === atLeast ? [] : [{ word: 'lowest', value: low }]), ...(high === atMost ? [] : [{ word: 'highest', value: high }])];
+function endsOf({ from, to }: NonNullable<Axis['range']>, { atLeast, atMost }: ParameterRow): { word: string; value: number }[] {
+  return [...(from === atLeast ? [] : [{ word: 'lowest', value: from }]), ...(to === atMost ? [] : [{ word: 'highest', value: to }])];
 }
 
 function ruleWords(proposals: readonly ProposedDesign[]): string {

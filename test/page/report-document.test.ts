@@ -90,8 +90,8 @@ describe('the report without script', () => {
   it('says what to keep an eye on once, in a section of its own after the answer, with rule, reason and place', () => {
     const heads = [...page.querySelectorAll('h2')].map(({ id }) => id);
     expect(heads.slice(0, 4)).toEqual(['question', 'answer', 'watch', 'trade']);
-    expect([...page.querySelectorAll('.watch dt')].map((term) => term.textContent)).toEqual(['Invented figures']);
-    expect(words(page, '.watch dd')).toBe('The figures of this study are invented; expected measured ones. Measure them. Line 2, about');
+    expect([...page.querySelectorAll('.watch dt')].map((term) => term.textContent)).toEqual(['Invented figures line 2, about']);
+    expect(words(page, '.watch dd')).toBe('The figures of this study are invented; expected measured ones. Measure them.');
     expect(words(page, 'main').split('figures of this study are invented')).toHaveLength(2);
     expect(read({ ...data, warnings: [] }).getElementById('watch')).toBeNull();
   });

@@ -112,7 +112,7 @@ const cases: readonly Case[] = [
     case: 'a pack too weak for the end of a sprint',
     text: but(['discharge: 100 kW', 'discharge: 70 kW']),
     path: 'battery.discharge',
-    says: 'battery power, not the motor, is the limit in 70 % of the designs at the end of sprint; expected a pack',
+    says: 'battery power, not the motor, limits 70 % of the designs at the end of sprint; expected a pack',
     nearMiss: but(['discharge: 100 kW', 'discharge: 80 kW']),
   },
   {

@@ -43,7 +43,7 @@ export const warningRows: readonly WarningRow<WarningContext>[] = [
     expected: 'a mass factor, or the inertias of wheels and rotor',
     look: ({ found }) =>
       found.stands.has('vehicle.massFactor') && (found.stands.has('motor.inertia') || found.stands.has('motor.inertia.perTorque'))
-        ? [{ path: 'motor.inertia', found: 'motor.inertia without effect: the fixed mass factor holds for every ratio', hint: 'Remove one of the two.' }]
+        ? [{ path: 'motor.inertia', found: 'without effect: the fixed mass factor holds for every ratio', hint: 'Remove one of the two.' }]
         : [],
   },
   { rule: 'mass factor', expected: 'about 1.01 to 1.4', look: seeMassFactor },
@@ -90,7 +90,7 @@ export const warningRows: readonly WarningRow<WarningContext>[] = [
         ? []
         : ['air.temperature', 'air.altitude', 'air.density'].flatMap((path) =>
             found.stands.has(path)
-              ? [{ path, found: `${path} without effect`, hint: 'Coast-down coefficients hold for the air they were measured in; remove it.' }]
+              ? [{ path, found: 'without effect', hint: 'Coast-down coefficients hold for the air they were measured in; remove it.' }]
               : [],
           ),
   },
@@ -102,7 +102,7 @@ export const warningRows: readonly WarningRow<WarningContext>[] = [
         ? [
             {
               path: 'gearing.dragTorque',
-              found: 'dragTorque beside coast-down coefficients',
+              found: 'drag torque beside coast-down coefficients',
               hint: 'Coast-down figures normally contain the drag of the turning gearing; remove one of the two unless it was taken out.',
             },
           ]
@@ -183,7 +183,7 @@ function seeEfficiency({ study, found, trials }: WarningContext): Sight[] {
         ? [
             {
               path,
-              found: `${name} ${beside(high, 0.99, 'atMost', 'share', 1, study)}`,
+              found: beside(high, 0.99, 'atMost', 'share', 1, study),
               hint: name.startsWith('gearing')
                 ? 'One pair of gears loses about 1 to 2 %; check the figure.'
                 : 'Chargers lose about 5 to 15 %; check the figure.',
@@ -208,7 +208,7 @@ function seeUnpriced({ study }: WarningContext): Sight[] {
     .filter(({ sets }) => sets.every((name) => CIRCUMSTANCE.test(name) && !priced(name)))
     .map((axis) => ({
       path: axisPath(axis),
-      found: `${axis.name} varied, though no objective prices it`,
+      found: 'varied, though no objective prices it',
       hint: 'The front will lie at its easy end; read it as what the figure is worth, or put it in trials of its own by "with".',
     }));
 }
@@ -226,7 +226,7 @@ function seeSpeedCap({ study }: WarningContext): Sight[] {
       {
         path,
         found: `the cap of ${shown(caps.low, 'speed', 0, study)} shortens ${trace.name} from ${length(whole)} to ${length(left)} in the same time`,
-        hint: 'Energies and range are those of the slower trip: compare them with nothing that is driven uncapped.',
+        hint: 'Energies and range are those of the slower trip: do not compare them with those of the whole trace.',
       },
     ];
   });

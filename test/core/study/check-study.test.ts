@@ -171,8 +171,8 @@ describe('a study', () => {
     expect(values['vehicle.coastDown.f0']).toBeCloseTo(40 * 4.4482216152605, 9);
     expect(values['vehicle.coastDown.f2']).toBeCloseTo((0.02 * 4.4482216152605) / 0.44704 ** 2, 9);
     expect(values['vehicle.rolling.c1']).toBeUndefined();
-    expect(warningsOf(coast)).toContain('dragTorque beside coast-down coefficients');
-    expect(warningsOf(coast)).toContain('air.temperature without effect');
+    expect(warningsOf(coast)).toContain('drag torque beside coast-down coefficients');
+    expect(warningsOf(coast)).toContain('warning in air.temperature');
   });
 
   it('reads a full-load curve, whose motor becomes the reference design, and lets the search scale it', () => {
