@@ -11,7 +11,7 @@ export const checkCommand: CommandRow = {
   name: 'check',
   sentence: 'Says what is wrong with it, or what a run would do',
   about: [
-    'Every mistake with its place, what was expected, what was found and what to do. For a study without mistakes: how many designs, which trials, how long a run takes here and how large its results get, and which requirements remove nothing or everything, measured on a small sample.',
+    'Every mistake with its place, what was expected, what was found and what to do. For a study without mistakes: how many designs, which trials, how long a run takes here and how large its results get, which requirements remove nothing or everything, and what to keep an eye on, measured on a small sample.',
     'Nothing is written.',
   ],
   arguments: [{ name: 'STUDY', sentence: 'A study file', many: true }],

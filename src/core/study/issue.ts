@@ -26,8 +26,11 @@ export interface IssueWords {
   readonly expected: string;
   readonly found: string;
   readonly hint?: string;
-  /** Of a warning. */
-  readonly rule?: string;
+}
+
+/** The words of a warning, and the rule that it comes from. */
+export interface WarningWords extends IssueWords {
+  readonly rule: string;
 }
 
 /** Beyond this many, further issues change nothing but that there are more. */
@@ -62,11 +65,11 @@ export class IssueList {
 
   /** Adds an error at an offset of the text. */
   error(offset: number, path: string, words: IssueWords): void {
-    this.add('error', offset, path, words);
+    this.add('error', offset, path, { ...words, rule: '' });
   }
 
   /** Adds a warning at an offset of the text. */
-  warn(offset: number, path: string, words: IssueWords): void {
+  warn(offset: number, path: string, words: WarningWords): void {
     this.add('warning', offset, path, words);
   }
 
@@ -105,7 +108,7 @@ export class IssueList {
     );
   }
 
-  private add(severity: Issue['severity'], offset: number, path: string, words: IssueWords): void {
+  private add(severity: Issue['severity'], offset: number, path: string, words: WarningWords): void {
     if (severity === 'error') this.errors += 1;
     if (this.full) return;
     const line = this.lineOf(offset);
@@ -115,7 +118,7 @@ export class IssueList {
     const from = shown.length <= SOURCE_WIDTH ? 0 : Math.max(0, Math.min(column - 1 - SOURCE_WIDTH / 2, shown.length - SOURCE_WIDTH));
     const source = printable(shown.slice(from, from + SOURCE_WIDTH));
     const place = { severity, file: this.file, line, column, source, caret: column - 1 - from, path: printable(clip(path, 120)) };
-    const { rule = '', expected, found, hint = '' } = words;
+    const { rule, expected, found, hint = '' } = words;
     this.issues.push({ ...place, rule, expected: printable(expected), found: printable(clip(found, 200)), hint: printable(hint) });
   }
 }

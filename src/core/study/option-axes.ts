@@ -134,7 +134,8 @@ function warnOfGaps({ name, options }: OptionList, { values, issues }: OptionBas
     const named = without.slice(0, 3).map((option) => clip(option.name, 40));
     const found = `${named.join(', ')}${without.length > 3 ? ` and ${without.length - 3} more` : ''} without ${wanted}: what the study itself says holds`;
     const expected = 'options of one list that set the same numbers';
-    issues.warn(first.at, `options.${name}`, { expected, found, hint: 'Set it in every option of the list, so that it is plain what is compared.' });
+    const hint = 'Set it in every option of the list, so that it is plain what is compared.';
+    issues.warn(first.at, `options.${name}`, { rule: 'uneven options', expected, found, hint });
   }
 }
 

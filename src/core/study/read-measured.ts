@@ -141,7 +141,8 @@ function coveringOf(data: MapData, found: Found, { name, at }: NamedFile, issues
     issues.error(at, 'motor.map', { expected, found: 'no word of it', hint });
     return null;
   }
-  issues.warn(at, 'motor.map', { expected, found: 'no word of it: the losses are taken as those of motor and inverter together', hint });
+  const silence = 'no word of it: the losses are taken as those of motor and inverter together';
+  issues.warn(at, 'motor.map', { rule: 'what a map covers', expected, found: silence, hint });
   return 'motor and inverter';
 }
 
