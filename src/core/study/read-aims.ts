@@ -3,6 +3,7 @@ import { readQuantity } from '../units/read-quantity.ts';
 import { clip, type IssueList } from './issue.ts';
 import type { Located, LocatedMap } from './located-text.ts';
 import type { MetricColumn } from './metrics.ts';
+import { CUT_OFF_HINT, isCutOff } from './read-places.ts';
 import type { TrialFound } from './read-trials.ts';
 import type { Objective, Requirement } from './study.ts';
 
@@ -59,25 +60,32 @@ function readWritten(part: Located, context: AimsContext): Requirement[] {
     if (column === null) return [];
     if (value.kind === 'map') return readLimits(column, value, issues);
     const found = value.kind === 'list' ? 'a list' : clip(value.text) || 'nothing';
-    const bound = column.row.better === 'more' ? 'atLeast' : 'atMost';
-    issues.error(value.at, `requirements.${key}`, {
-      expected: 'atLeast, atMost or both',
-      found,
-      hint: `Write "${key}: { ${bound}: ${value.kind === 'text' && value.text !== '' ? clip(value.text) : '…'} }".`,
-    });
+    const { bound, limit } = limitMeant(value.kind === 'text' ? value.text : '', column);
+    issues.error(value.at, `requirements.${key}`, { expected: 'atLeast, atMost or both', found, hint: `Write "${key}: { ${bound}: ${limit} }".` });
     return [];
   });
+}
+
+/** What a limit without a bound, or with a sign such as `>=`, most likely means. */
+function limitMeant(text: string, column: MetricColumn): { bound: Bound; limit: string } {
+  const [, sign = '', figure = ''] = /^\s*([<>≤≥]?)=?\s*(.*)$/su.exec(text) ?? [];
+  const usual: Bound = column.row.better === 'more' ? 'atLeast' : 'atMost';
+  return { bound: sign === '' ? usual : /[>≥]/u.test(sign) ? 'atLeast' : 'atMost', limit: clip(figure) || '…' };
 }
 
 function readLimits(column: MetricColumn, map: LocatedMap, issues: IssueList): Requirement[] {
   const path = `requirements.${column.name}`;
   if (map.entries.length === 0) issues.error(map.at, path, { expected: 'atLeast, atMost or both', found: 'no limit', hint: 'Add a limit or remove the line.' });
-  const limits = map.entries.flatMap(({ key, at, value }): Requirement[] => {
+  const limits = map.entries.flatMap((entry, index): Requirement[] => {
+    const { key, at, value } = entry;
     if (key !== 'atLeast' && key !== 'atMost') {
       const near = issues.nearest(key, BOUNDS);
-      issues.error(at, `${path}.${key}`, { expected: 'atLeast or atMost', found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
+      const named = near === null ? 'Write atLeast for the lower limit, atMost for the upper.' : `Did you mean ${near}?`;
+      issues.error(at, `${path}.${key}`, { expected: 'atLeast or atMost', found: clip(key), hint: isCutOff(entry) ? CUT_OFF_HINT : named });
       return [];
     }
+    const next = map.entries[index + 1];
+    if (next !== undefined && isCutOff(next)) return [];
     const limit = readLimit(column, value, `${path}.${key}`, issues);
     return limit === null ? [] : [{ metric: column.name, bound: key, limit, implied: false }];
   });
@@ -122,13 +130,21 @@ function metricHint(name: string, { issues, columns }: AimsContext): string {
   if (issues.full) return '';
   const withUnit = columns.find(({ key }) => key === name);
   if (withUnit !== undefined) return `Write ${withUnit.name}: the figure carries the unit.`;
+  const brace = /^(\S+)\s*\{/u.exec(name)?.[1];
+  if (brace !== undefined) return `A colon is missing: write "${clip(brace)}: { … }".`;
   const owners = [...new Set(columns.map((column) => column.name.slice(0, column.name.indexOf('.'))))];
   const [wantedOwner, wantedMetric] = [name.slice(0, Math.max(0, name.indexOf('.'))), name.slice(name.indexOf('.') + 1)];
+  const sameMetric = columns.map((column) => column.name).filter((each) => each.slice(each.indexOf('.') + 1) === wantedMetric);
   const owner = owners.includes(wantedOwner) ? wantedOwner : issues.nearest(wantedOwner || name, owners);
+  if (owner === null && sameMetric.length > 0) return `Did you mean ${sameMetric.slice(0, 3).join(' or ')}?`;
   if (owner === null) return `Metrics belong to ${owners.slice(0, 12).join(', ')}${owners.length > 12 ? ' and so on' : ''}.`;
   const metrics = columns.filter((column) => column.name.startsWith(`${owner}.`)).map((column) => column.name.slice(owner.length + 1));
+  const gives = `${owner} gives ${metrics.join(', ')}`;
+  if (owner === name)
+    return `Write its metric with it, in one piece, such as ${owner}.${metrics.find((metric) => metric !== 'payload') ?? metrics[0]}: ${gives}.`;
   const metric = metrics.includes(wantedMetric) ? wantedMetric : issues.nearest(wantedMetric, metrics);
-  return metric === null ? `${owner} gives ${metrics.join(', ')}.` : `Did you mean ${owner}.${metric}?`;
+  if (metric !== null) return `Did you mean ${owner}.${metric}?`;
+  return sameMetric.length === 0 ? `${gives}.` : `${gives}; there is ${sameMetric.slice(0, 3).join(', ')}.`;
 }
 
 function canExist(column: MetricColumn, at: number, path: string, { issues, trials, stands }: AimsContext): boolean {

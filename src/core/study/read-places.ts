@@ -174,15 +174,16 @@ function unknownKey(key: string, at: number, value: Located, place: Place, readi
   if (near !== null) reading.found.tried.add(`${reading.prefix}${place.path === '' ? '' : `${place.path}.`}${near}`);
   const inside = reading.prefix + place.path;
   const path = inside === '' || inside.endsWith('.') ? inside + key : `${inside}.${key}`;
-  const hint = isCutOff({ key, value })
-    ? 'Inside { } a comma starts the next entry: numbers go without commas.'
-    : (reading.explain?.(key) ?? (near !== null ? `Did you mean ${near}?` : elsewhere(key, path)));
+  const hint = isCutOff({ key, value }) ? CUT_OFF_HINT : (reading.explain?.(key) ?? (near !== null ? `Did you mean ${near}?` : elsewhere(key, path)));
   const where = inside === '' ? 'a section or entry of a study' : `an entry of ${inside.replace(/\.$/u, '')}`;
   reading.issues.error(at, path, { expected: `${where}: ${names.join(', ')}`, found: clip(key), hint });
 }
 
+/** What to do about a number that a comma cut in two. */
+export const CUT_OFF_HINT = 'Inside { } a comma starts the next entry: numbers go without commas.';
+
 /** The rest of a number after a comma inside braces: `{ fixed: 1,200 kg }`. What stands before it is not judged. */
-function isCutOff({ key, value }: { readonly key: string; readonly value: Located }): boolean {
+export function isCutOff({ key, value }: { readonly key: string; readonly value: Located }): boolean {
   return value.kind === 'text' && value.text === '' && /^\d/u.test(key);
 }
 
