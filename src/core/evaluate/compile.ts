@@ -23,8 +23,8 @@ const tooHeavy = limitWords.indexOf('too heavy');
 const speedsOutOfOrder = limitWords.indexOf('base speed above maximum speed');
 
 /**
- * The evaluator of a study. With `wanted` metric names, trials that give none of them are left out and their metrics stay NaN;
- * the bits of the others do not depend on it.
+ * The evaluator of a study. With `wanted` metric names, what only others need is left out, and they may stay NaN; the bits of those that
+ * are wanted do not depend on it.
  */
 export function compileStudy(study: Study, wanted?: ReadonlySet<string>): Evaluator {
   const inputs = study.axes.flatMap((axis) => axis.sets);
@@ -33,7 +33,7 @@ export function compileStudy(study: Study, wanted?: ReadonlySet<string>): Evalua
   const columns = metricColumns(study);
   const trials = study.trials
     .filter((trial) => wanted === undefined || columns.some((column) => column.trial === trial.name && wanted.has(column.name)))
-    .map((trial) => compileTrial(trial, cells, columns));
+    .map((trial) => compileTrial(trial, cells, columns, wanted));
   const assembler = createAssembler(study, cells);
   const figures = new Float64Array(reference.length);
   const ownFigures = new Float64Array(reference.length);
@@ -75,11 +75,11 @@ export function compileStudy(study: Study, wanted?: ReadonlySet<string>): Evalua
   };
 }
 
-function compileTrial(trial: Trial, cells: FigureCells, columns: readonly MetricColumn[]): CompiledTrial {
+function compileTrial(trial: Trial, cells: FigureCells, columns: readonly MetricColumn[], wanted: ReadonlySet<string> | undefined): CompiledTrial {
   const replaced = Object.entries(trial.with);
   return {
     name: trial.name,
-    run: compileRunner(trial, cells.cell),
+    run: compileRunner(trial, cells.cell, (metric) => wanted === undefined || wanted.has(`${trial.name}.${metric}`)),
     replacedCells: replaced.map(([name]) => cells.cell(name)),
     replacements: replaced.map(([, value]) => value),
     at: columns.findIndex((column) => column.trial === trial.name),

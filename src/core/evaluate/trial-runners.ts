@@ -24,7 +24,10 @@ export interface MetricSlots {
 /** Runs one trial on a vehicle that carries its load. The payload, first metric of every kind, is written by the caller. */
 export type TrialRunner = (vehicle: Vehicle, figures: Float64Array, out: MetricSlots) => void;
 
-type CompileRunner = (trial: Trial, own: ReadCell) => TrialRunner;
+/** Is a metric of the trial asked for? By its name within the trial. */
+export type IsWanted = (metric: string) => boolean;
+
+type CompileRunner = (trial: Trial, own: ReadCell, isWanted: IsWanted) => TrialRunner;
 
 const runners: Record<TrialKind, CompileRunner> = {
   acceleration: ({ rating }, own) => {
@@ -64,17 +67,21 @@ const runners: Record<TrialKind, CompileRunner> = {
       writeLimited(out, result.grade, result.limit);
     };
   },
-  cycle: (trial, own) => {
+  cycle: (trial, own, isWanted) => {
     const cycleOf = cycleReader(trial, own);
     const result = createCycleResult();
+    const withAccount = cycleMetrics.some((metric) => isWanted(metric) && !metricsWithoutAccount.has(metric));
     return (vehicle, figures, out) => {
-      runCycle(vehicle, cycleOf(figures), result);
+      runCycle(vehicle, cycleOf(figures), result, withAccount);
       for (let k = 0; k < cycleFigures.length; k++) out.metrics[out.at + 1 + k] = cycleFigures[k](result);
     };
   },
 };
 
-/** Figures of a cycle in the order of its metrics after the payload. */
+/** What a cycle tells without the account of its energy and of the motor's load, which costs twice as much again. */
+const metricsWithoutAccount: ReadonlySet<string> = new Set(['payload', 'batteryEnergy', 'gridEnergy', 'range', 'offTrace']);
+
+/** Figures of a cycle after the payload. */
 const cycleFigureOf: Record<string, (result: CycleResult) => number> = {
   batteryEnergy: (r) => r.batteryEnergyJPerM,
   gridEnergy: (r) => r.gridEnergyJPerM,
@@ -99,13 +106,12 @@ const cycleFigureOf: Record<string, (result: CycleResult) => number> = {
   'energy.brakes': (r) => r.brakesJPerM,
   'energy.unmet': (r) => r.unmetJPerM,
 };
-const cycleFigures = trialKindRow('cycle')
-  .metrics.slice(1)
-  .map((name) => cycleFigureOf[name]);
+const cycleMetrics = trialKindRow('cycle').metrics;
+const cycleFigures = cycleMetrics.slice(1).map((name) => cycleFigureOf[name]);
 
-/** The runner of a trial. */
-export function compileRunner(trial: Trial, read: ReadCell): TrialRunner {
-  return runners[trial.kind](trial, (key) => read(`trials.${trial.name}.${key}`));
+/** The runner of a trial. Metrics that are not wanted may stay NaN; the bits of those that are do not depend on it. */
+export function compileRunner(trial: Trial, read: ReadCell, isWanted: IsWanted): TrialRunner {
+  return runners[trial.kind](trial, (key) => read(`trials.${trial.name}.${key}`), isWanted);
 }
 
 /** The prepared cycle of a trial; prepared again only when a design changes its grade or its speed cap. */

@@ -1,24 +1,13 @@
 /**
  * A speed trace made ready for driving: what depends on the schedule and its road alone, worked out once per study.
- * Standing steps (zero speed at both ends) take time and nothing else, so that they are folded into one figure; the
- * arrays hold the moving steps in the order of the trace, and every sum over them runs in that order.
+ * Standing steps (zero speed at both ends) take time and nothing else, so that they are folded into one figure.
  */
-import { slopeOf } from '../vehicle/road-load.ts';
+import { createDrawnSums, type DrawnSums } from './drawn-sums.ts';
 import { createDrivenSteps, type DrivenSteps } from './driven-steps.ts';
 import { type LossWindows, tenMinuteWindows } from './loss-window.ts';
-
-/** A speed trace: times in s, rising strictly; speeds in m/s, not negative; equally many, at least two. */
-export interface SpeedTraceLike {
-  readonly timesS: readonly number[];
-  readonly speedsMPerS: readonly number[];
-}
-
-/** Grade over time (s) or over distance (m): piecewise linear, held beyond its ends; `at` rises strictly. */
-export interface RoadProfileLike {
-  readonly over: 'time' | 'distance';
-  readonly at: readonly number[];
-  readonly grades: readonly number[];
-}
+import { listMoving, type MovingSteps, moveAlong, type RoadProfileLike, type SpeedTraceLike } from './moving-steps.ts';
+import { createQuickLaw, type QuickLaw } from './quick-law.ts';
+import { orderBySpeed, type SpeedOrder } from './speed-order.ts';
 
 /** What a cycle trial states beside its trace. */
 export interface CycleConditions {
@@ -43,22 +32,10 @@ export interface RoadMoments {
   readonly v3: number;
 }
 
-/** The moving steps of a schedule. */
-interface MovingSteps {
-  readonly durationS: Float64Array;
-  /** Mean speed, above zero. */
-  readonly speedMPerS: Float64Array;
-  /** One over the mean speed. */
-  readonly perSpeedSPerM: Float64Array;
-  readonly accelerationMPerS2: Float64Array;
-  readonly cosSlope: Float64Array;
-  readonly sinSlope: Float64Array;
-}
-
-/** A cycle ready to be driven, with the arrays to drive it in: not to be shared between threads. */
+/** A cycle ready to be driven, its moving steps in the order of the trace, with the arrays to drive it in: not to be shared between threads. */
 export interface CompiledCycle extends MovingSteps {
-  /** All moving steps have the same slope. */
-  readonly evenSlope: boolean;
+  /** The same steps in the order in which the energy drawn is added up. */
+  readonly bySpeed: SpeedOrder;
   readonly moments: RoadMoments;
   /** (v² − v₀²)/2 over the whole trace: what is left in a unit of mass. */
   readonly kineticJPerKg: number;
@@ -75,7 +52,11 @@ export interface CompiledCycle extends MovingSteps {
   /** Runs of steps over which the worst loss load is sought. */
   readonly windows: LossWindows;
 
-  /** The steps as driven by the design in hand: in its only or lower gear, in the end in the gears chosen. */
+  /** The design in hand: its laws multiplied out for each gear, what it has drawn, and those of its steps in the order `bySpeed` that were driven word for word. */
+  readonly laws: readonly [QuickLaw, QuickLaw];
+  readonly drawn: DrawnSums;
+  readonly drivenBySpeed: DrivenSteps;
+  /** Its steps in the order of the trace: in its only or lower gear, in the end in the gears chosen. */
   readonly driven: DrivenSteps;
   /** The same in the higher of two gears. */
   readonly drivenHigher: DrivenSteps;
@@ -85,21 +66,18 @@ export interface CompiledCycle extends MovingSteps {
   readonly lossToJ: Float64Array;
 }
 
-/**
- * Prepares a trace for driving. The cap clips the speeds first; step k runs from time k to time k + 1 at their mean
- * speed and with constant acceleration; the road profile is read at mid-step, half of the step's time or distance on.
- */
+/** Prepares a trace for driving. The cap clips the speeds first. */
 export function compileCycle(trace: SpeedTraceLike, conditions: CycleConditions): CompiledCycle {
   const { timesS } = trace;
   const capped = { timesS, speedsMPerS: cappedSpeeds(trace.speedsMPerS, conditions.capSpeedMPerS) };
   const speeds = capped.speedsMPerS;
-  const moving = listMoving(speeds);
-  const steps = moveAlong(capped, moving, gradeReader(conditions));
+  const moving = listMoving(capped);
+  const steps = moveAlong(capped, moving, conditions.grade, conditions.road);
   const last = timesS.length - 1;
   const distanceM = distanceOf(capped);
   return {
     ...steps,
-    evenSlope: steps.sinSlope.every((sin) => sin === steps.sinSlope[0]),
+    bySpeed: orderBySpeed(steps),
     moments: momentsOf(steps),
     kineticJPerKg: (speeds[last] * speeds[last] - speeds[0] * speeds[0]) / 2,
     stepOfTrace: moving,
@@ -109,6 +87,9 @@ export function compileCycle(trace: SpeedTraceLike, conditions: CycleConditions)
     distanceM,
     distanceLostToCapM: distanceOf(trace) - distanceM,
     windows: tenMinuteWindows(timesS, moving),
+    laws: [createQuickLaw(), createQuickLaw()],
+    drawn: createDrawnSums(),
+    drivenBySpeed: createDrivenSteps(moving.length),
     driven: createDrivenSteps(moving.length),
     drivenHigher: createDrivenSteps(moving.length),
     nearLimit: new Int32Array(moving.length),
@@ -118,58 +99,6 @@ export function compileCycle(trace: SpeedTraceLike, conditions: CycleConditions)
 
 function cappedSpeeds(speeds: readonly number[], cap: number): readonly number[] {
   return Number.isNaN(cap) ? speeds : speeds.map((speed) => Math.min(speed, cap));
-}
-
-function listMoving(speeds: readonly number[]): Int32Array {
-  const moving: number[] = [];
-  for (let k = 0; k + 1 < speeds.length; k++) {
-    if (speeds[k] !== 0 || speeds[k + 1] !== 0) moving.push(k);
-  }
-  return Int32Array.from(moving);
-}
-
-function moveAlong({ timesS, speedsMPerS }: SpeedTraceLike, moving: Int32Array, gradeAt: GradeReader): MovingSteps {
-  const array = () => new Float64Array(moving.length);
-  const steps = {
-    durationS: array(),
-    speedMPerS: array(),
-    perSpeedSPerM: array(),
-    accelerationMPerS2: array(),
-    cosSlope: array(),
-    sinSlope: array(),
-  };
-  let distanceM = 0;
-  for (let i = 0; i < moving.length; i++) {
-    const k = moving[i];
-    const durationS = timesS[k + 1] - timesS[k];
-    const speed = (speedsMPerS[k] + speedsMPerS[k + 1]) / 2;
-    const slope = slopeOf(gradeAt(timesS[k] + durationS / 2, distanceM + (speed * durationS) / 2));
-    steps.durationS[i] = durationS;
-    steps.speedMPerS[i] = speed;
-    steps.perSpeedSPerM[i] = 1 / speed;
-    steps.accelerationMPerS2[i] = (speedsMPerS[k + 1] - speedsMPerS[k]) / durationS;
-    steps.cosSlope[i] = slope.cos;
-    steps.sinSlope[i] = slope.sin;
-    distanceM += speed * durationS;
-  }
-  return steps;
-}
-
-type GradeReader = (timeS: number, distanceM: number) => number;
-
-/** Reads the grade at places that never step back. */
-function gradeReader({ grade, road }: CycleConditions): GradeReader {
-  if (road === null) return () => grade;
-  const { over, at, grades } = road;
-  let next = 0;
-  return (timeS, distanceM) => {
-    const here = over === 'time' ? timeS : distanceM;
-    while (next < at.length && at[next] <= here) next++;
-    if (next === 0) return grades[0];
-    if (next === at.length) return grades[next - 1];
-    const share = (here - at[next - 1]) / (at[next] - at[next - 1]);
-    return grades[next - 1] + (grades[next] - grades[next - 1]) * share;
-  };
 }
 
 function momentsOf({ durationS, speedMPerS, cosSlope, sinSlope }: MovingSteps): RoadMoments {

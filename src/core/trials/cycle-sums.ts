@@ -1,14 +1,10 @@
-/** Sums over the steps of a driven cycle: pack, wheels, and where the energy goes. Always added up in the order of the trace. */
-import { mostPowerW, packCurrentA } from '../vehicle/battery.ts';
+/** The account of a driven cycle: sums over its steps at the wheels, and where the energy goes. Always added up in the order of the trace. */
+import { mostPowerW } from '../vehicle/battery.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 import type { CompiledCycle } from './compiled-cycle.ts';
 
 /** Totals over the whole time of a cycle. */
 export interface CycleSums {
-  /** At the terminals of the pack. */
-  terminalJ: number;
-  /** In the resistance of the pack. */
-  packHeatJ: number;
   /** What the trace asks for at the wheels while pulling. */
   demandJ: number;
   /** What the trace takes out at the wheels while braking, and what of it reaches the terminals before the auxiliaries. */
@@ -21,14 +17,11 @@ export interface CycleSums {
   unmetJ: number;
   /** ∑ T² Δt. */
   torqueSquareN2M2S: number;
-  missedS: number;
 }
 
 /** Nothing added up yet. */
 export function emptySums(): CycleSums {
   return {
-    terminalJ: 0,
-    packHeatJ: 0,
     demandJ: 0,
     brakingJ: 0,
     recoveredJ: 0,
@@ -37,7 +30,6 @@ export function emptySums(): CycleSums {
     brakesJ: 0,
     unmetJ: 0,
     torqueSquareN2M2S: 0,
-    missedS: 0,
   };
 }
 
@@ -48,13 +40,10 @@ export function emptySums(): CycleSums {
 export function addSteps(vehicle: Vehicle, cycle: CompiledCycle, from: number, to: number, sums: CycleSums): void {
   const { durationS, speedMPerS, lossToJ } = cycle;
   const { demandN, gearedN, torqueNm, shaftW, lossW, missed } = cycle.driven;
-  const { voltageV, resistanceOhm, chargeW } = vehicle.battery;
+  const { chargeW } = vehicle.battery;
   const { auxiliariesW } = vehicle;
   const mostW = mostPowerW(vehicle.battery);
-  const voltageSquare = voltageV * voltageV;
-  const resistance4 = 4 * resistanceOhm;
-  let { terminalJ, demandJ, brakingJ, recoveredJ, gearingJ, lossJ, brakesJ, unmetJ, torqueSquareN2M2S, missedS } = sums;
-  let dropSquareV2S = 0;
+  let { demandJ, brakingJ, recoveredJ, gearingJ, lossJ, brakesJ, unmetJ, torqueSquareN2M2S } = sums;
   for (let k = from; k < to; k++) {
     const stepS = durationS[k];
     const lengthM = speedMPerS[k] * stepS;
@@ -63,7 +52,7 @@ export function addSteps(vehicle: Vehicle, cycle: CompiledCycle, from: number, t
     const torque = torqueNm[k];
     const shaft = shaftW[k];
     const loss = lossW[k];
-    let terminal = shaft + loss + auxiliariesW;
+    const terminal = shaft + loss + auxiliariesW;
     lossJ += loss * stepS;
     lossToJ[k + 1] = lossJ;
     torqueSquareN2M2S += torque * torque * stepS;
@@ -73,25 +62,14 @@ export function addSteps(vehicle: Vehicle, cycle: CompiledCycle, from: number, t
     if (demand >= 0) demandJ += demand * lengthM;
     else {
       brakingJ -= demand * lengthM;
-      if (terminal < -chargeW) {
-        brakesJ -= (chargeW + terminal) * stepS;
-        terminal = -chargeW;
-      }
-      if (terminal < auxiliariesW) recoveredJ += (auxiliariesW - terminal) * stepS;
+      if (terminal < -chargeW) brakesJ -= (chargeW + terminal) * stepS;
+      if (terminal < auxiliariesW) recoveredJ += (auxiliariesW - Math.max(terminal, -chargeW)) * stepS;
     }
     if (terminal > mostW) {
       unmetJ -= (terminal - mostW) * stepS;
-      terminal = mostW;
       missed[k] = 1;
     }
-    if (missed[k] !== 0) missedS += stepS;
-    // Twice the voltage lost in the pack, 2RI. With V I = P + R I² the drawn energy needs no division for I, and no digits of it for a tiny R.
-    const drop = voltageV - Math.sqrt(Math.max(0, voltageSquare - resistance4 * terminal));
-    terminalJ += terminal * stepS;
-    dropSquareV2S += drop * drop * stepS;
   }
-  if (resistanceOhm > 0) sums.packHeatJ += dropSquareV2S / resistance4;
-  sums.terminalJ = terminalJ;
   sums.demandJ = demandJ;
   sums.brakingJ = brakingJ;
   sums.recoveredJ = recoveredJ;
@@ -100,17 +78,4 @@ export function addSteps(vehicle: Vehicle, cycle: CompiledCycle, from: number, t
   sums.brakesJ = brakesJ;
   sums.unmetJ = unmetJ;
   sums.torqueSquareN2M2S = torqueSquareN2M2S;
-  sums.missedS = missedS;
-}
-
-/** Adds the standing time, which draws the auxiliaries alone. */
-export function addStanding({ battery, auxiliariesW }: Vehicle, { standingS }: CompiledCycle, sums: CycleSums): void {
-  const mostW = mostPowerW(battery);
-  const currentA = packCurrentA(battery, auxiliariesW);
-  sums.terminalJ += Math.min(auxiliariesW, mostW) * standingS;
-  sums.packHeatJ += currentA * currentA * battery.resistanceOhm * standingS;
-  if (auxiliariesW > mostW) {
-    sums.unmetJ -= (auxiliariesW - mostW) * standingS;
-    sums.missedS += standingS;
-  }
 }

@@ -1,16 +1,21 @@
 /**
  * Cycle trial: a prepared speed trace driven backward-facing, step by step, from the force at the wheels to the energy
- * drawn from the pack, with a sink for every joule of it.
+ * drawn from the pack; on request with a sink for every joule of it.
  * Source: quasi-static (backward-facing) simulation, Guzzella & Sciarretta, Vehicle Propulsion Systems, ch. 2 (from memory).
  */
+import { mostPowerW } from '../vehicle/battery.ts';
 import { motorSpeedRadPerS } from '../vehicle/gearing.ts';
 import { continuousCornerLossW, isOutsideMap } from '../vehicle/motor.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 import { chooseGears } from './choose-gear.ts';
 import type { CompiledCycle } from './compiled-cycle.ts';
-import { addStanding, addSteps, type CycleSums, emptySums } from './cycle-sums.ts';
+import { addSteps, type CycleSums, emptySums } from './cycle-sums.ts';
+import { addDrawn, addStanding, clearDrawn, packHeatJ } from './drawn-sums.ts';
+import { driveBySpeed } from './drive-by-speed.ts';
 import { driveInGear } from './drive-in-gear.ts';
+import { STEPS_AT_A_TIME } from './driven-steps.ts';
 import { highestMeanW } from './loss-window.ts';
+import { writeQuickLaw } from './quick-law.ts';
 import { airEnergyJ, gradeEnergyJ, inertiaEnergyJ, rollingEnergyJ } from './wheel-demand.ts';
 
 /** Figures of one design on one cycle; energies per distance driven. NaN: does not exist. */
@@ -76,16 +81,47 @@ export function createCycleResult(): CycleResult {
 }
 
 /**
- * Steps driven at a time. Long loops in the first calls leave V8 with loop code that it entered half-way through a call (on-stack
- * replacement), measured three times slower and kept for good; short ones let it compile whole functions.
+ * Drives the cycle and fills `result`: what is drawn from the pack and the time off the trace; the whole account of the energy and of the
+ * motor's load only if asked, else those figures stay as they are. What is drawn has the same bits either way. With the account, the
+ * steps as driven stay in `cycle.driven` until the next design.
  */
-const BLOCK = 128;
+export function runCycle(vehicle: Vehicle, cycle: CompiledCycle, result: CycleResult, withAccount = true): void {
+  const { drawn, distanceM, totalS } = cycle;
+  const { ratioCount } = vehicle.gearing;
+  const isQuick = ratioCount === 1 && vehicle.motor.lossMap === null;
+  clearDrawn(drawn);
+  if (isQuick) driveBySpeed(vehicle, cycle);
+  else {
+    driveAlongTrace(vehicle, cycle);
+    addDrawn(vehicle, cycle.durationS, cycle.driven, 0, cycle.durationS.length, drawn);
+  }
+  addStanding(vehicle, cycle.standingS, drawn);
+  result.offTrace = drawn.missedS / totalS;
+  writeBatteryFigures(vehicle, perDistance(drawn.terminalJ + packHeatJ(vehicle, drawn), distanceM), result);
+  if (!withAccount) return;
+  if (isQuick) driveAlongTrace(vehicle, cycle);
+  writeAccount(vehicle, cycle, result);
+}
 
-/** Drives the cycle and fills `result`. The steps as driven stay in `cycle.driven` until the next design. */
-export function runCycle(vehicle: Vehicle, cycle: CompiledCycle, result: CycleResult): void {
-  const { distanceM, totalS } = cycle;
-  const sums = driveSteps(vehicle, cycle);
-  const { road } = vehicle;
+/** Writes the moving steps, in the order of the trace, to `cycle.driven`. */
+function driveAlongTrace(vehicle: Vehicle, cycle: CompiledCycle): void {
+  const { ratioCount } = vehicle.gearing;
+  const steps = cycle.durationS.length;
+  writeQuickLaw(vehicle, 0, cycle.laws[0]);
+  if (ratioCount === 2) writeQuickLaw(vehicle, 1, cycle.laws[1]);
+  for (let from = 0; from < steps; from += STEPS_AT_A_TIME) {
+    const to = Math.min(from + STEPS_AT_A_TIME, steps);
+    driveInGear(vehicle, 0, cycle, from, to, cycle.driven);
+    if (ratioCount === 1) continue;
+    driveInGear(vehicle, 1, cycle, from, to, cycle.drivenHigher);
+    chooseGears(vehicle, cycle, from, to);
+  }
+}
+
+function writeAccount(vehicle: Vehicle, cycle: CompiledCycle, result: CycleResult): void {
+  const { drawn, distanceM, totalS } = cycle;
+  const { road, battery, auxiliariesW } = vehicle;
+  const sums = accountOfSteps(vehicle, cycle);
   result.wheelDemandJPerM = perDistance(sums.demandJ, distanceM);
   result.wheelBrakingJPerM = perDistance(sums.brakingJ, distanceM);
   result.rollingJPerM = perDistance(rollingEnergyJ(road, cycle), distanceM);
@@ -94,30 +130,21 @@ export function runCycle(vehicle: Vehicle, cycle: CompiledCycle, result: CycleRe
   result.inertiaJPerM = perDistance(inertiaEnergyJ(vehicle, cycle), distanceM);
   result.gearingJPerM = perDistance(sums.gearingJ, distanceM);
   result.motorJPerM = perDistance(sums.lossJ, distanceM);
-  result.batteryJPerM = perDistance(sums.packHeatJ, distanceM);
-  result.auxiliariesJPerM = perDistance(vehicle.auxiliariesW * totalS, distanceM);
+  result.batteryJPerM = perDistance(packHeatJ(vehicle, drawn), distanceM);
+  result.auxiliariesJPerM = perDistance(auxiliariesW * totalS, distanceM);
   result.brakesJPerM = perDistance(sums.brakesJ, distanceM);
-  result.unmetJPerM = perDistance(sums.unmetJ, distanceM);
-  result.offTrace = sums.missedS / totalS;
+  // While standing, the pack may not even have the power for the auxiliaries.
+  const standingUnmetJ = Math.max(0, auxiliariesW - mostPowerW(battery)) * cycle.standingS;
+  result.unmetJPerM = perDistance(sums.unmetJ - standingUnmetJ, distanceM);
   result.recovered = sums.brakingJ > 0 ? sums.recoveredJ / sums.brakingJ : Number.NaN;
   result.outsideMap = vehicle.motor.lossMap === null ? Number.NaN : outsideMapS(vehicle, cycle) / totalS;
-  writeBatteryFigures(vehicle, perDistance(sums.terminalJ + sums.packHeatJ, distanceM), result);
   writeMotorLoads(vehicle, cycle, sums, result);
 }
 
-function driveSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
+function accountOfSteps(vehicle: Vehicle, cycle: CompiledCycle): CycleSums {
   const sums = emptySums();
-  const steps = cycle.speedMPerS.length;
-  for (let from = 0; from < steps; from += BLOCK) {
-    const to = Math.min(from + BLOCK, steps);
-    driveInGear(vehicle, 0, cycle, from, to, cycle.driven);
-    if (vehicle.gearing.ratioCount === 2) {
-      driveInGear(vehicle, 1, cycle, from, to, cycle.drivenHigher);
-      chooseGears(vehicle, cycle, from, to);
-    }
-    addSteps(vehicle, cycle, from, to, sums);
-  }
-  addStanding(vehicle, cycle, sums);
+  const steps = cycle.durationS.length;
+  for (let from = 0; from < steps; from += STEPS_AT_A_TIME) addSteps(vehicle, cycle, from, Math.min(from + STEPS_AT_A_TIME, steps), sums);
   return sums;
 }
 

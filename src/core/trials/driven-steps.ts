@@ -1,5 +1,11 @@
 /** What the drive does on every moving step of a cycle: arrays that are written anew for every design. */
 
+/**
+ * Steps driven at a time. Long loops in the first calls leave V8 with loop code that it entered half-way through a call (on-stack
+ * replacement), measured three times slower and kept for good; short ones let it compile whole functions.
+ */
+export const STEPS_AT_A_TIME = 128;
+
 /** One entry per moving step of a compiled cycle. */
 export interface DrivenSteps {
   /** Force that the trace asks for at the wheels. */

@@ -2,27 +2,43 @@
 import { airResistanceN } from '../vehicle/road-load.ts';
 import type { RoadLoad, Vehicle } from '../vehicle/vehicle.ts';
 import type { CompiledCycle } from './compiled-cycle.ts';
+import type { MovingSteps } from './moving-steps.ts';
 
-/** Writes F = m_e a + R(v̄) (N) of the moving steps `from` up to, not including, `to` to `demandN`, with the effective mass of one gear. */
-export function writeDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, from: number, to: number, demandN: Float64Array): void {
-  if (cycle.evenSlope && road.headWindMPerS === 0) writeCalmDemand(road, effectiveMassKg, cycle, from, to, demandN);
-  else writeOpenDemand(road, effectiveMassKg, cycle, from, to, demandN);
+/** Road load on one slope without wind: constant + v (linear + v square). */
+export interface CalmResistance {
+  readonly constantN: number;
+  readonly linearNSPerM: number;
+  readonly squareNS2PerM2: number;
 }
 
-/** One slope and no wind: the resistance is one polynomial of speed. */
-function writeCalmDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, from: number, to: number, demandN: Float64Array): void {
-  const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = cycle;
-  const constant = cosSlope[0] * road.rollingN + road.weightN * sinSlope[0];
-  const linear = road.airLinearNSPerM;
-  const square = cosSlope[0] * road.rollingPerSpeed2NS2PerM2 + road.airSquareNS2PerM2 + road.dragNS2PerM2;
+/** The resistance of steps that all have one slope, without wind; null where slope or wind make it another one. */
+export function calmResistance(road: RoadLoad, { evenSlope, cosSlope, sinSlope }: MovingSteps): CalmResistance | null {
+  if (!evenSlope || road.headWindMPerS !== 0 || cosSlope.length === 0) return null;
+  return {
+    constantN: cosSlope[0] * road.rollingN + road.weightN * sinSlope[0],
+    linearNSPerM: road.airLinearNSPerM,
+    squareNS2PerM2: cosSlope[0] * road.rollingPerSpeed2NS2PerM2 + road.airSquareNS2PerM2 + road.dragNS2PerM2,
+  };
+}
+
+/** Writes F = m_e a + R(v̄) (N) of the steps `from` up to, not including, `to` to `demandN`, with the effective mass of one gear. */
+export function writeDemand(road: RoadLoad, effectiveMassKg: number, steps: MovingSteps, from: number, to: number, demandN: Float64Array): void {
+  const calm = calmResistance(road, steps);
+  if (calm === null) writeOpenDemand(road, effectiveMassKg, steps, from, to, demandN);
+  else writeCalmDemand(calm, effectiveMassKg, steps, from, to, demandN);
+}
+
+function writeCalmDemand(resistance: CalmResistance, effectiveMassKg: number, steps: MovingSteps, from: number, to: number, demandN: Float64Array): void {
+  const { speedMPerS, accelerationMPerS2 } = steps;
+  const { constantN, linearNSPerM, squareNS2PerM2 } = resistance;
   for (let k = from; k < to; k++) {
     const v = speedMPerS[k];
-    demandN[k] = effectiveMassKg * accelerationMPerS2[k] + (constant + v * (linear + v * square));
+    demandN[k] = effectiveMassKg * accelerationMPerS2[k] + (constantN + v * (linearNSPerM + v * squareNS2PerM2));
   }
 }
 
-function writeOpenDemand(road: RoadLoad, effectiveMassKg: number, cycle: CompiledCycle, from: number, to: number, demandN: Float64Array): void {
-  const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = cycle;
+function writeOpenDemand(road: RoadLoad, effectiveMassKg: number, steps: MovingSteps, from: number, to: number, demandN: Float64Array): void {
+  const { speedMPerS, accelerationMPerS2, cosSlope, sinSlope } = steps;
   const { rollingN, rollingPerSpeed2NS2PerM2, airLinearNSPerM, airSquareNS2PerM2, dragNS2PerM2, headWindMPerS, weightN } = road;
   for (let k = from; k < to; k++) {
     const v = speedMPerS[k];
