@@ -1,23 +1,18 @@
 /** The full grid: every point of every axis with every point of the others. */
-import type { Axis } from '../study/study.ts';
-import type { Search, SearchMethod } from './search-method.ts';
+import type { Axis, GridSearch } from '../study/study.ts';
+import { checkDesignNumber, inputOffsets, type Search, type SearchMethod } from './search-method.ts';
 
 /**
  * Numbers the grid in the order of nested lists: the first axis of the study changes slowest, the last fastest, so
  * that neighbouring numbers differ in the last axis. A study without axes has an empty grid (its one design is the
  * reference). Exact up to 2^53 - 1 designs; more throw.
  */
-export const gridSearch: SearchMethod = ({ axes }): Search => {
+export const gridSearch: SearchMethod<GridSearch> = ({ axes }): Search => {
   const count = gridSize(axes);
-  const check = (designNumber: number): number => {
-    if (!Number.isInteger(designNumber) || designNumber < 1 || designNumber > count) {
-      throw new RangeError(`design ${designNumber} is not one of 1 to ${count}`);
-    }
-    return designNumber - 1;
-  };
   const walk = (designNumber: number, visit: (axis: number, point: number) => void): void => {
+    checkDesignNumber(designNumber, count);
     // Remainders of doubles, not bit operations: counts pass 2^32.
-    let rest = check(designNumber);
+    let rest = designNumber - 1;
     for (let k = axes.length - 1; k >= 0; k--) {
       const size = axes[k]!.points.length;
       const point = rest % size;
@@ -42,14 +37,4 @@ function gridSize(axes: readonly Axis[]): number {
   const count = axes.reduce((product, axis) => product * axis.points.length, 1);
   if (count > Number.MAX_SAFE_INTEGER) throw new RangeError(`a grid of ${count} designs cannot be numbered exactly`);
   return count;
-}
-
-/** Where each axis begins in a row of inputs. */
-function inputOffsets(axes: readonly Axis[]): number[] {
-  let next = 0;
-  return axes.map((axis) => {
-    const offset = next;
-    next += axis.sets.length;
-    return offset;
-  });
 }

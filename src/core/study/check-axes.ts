@@ -1,12 +1,11 @@
 /** Rules between the axes of a search: every number is set in one place, and what one axis sets has a part to play beside the others. */
+import { sobolDimensions } from '../numerics/sobol.ts';
 import type { IssueList } from './issue.ts';
 import type { LocatedEntry } from './located-text.ts';
 import type { OptionList } from './read-options.ts';
+import { mostDesigns } from './read-search.ts';
 import { exclusion, nameInFile } from './rules.ts';
-import type { Axis } from './study.ts';
-
-/** A design's number must fit an unsigned 32-bit integer. */
-const MOST_DESIGNS = 4e9;
+import type { Axis, Search } from './study.ts';
 
 /** An axis, and where it stands. */
 export interface PlacedAxis {
@@ -37,17 +36,35 @@ const givenBy: Readonly<Record<string, readonly string[]>> = {
   'vehicle.tyre': ['vehicle.wheelRadius'],
 };
 
-/** Tells of every number that two axes set, or that one sets and another leaves without a part; and of too many designs. Axes come in the order of the file. */
-export function checkAxes(axes: readonly PlacedAxis[], issues: IssueList): void {
+/**
+ * Tells of every number that two axes set, or that one sets and another leaves without a part; and of more than the search (null:
+ * unknown) can take. Axes come in the order of the file.
+ */
+export function checkAxes(axes: readonly PlacedAxis[], search: Search | null, issues: IssueList): void {
   for (const [index, later] of axes.entries()) for (const earlier of axes.slice(0, index)) checkPair(earlier, later, issues);
+  if (search?.method === 'grid') checkGridSize(axes, issues);
+  if (search?.method === 'sobol') checkDimensions(axes, issues);
+}
+
+function checkGridSize(axes: readonly PlacedAxis[], issues: IssueList): void {
   const designs = axes.reduce((product, { axis }) => product * axis.points.length, 1);
   const last = axes.at(-1);
-  if (last === undefined || designs <= MOST_DESIGNS) return;
+  if (last === undefined || designs <= mostDesigns) return;
   const found = `${axes.map(({ axis }) => axis.points.length).join(' × ')} designs`;
   issues.error(last.at, last.path.split('.')[0] as string, {
     expected: 'at most 4 000 000 000 designs',
     found,
-    hint: 'Use fewer steps, or vary fewer numbers.',
+    hint: 'Use fewer steps, vary fewer numbers, or draw designs by "search: { method: sobol, designs: 1000000 }".',
+  });
+}
+
+function checkDimensions(axes: readonly PlacedAxis[], issues: IssueList): void {
+  const beyond = axes[sobolDimensions];
+  if (beyond === undefined) return;
+  issues.error(beyond.at, beyond.path, {
+    expected: `at most ${sobolDimensions} axes under method sobol`,
+    found: `${axes.length} under vary and options`,
+    hint: 'Vary fewer numbers, or use "method: random".',
   });
 }
 

@@ -8,13 +8,14 @@ import { type Located, type LocatedMap, readLocated } from './located-text.ts';
 import { metricColumns } from './metric-columns.ts';
 import { namesOf, type OptionAxes, type OptionBase, optionAxes } from './option-axes.ts';
 import { readRequirements, readTradeOff } from './read-aims.ts';
-import { readAxes, readSearch } from './read-axes.ts';
+import { readAxes } from './read-axes.ts';
 import { createMotorFiles, lossMapOf, readStudyFullLoad, readStudyMap } from './read-measured.ts';
 import { type OptionList, readOptions } from './read-options.ts';
 import { type Found, nothingFound, readPlaces } from './read-places.ts';
+import { readSearch } from './read-search.ts';
 import { readTrials, type StudySources, type TrialFound } from './read-trials.ts';
 import { referenceValues } from './reference-values.ts';
-import type { Axis, Study, Trial } from './study.ts';
+import type { Axis, Search, Study, Trial } from './study.ts';
 import { checkTyre } from './tyre-size.ts';
 import { addWarnings } from './warnings.ts';
 
@@ -52,12 +53,12 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
   for (const trial of trials) checkTrialRules(trial, { base: found, varied, issues, pathOf: (name) => name });
   const sound = issues.errorCount === before;
   const values = referenceValues({ found, trials, fullLoad });
-  const { axes, options, known } = readAllAxes({ found, trials, fullLoad, values, files, issues, varied, sound }, broken, sources);
+  const search = readSearch(found.parts.get('search')?.value, issues);
+  const { axes, options, known } = readAllAxes({ found, trials, fullLoad, values, files, issues, varied, sound }, { broken, sources, search });
   const aims = { issues, trials, columns: metricColumns({ trials }), broken, stands: known };
   const requirements = readRequirements(found.parts.get('requirements')?.value, aims);
   const tradeOff = readTradeOff(found.parts.get('tradeOff')?.value, aims);
-  const search = readSearch(found.parts.get('search')?.value, issues);
-  if (issues.failed) return null;
+  if (search === null || issues.failed) return null;
   const texts = (name: string) => found.texts.get(name)?.text;
   const study: Study = {
     title: texts('title') ?? fileName.replace(/^.*[/\\]/u, '').replace(/\.ya?ml$/iu, ''),
@@ -83,16 +84,19 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
 }
 
 /** The axes of the search in the order of the file, what options bring, and every name that the study or an option states. */
-function readAllAxes(base: OptionBase, broken: ReadonlySet<string>, sources: StudySources): { axes: Axis[]; options: OptionAxes; known: Map<string, number> } {
+function readAllAxes(
+  base: OptionBase,
+  { broken, sources, search }: { readonly broken: ReadonlySet<string>; readonly sources: StudySources; readonly search: Search | null },
+): { axes: Axis[]; options: OptionAxes; known: Map<string, number> } {
   const { found, trials, values, issues } = base;
   const [vary, optionsPart] = [found.parts.get('vary'), found.parts.get('options')];
   const lists = optionsPart === undefined ? [] : readOptions(optionsPart.value, { issues, trials, broken, sources });
   const options = optionAxes(lists, base);
   const stands = new Map([...found.stands, ...trials.flatMap((trial) => [...trial.found.stands])]);
   const tried = new Set([...found.tried, ...trials.flatMap((trial) => [...trial.found.tried])]);
-  const ranges = vary === undefined ? [] : readAxes(vary.value, { issues, values, stands, tried, broken });
+  const ranges = vary === undefined ? [] : readAxes(vary.value, { issues, search, values, stands, tried, broken });
   const placed = [...ranges, ...options.axes.map((axis, index) => placedOptions(axis, lists[index] as OptionList))].sort((a, b) => a.at - b.at);
-  checkAxes(placed, issues);
+  checkAxes(placed, search, issues);
   const known = new Map([...lists.flatMap((list) => namesOf(list).map((name) => [name, list.at] as const)), ...found.stands]);
   return { axes: placed.map(({ axis }) => axis), options, known };
 }

@@ -1,4 +1,4 @@
-/** Reads `vary`: ranges and lists of a number to the points of an axis; and `search`. */
+/** Reads `vary`: ranges and lists of a number to the points of an axis. */
 import { fromSi, toSi, type Unit } from '../units/units.ts';
 import { type PlacedAxis, placedRange } from './check-axes.ts';
 import { asWritten } from './check-rules.ts';
@@ -12,13 +12,12 @@ import type { Axis, Search } from './study.ts';
 /** More points than a person would list on one axis. */
 const MOST_POINTS = 10_000;
 const KEYS = ['from', 'to', 'steps', 'step', 'oneOf'];
-/** Keys that belong to the methods to come. */
-const SAMPLING_KEYS = ['designs', 'seed'];
-const METHODS_TO_COME = ['sobol', 'latin hypercube', 'random', 'genetic'];
 
 /** What the axes are checked against. */
 export interface AxesContext {
   readonly issues: IssueList;
+  /** Null where the study's own could not be read. */
+  readonly search: Search | null;
   /** The reference design: a varied number must have a figure in it. */
   readonly values: Readonly<Record<string, number>>;
   /** Every name that the study states, trials included. */
@@ -61,7 +60,7 @@ function readAxis(entry: LocatedEntry, context: AxesContext): Axis | null {
     context.issues.error(value.at, path, { expected: 'a range with from, to and steps, or oneOf with a list', found, hint });
     return null;
   }
-  return readAxisMap(key, row, value, context.issues);
+  return readAxisMap(key, row, value, context);
 }
 
 /** Ratios that vary together, and their efficiencies: `gearing.ratios: { oneOf: [[11.2, 6.4], [12, 7]] }`. */
@@ -154,7 +153,8 @@ function noReference(name: string, row: ParameterRow | undefined, value: Located
   };
 }
 
-function readAxisMap(name: string, row: ParameterRow, map: LocatedMap, issues: IssueList): Axis | null {
+function readAxisMap(name: string, row: ParameterRow, map: LocatedMap, context: AxesContext): Axis | null {
+  const { issues } = context;
   const path = `vary.${name}`;
   const entry = (key: string) => map.entries.find((candidate) => candidate.key === key);
   for (const { key, at } of map.entries) {
@@ -168,7 +168,7 @@ function readAxisMap(name: string, row: ParameterRow, map: LocatedMap, issues: I
     issues.error(map.at, path, { expected: 'a range or oneOf', found: 'both', hint: 'Keep one of the two.' });
     return null;
   }
-  return list !== undefined ? readList(name, row, list, issues) : readRange(name, row, map, issues);
+  return list !== undefined ? readList(name, row, list, issues) : readRange(name, row, map, context);
 }
 
 function readList(name: string, row: ParameterRow, { value }: LocatedEntry, issues: IssueList): Axis | null {
@@ -191,7 +191,7 @@ function readList(name: string, row: ParameterRow, { value }: LocatedEntry, issu
   return { name, sets: [name], points: figures.map((figure) => [(figure as Figure).value]), labels: null, range: null };
 }
 
-function readRange(name: string, row: ParameterRow, map: LocatedMap, issues: IssueList): Axis | null {
+function readRange(name: string, row: ParameterRow, map: LocatedMap, { issues, search }: AxesContext): Axis | null {
   const path = `vary.${name}`;
   const entry = (key: string) => map.entries.find((candidate) => candidate.key === key)?.value;
   const [fromEntry, toEntry, stepsEntry, stepEntry] = ['from', 'to', 'steps', 'step'].map(entry);
@@ -202,12 +202,14 @@ function readRange(name: string, row: ParameterRow, map: LocatedMap, issues: Iss
   }
   const [from, to] = [readFigure(fromEntry, row, `${path}.from`, issues), readFigure(toEntry, row, `${path}.to`, issues)];
   const steps = stepsEntry === undefined ? null : readSteps(stepsEntry, `${path}.steps`, issues);
-  if ((stepsEntry === undefined) === (stepEntry === undefined)) {
-    const found = stepsEntry === undefined ? 'a range without either' : 'both';
+  const stepped = stepsEntry !== undefined || stepEntry !== undefined;
+  if ((stepsEntry !== undefined && stepEntry !== undefined) || (!stepped && search?.method === 'grid')) {
     issues.error(map.at, path, {
       expected: 'steps: a number of points, or step: a distance between them',
-      found,
-      hint: 'A grid needs its points: add "steps: 11", or keep one of the two.',
+      found: stepped ? 'both' : 'a range without either',
+      hint: stepped
+        ? 'Keep one of the two.'
+        : 'A grid needs its points: add "steps: 11"; or draw from the whole range by "search: { method: sobol, designs: 10000 }".',
     });
     return null;
   }
@@ -216,10 +218,12 @@ function readRange(name: string, row: ParameterRow, map: LocatedMap, issues: Iss
     issues.error(to.at, `${path}.to`, { expected: `to above from (${asWritten(from)})`, found: asWritten(to), hint: 'Exchange the two, or correct one.' });
     return null;
   }
+  const range = { from: from.value, to: to.value, stepped };
+  if (!stepped) return { name, sets: [name], points: [[from.value], [to.value]], labels: null, range };
   const count = steps ?? countOf(from, to, stepEntry as Located, row, `${path}.step`, issues);
   if (count === null) return null;
   if (count > MOST_POINTS) return tooMany(map.at, path, count, issues);
-  return { name, sets: [name], points: gridPoints(from, to, count), labels: null, range: { from: from.value, to: to.value, stepped: true } };
+  return { name, sets: [name], points: gridPoints(from, to, count), labels: null, range };
 }
 
 /**
@@ -276,39 +280,4 @@ function countOf(from: Figure, to: Figure, stepEntry: Located, row: ParameterRow
 function tooMany(at: number, path: string, count: number, issues: IssueList): null {
   issues.error(at, path, { expected: `at most ${MOST_POINTS} points on one axis`, found: String(count), hint: 'Use fewer steps.' });
   return null;
-}
-
-/** Reads `search`; so far designs are a grid. */
-export function readSearch(part: Located | undefined, issues: IssueList): Search {
-  const grid: Search = { method: 'grid' };
-  if (part === undefined) return grid;
-  if (part.kind !== 'map') {
-    issues.error(part.at, 'search', {
-      expected: 'a method',
-      found: part.kind === 'text' ? clip(part.text) || 'nothing' : 'a list',
-      hint: 'Write "search: { method: grid }", or remove search.',
-    });
-    return grid;
-  }
-  const method = part.entries.find(({ key }) => key === 'method')?.value;
-  const text = method?.kind === 'text' ? method.text : '';
-  for (const { key, at } of part.entries) {
-    if (key === 'method' || (METHODS_TO_COME.includes(text) && SAMPLING_KEYS.includes(key))) continue;
-    const sampling = SAMPLING_KEYS.includes(key);
-    const near = issues.nearest(key, ['method', ...SAMPLING_KEYS]);
-    const hint = sampling ? 'Remove it: a grid evaluates every point of vary.' : near === null ? 'Remove it.' : `Did you mean ${near}?`;
-    issues.error(at, `search.${key}`, { expected: 'method alone', found: clip(key), hint });
-  }
-  if (text === 'grid') return grid;
-  if (METHODS_TO_COME.includes(text)) {
-    issues.error(method?.at ?? part.at, 'search.method', { expected: 'grid', found: `${text}, which is not available yet`, hint: 'Use grid for now.' });
-  } else {
-    const near = issues.nearest(text, ['grid', ...METHODS_TO_COME]);
-    issues.error(method?.at ?? part.at, 'search.method', {
-      expected: 'grid',
-      found: clip(text) || 'no method',
-      hint: near === null ? 'Write "method: grid".' : `Did you mean ${near}?`,
-    });
-  }
-  return grid;
 }

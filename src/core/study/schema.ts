@@ -4,7 +4,10 @@ import { machineUnit, type Quantity, quantities, quantityRow } from '../units/un
 import { boundsText } from './bounds.ts';
 import { type Place, studyLayout, trialLayout } from './layout.ts';
 import { type ParameterRow, parameters } from './parameters.ts';
+import { mostDesigns, mostSeed } from './read-search.ts';
 import { needs } from './rules.ts';
+import { searchMethods } from './search-methods.ts';
+import type { Search } from './study.ts';
 import { type TrialKind, trialKindRow, trialKinds } from './trial-kinds.ts';
 
 type Schema = Record<string, unknown>;
@@ -47,8 +50,7 @@ function axisDefinition(quantity: Quantity): Schema {
   const range = { type: 'object', additionalProperties: false, properties: { from: figure, to: figure, steps: { type: 'integer', minimum: 2 }, step: figure } };
   return {
     anyOf: [
-      { ...range, required: ['from', 'to', 'steps'] },
-      { ...range, required: ['from', 'to', 'step'] },
+      { ...range, required: ['from', 'to'] },
       { type: 'object', additionalProperties: false, properties: { oneOf: { type: 'array', items: figure, minItems: 1 } }, required: ['oneOf'] },
     ],
   };
@@ -125,6 +127,26 @@ function numbersByName(schemaOf: (row: ParameterRow) => Schema, more: Schema = {
   return { type: 'object', properties: Object.fromEntries(parameters.map((row) => [row.name, schemaOf(row)])), additionalProperties: false, ...more };
 }
 
+function methodSchema(method: Search['method']): Schema {
+  const { sentence } = searchMethods[method];
+  const of = (more: Schema, required: readonly string[]): Schema => ({
+    type: 'object',
+    description: sentence,
+    properties: { method: { const: method, description: sentence }, ...more },
+    required,
+    additionalProperties: false,
+  });
+  if (method === 'grid') return of({}, ['method']);
+  const designs = {
+    type: 'integer',
+    minimum: 1,
+    maximum: mostDesigns,
+    description: 'How many designs to draw. More of them later leave those before as they are.',
+  };
+  const seed = { type: 'integer', minimum: 0, maximum: mostSeed, description: 'Another seed draws other designs. Default 1.' };
+  return of({ designs, seed }, ['method', 'designs']);
+}
+
 const metricName: Schema = { type: 'string', description: 'A metric: <trial>.<metric>, or one of the whole design.' };
 const limit: Schema = { type: ['number', 'string'], description: 'A figure with the unit of the metric.' };
 
@@ -178,7 +200,7 @@ const freeSchemas: Readonly<Record<string, Schema>> = {
       anyOf: [optionFile, { ...objectOf({ file: optionFile }), required: ['file'] }, { type: 'array', items: optionSchema(), minItems: 1 }],
     },
   },
-  search: { type: 'object', properties: { method: { enum: ['grid'], description: 'Every combination of the points of vary.' } }, additionalProperties: false },
+  search: { anyOf: (Object.keys(searchMethods) as Search['method'][]).map(methodSchema) },
   requirements: {
     type: 'object',
     additionalProperties: { type: 'object', properties: { atLeast: limit, atMost: limit }, additionalProperties: false, minProperties: 1 },

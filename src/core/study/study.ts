@@ -39,14 +39,14 @@ export interface Axis {
   /** Dotted names that a point of the axis sets. */
   readonly sets: readonly string[];
   /**
-   * Points in the order of the study file: one SI value per name in `sets`. A number that an option leaves without a part to play
-   * (one ratio beside two) is NaN there; the numbers `motor.fullLoad` and `motor.map` are an index into `optionCurves` and `optionMaps`,
-   * NaN for the study's own. JSON writes NaN as null: `readStudyJson` brings it back.
+   * Points in the order of the study file, of a range without steps its two ends: one SI value per name in `sets`. A number that an
+   * option leaves without a part to play (one ratio beside two) is NaN there; the numbers `motor.fullLoad` and `motor.map` are an index
+   * into `optionCurves` and `optionMaps`, NaN for the study's own. JSON writes NaN as null: `readStudyJson` brings it back.
    */
   readonly points: readonly (readonly number[])[];
   /** Names of the points where they are options. */
   readonly labels: readonly string[] | null;
-  /** A range between two SI values that a sampling method may fill freely; null for lists and options. */
+  /** The two ends of a range, SI; any value between them may be drawn where it is not stepped, else its points. Null for lists and options. */
   readonly range: { readonly from: number; readonly to: number; readonly stepped: boolean } | null;
 }
 
@@ -73,10 +73,22 @@ export interface Objective {
   readonly resolution: number;
 }
 
-/** How designs are chosen. */
-export interface Search {
+/** How designs are chosen: every combination of the points of all axes, … */
+export interface GridSearch {
   readonly method: 'grid';
 }
+
+/** … or as many as asked for, drawn by seed from points and whole ranges; more of them leave those before as they are. */
+export interface SampledSearch {
+  readonly method: 'sobol' | 'random';
+  /** 1 to 4e9. */
+  readonly designs: number;
+  /** 0 to 2^53 - 1. */
+  readonly seed: number;
+}
+
+/** How designs are chosen. */
+export type Search = GridSearch | SampledSearch;
 
 /** A complete, checked study. Dotted names as in the catalogue of parameters. */
 export interface Study {

@@ -2,10 +2,12 @@
  * What a study may state but should know of: it leaves common practice or misleads itself. One row per rule; the rules here need
  * the study alone. Each names the place and the reason, once.
  */
+import { formatFigure } from '../units/format-quantity.ts';
 import { axisPath, cornersOf, extentOf } from './design-corners.ts';
 import { seeMassFactor, seeTooHeavy } from './mass-warnings.ts';
 import { metricColumns } from './metric-columns.ts';
 import { seeMapAndBaseSpeed, seeMapScale, seeMotorEfficiency, seeMotorSpeed, seeSpeedOrder } from './motor-warnings.ts';
+import { isSampled } from './search-methods.ts';
 import { beside, type Sight, shown, type WarningContext, type WarningRow } from './warning-row.ts';
 
 /** Every rule that the study alone can answer. */
@@ -123,6 +125,7 @@ export const warningRows: readonly WarningRow<WarningContext>[] = [
         }));
     },
   },
+  { rule: 'repeated designs', expected: 'at most as many designs as there are combinations', look: seeRepeats },
   { rule: 'discharge limit', expected: 'a discharge limit that the pack can deliver', look: seeDischargeLimit },
   { rule: 'too heavy', expected: 'a laden mass of at least the mass of the vehicle', look: seeTooHeavy },
   {
@@ -211,6 +214,20 @@ function seeUnpriced({ study }: WarningContext): Sight[] {
       found: 'varied, though no objective prices it',
       hint: 'The front will lie at its easy end; read it as what the figure is worth, or put it in trials of its own by "with".',
     }));
+}
+
+/** More designs than there are combinations to draw from. */
+function seeRepeats({ study: { axes, search } }: WarningContext): Sight[] {
+  if (!isSampled(search) || axes.length === 0 || axes.some(({ range }) => range?.stepped === false)) return [];
+  const combinations = axes.reduce((product, { points }) => product * points.length, 1);
+  if (search.designs <= combinations) return [];
+  return [
+    {
+      path: 'search.designs',
+      found: `${formatFigure(search.designs, 0)} designs drawn from ${combinations === 1 ? '1 combination' : `${formatFigure(combinations, 0)} combinations`}`,
+      hint: 'Many designs will be the same: take method grid, or leave out steps, so that whole ranges are drawn from.',
+    },
+  ];
 }
 
 /** A cap that takes distance from a cycle: the energies per distance are then those of a slower, shorter trip in the same time. */

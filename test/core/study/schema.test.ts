@@ -61,6 +61,7 @@ const rules: Record<string, (value: Json, wanted: never, path: string, at: Schem
   pattern: (value, wanted: string, path) => fails(typeof value === 'string' && !new RegExp(wanted, 'u').test(value), `${path}: ${String(value)}`),
   maxLength: (value, wanted: number, path) => fails(typeof value === 'string' && value.length > wanted, `${path}: too long`),
   minimum: (value, wanted: number, path) => fails(typeof value === 'number' && value < wanted, `${path}: too small`),
+  maximum: (value, wanted: number, path) => fails(typeof value === 'number' && value > wanted, `${path}: too large`),
   minItems: (value, wanted: number, path) => fails(Array.isArray(value) && value.length < wanted, `${path}: too short`),
   items: (value, wanted: false | Schema, path, at) => {
     const first = ((at['prefixItems'] ?? []) as Json[]).length;
@@ -82,13 +83,22 @@ describe('the schema of study files', () => {
     expect(answer(edited(harbour, ['ratio: 9.5', 'ratios: [11.2, 6.4]'], ['efficiency: 97 %', 'efficiency: [97 %, 98 %]']))).toEqual([]);
   });
 
+  it('accepts searches that draw designs, from whole ranges too', () => {
+    expect(answer(edited(harbour, ['to: 12.25, steps: 20', 'to: 12.25'], ['{ method: grid }', '{ method: sobol, designs: 5000 }']))).toEqual([]);
+    expect(answer(edited(harbour, ['{ method: grid }', '{ method: random, designs: 5000, seed: 12 }']))).toEqual([]);
+  });
+
   it.each<[string, [string, string]]>([
     ['an unknown name', ['kerbMass:', 'kerbmass:']],
     ['a unit that is missing', ['kerbMass: 1780 kg', 'kerbMass: 1780']],
     ['an unknown kind', ['kind: top speed', 'kind: topspeed']],
     ['a grade on a hill start', ['kind: hill start, laden', 'kind: hill start, grade: 3 %, laden']],
     ['a missing motor', ['motor:\n', 'engine:\n']],
-    ['a range without steps', ['to: 12.25, steps: 20', 'to: 12.25']],
+    ['a range without its end', ['to: 12.25, steps: 20', 'steps: 20']],
+    ['a sample without its size', ['{ method: grid }', '{ method: sobol }']],
+    ['a grid with a size', ['{ method: grid }', '{ method: grid, designs: 100 }']],
+    ['more designs than there are numbers', ['{ method: grid }', '{ method: random, designs: 4000000001 }']],
+    ['a method that is to come', ['{ method: grid }', '{ method: genetic, designs: 100 }']],
     ['a word for the driven axle', ['driven: front', 'driven: fore']],
     ['three ratios', ['ratio: 9.5', 'ratios: [12, 9, 6]']],
   ])('flags %s', (_, edit) => {

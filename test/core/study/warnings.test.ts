@@ -296,6 +296,22 @@ const cases: readonly Case[] = [
     nearMiss: edited(calm, ['maximise: []', 'maximise: [climb.grade]']),
   },
   {
+    rule: 'repeated designs',
+    case: 'more designs than combinations',
+    text: edited(calm, ['{ method: grid }', '{ method: sobol, designs: 4161 }']),
+    path: 'search.designs',
+    says: '4161 designs drawn from 4160 combinations',
+    nearMiss: edited(calm, ['{ method: grid }', '{ method: sobol, designs: 4160 }']),
+  },
+  {
+    rule: 'repeated designs',
+    case: 'more designs than combinations beside one without end',
+    text: edited(calm, ['{ method: grid }', '{ method: random, designs: 100000 }']),
+    path: 'search.designs',
+    says: '100 000 designs drawn from 4160 combinations',
+    nearMiss: edited(calm, ['to: 12.25, steps: 20', 'to: 12.25'], ['{ method: grid }', '{ method: random, designs: 100000 }']),
+  },
+  {
     rule: 'discharge limit',
     case: 'more power than the pack has',
     text: edited(calm, ['discharge: 160 kW', 'discharge: 600 kW']),
