@@ -174,10 +174,36 @@ function unknownKey(key: string, at: number, value: Located, place: Place, readi
   if (near !== null) reading.found.tried.add(`${reading.prefix}${place.path === '' ? '' : `${place.path}.`}${near}`);
   const inside = reading.prefix + place.path;
   const path = inside === '' || inside.endsWith('.') ? inside + key : `${inside}.${key}`;
-  const hint = isCutOff({ key, value }) ? CUT_OFF_HINT : (reading.explain?.(key) ?? (near !== null ? `Did you mean ${near}?` : elsewhere(key, path)));
+  const hint =
+    slipOf(key, value) ?? reading.explain?.(key) ?? (near !== null ? `Did you mean ${near}?` : (otherNames[key.toLowerCase()] ?? elsewhere(key, path)));
   const where = inside === '' ? 'a section or entry of a study' : `an entry of ${inside.replace(/\.$/u, '')}`;
   reading.issues.error(at, path, { expected: `${where}: ${names.join(', ')}`, found: clip(key), hint });
 }
+
+/** A key that is none because a sign is missing or too many; null for a name. */
+function slipOf(key: string, value: Located): string | null {
+  if (isCutOff({ key, value })) return CUT_OFF_HINT;
+  const name = /^(\S+)\s*\{/u.exec(key)?.[1];
+  return name === undefined ? null : `A colon is missing: write "${clip(name)}: { … }".`;
+}
+
+const DRAG = 'Write dragArea under vehicle: drag coefficient times frontal area.';
+const LADEN = 'Write laden: the mass of vehicle and load together.';
+/** What people in the trade call things that have another name here, in small letters. */
+const otherNames: Readonly<Record<string, string>> = {
+  cd: DRAG,
+  cw: DRAG,
+  cx: DRAG,
+  cda: DRAG,
+  dragcoefficient: DRAG,
+  frontalarea: DRAG,
+  crr: 'Write rolling: { c0: … } under vehicle.',
+  rollingresistance: 'Write rolling: { c0: … } under vehicle.',
+  gvw: LADEN,
+  gvm: LADEN,
+  grossmass: LADEN,
+  grossweight: LADEN,
+};
 
 /** What to do about a number that a comma cut in two. */
 export const CUT_OFF_HINT = 'Inside { } a comma starts the next entry: numbers go without commas.';

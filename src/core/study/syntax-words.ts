@@ -86,6 +86,8 @@ function strayDash({ text, at }: Place): SyntaxWords {
 
 /** A colon too many on one line, or a line that is indented below one that holds a value already. */
 function nested({ text, at, line }: Place): SyntaxWords {
+  const name = /^\s*([^\s:{]+)\s*\{/u.exec(line)?.[1];
+  if (name !== undefined) return { at, found: 'a brace right after a name', hint: `A colon is missing: write "${name}: { … }".` };
   const colons = line.replace(/\s#.*$/u, '').match(/:(?=\s)/gu)?.length ?? 0;
   if (colons > 1)
     return { at, found: 'a second colon on the line', hint: 'Put one "name: value" on each line; a text with a colon and a space in it goes in quotes.' };

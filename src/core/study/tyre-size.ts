@@ -4,11 +4,11 @@ import type { IssueList } from './issue.ts';
 import type { Found } from './read-places.ts';
 
 const INCH_M = 0.0254;
-const RADIAL = /^(?:P|LT)?\s*(\d{3})\s*\/\s*(\d{2,3})\s*(?:ZR|R)\s*(\d{2}(?:\.5)?)\s*C?$/iu;
+const RADIAL = /^(?:P|LT)?\s*(\d{3})\s*\/\s*(\d{2,3})\s*(?:ZR|R)\s*(\d{2}(?:\.5)?)\s*C?(?:\s+\d{2,3}(?:\/\d{2,3})?\s?[A-Z]{1,2})?$/iu;
 
 /**
- * Rolling radius of a radial tyre such as `215/65 R16` (width mm / aspect % R rim inch), in m; null where the text
- * is no such size.
+ * Rolling radius of a radial tyre such as `215/65 R16` (width mm / aspect % R rim inch; load index and speed symbol may follow),
+ * in m; null where the text is no such size.
  */
 export function rollingRadiusM(size: string): number | null {
   const parts = RADIAL.exec(size.trim());

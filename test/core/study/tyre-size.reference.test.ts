@@ -9,7 +9,18 @@ describe('a tyre size', () => {
     expect(Math.abs(circumference - 1609.344 / 837)).toBeLessThan(0.003 * circumference);
   });
 
-  it.each(['215/65 R16', '215/65R16', '215/65 r16', ' 215 / 65 R 16 ', '215/65 R16C', '215/65 ZR16', 'P215/65 R16', 'LT215/65 R16'])('%j is read', (size) => {
+  it.each([
+    '215/65 R16',
+    '215/65R16',
+    '215/65 r16',
+    ' 215 / 65 R 16 ',
+    '215/65 R16C',
+    '215/65 ZR16',
+    'P215/65 R16',
+    'LT215/65 R16',
+    '215/65R16 98H',
+    '215/65 R16 C 109/107 T',
+  ])('%j is read', (size) => {
     expect(rollingRadiusM(size)).toBeCloseTo((3.05 * (0.4064 + 2 * 0.215 * 0.65)) / (2 * Math.PI), 12);
   });
 
