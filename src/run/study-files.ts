@@ -6,6 +6,7 @@ import type { StudySources } from '../core/study/check-study.ts';
 import { builtInCycleNames, builtInCycleText } from './built-in-cycles.ts';
 import { systemReason } from './run-problem.ts';
 
+const SAVE = 'save it in that encoding, or check that this is the right file';
 /** Larger studies are none: a study is written by people. */
 const mostStudyBytes = 1_000_000;
 /** A day at ten points a second is about 15 MB. */
@@ -65,8 +66,8 @@ function readText(path: string, mostBytes: number): FileText {
 function decode(path: string): FileText {
   try {
     const text = new TextDecoder('utf-8', { fatal: true, ignoreBOM: true }).decode(readFileSync(path));
-    return text.includes('\0') ? { problem: 'it is not a text file' } : { text };
+    return text.includes('\0') ? { problem: `it is not a text file in UTF-8; ${SAVE}` } : { text };
   } catch (error) {
-    return { problem: error instanceof TypeError ? 'it is not a text file in UTF-8' : systemReason(error) };
+    return { problem: error instanceof TypeError ? `it is not a text file in UTF-8; ${SAVE}` : systemReason(error) };
   }
 }

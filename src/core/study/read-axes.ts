@@ -5,7 +5,7 @@ import { asWritten } from './check-rules.ts';
 import { clip, type IssueList } from './issue.ts';
 import type { Located, LocatedEntry, LocatedMap } from './located-text.ts';
 import { findParameter, type ParameterRow } from './parameters.ts';
-import { type Figure, readFigure } from './read-places.ts';
+import { CUT_OFF_HINT, type Figure, isCutOff, readFigure } from './read-places.ts';
 import { orders, ruledOutBy } from './rules.ts';
 import type { Axis, Search } from './study.ts';
 
@@ -134,7 +134,8 @@ function noReference(name: string, row: ParameterRow | undefined, value: Located
     const found = `${name}, which plays no part beside ${other.by} on line ${issues.lineOf(stands.get(other.by) ?? 0)}`;
     return { expected, found, hint: `Vary ${other.by}, or state ${name} instead: ${other.alternative.why}.` };
   }
-  const near = issues.full ? null : issues.nearest(name, Object.keys(values));
+  const names = Object.keys(values);
+  const near = issues.full ? null : (issues.nearest(name, names) ?? names.find((each) => each.endsWith(`.${name}`)) ?? null);
   const known = row !== undefined && !name.startsWith('trials.');
   if (known)
     return {
@@ -157,10 +158,12 @@ function readAxisMap(name: string, row: ParameterRow, map: LocatedMap, context: 
   const { issues } = context;
   const path = `vary.${name}`;
   const entry = (key: string) => map.entries.find((candidate) => candidate.key === key);
-  for (const { key, at } of map.entries) {
+  for (const each of map.entries) {
+    const { key, at } = each;
     if (KEYS.includes(key)) continue;
     const near = issues.nearest(key, KEYS);
-    issues.error(at, `${path}.${key}`, { expected: KEYS.join(', '), found: clip(key), hint: near === null ? 'Remove it.' : `Did you mean ${near}?` });
+    const named = near === null ? 'Write a range as "{ from: …, to: …, steps: … }", a list as "{ oneOf: [ …, … ] }".' : `Did you mean ${near}?`;
+    issues.error(at, `${path}.${key}`, { expected: KEYS.join(', '), found: clip(key), hint: isCutOff(each) ? CUT_OFF_HINT : named });
     return null;
   }
   const list = entry('oneOf');

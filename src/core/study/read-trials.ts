@@ -115,7 +115,7 @@ function kindOf(map: LocatedMap, path: string, issues: IssueList): TrialKind | n
   const text = entry?.value.kind === 'text' ? entry.value.text : undefined;
   if (text !== undefined && Object.hasOwn(trialKinds, text)) return text as TrialKind;
   const near = text === undefined ? null : issues.nearest(text, kinds);
-  const hint = near === null ? 'Say what the trial does.' : `Did you mean ${near}?`;
+  const hint = near === null ? 'Write what the trial is, such as "kind: acceleration".' : `Did you mean ${near}?`;
   issues.error(entry?.value.at ?? map.at, `${path}.kind`, { expected: `a kind: ${kinds.join(', ')}`, found: clip(text ?? 'no kind'), hint });
   return null;
 }

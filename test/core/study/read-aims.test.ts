@@ -17,6 +17,9 @@ describe('a limit, objective or section written another way', () => {
     ['a metric of another kind of trial', ['sprint.time:', 'climb.time:'], 'climb gives payload, grade; there is sprint.time, overtake.time'],
     ['a metric without its owner', [OBJECTIVES, '[stops.batteryEnergy, cost]'], 'Did you mean driveUnit.cost or battery.cost?'],
     ['no colon before the braces of a section', ['  continuous: {', '  continuous {'], 'write "continuous: { … }"'],
+    ['a range with min and max', ['{ from: 7.5, to: 12.25, steps: 20 }', '{ min: 7.5, max: 12.25, steps: 20 }'], '{ from: …, to: …, steps: … }'],
+    ['a decimal comma in a step', ['{ from: 7.5, to: 12.25, steps: 20 }', '{ from: 7.5, to: 12.25, step: 0,25 }'], 'numbers go without commas'],
+    ['a varied number without its section', ['gearing.ratio:    {', 'ratio:    {'], 'Did you mean gearing.ratio?'],
     ['a drag coefficient on its own', ['  auxiliaries: 420 W', '  auxiliaries: 420 W\n  cd: 0.31'], 'drag coefficient times frontal area'],
   ])('as %s is told once what to write', (_, edit, part) => {
     const answer = complaint(edited(harbour, edit));
