@@ -12,7 +12,7 @@ export const peakLastsS = 30;
 
 /** Designs in the sample, at most and at least. */
 const mostDesigns = 1_000;
-const leastDesigns = 16;
+const leastDesigns = 4;
 /** Work that the sample may cost in all, in steps of cycles: about half a second. A fixed count, not a clock, so that every run looks at the same designs. */
 const mostSteps = 4_000_000;
 /** What one trial without a trace costs, in steps of a cycle. */

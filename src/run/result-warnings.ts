@@ -3,7 +3,7 @@
  * each names the place and the reason, once. What the study alone told before is not told again.
  */
 import { givenText, withCurrency } from '../charts/figure-words.ts';
-import { axisPath } from '../core/study/design-corners.ts';
+import { axisPath, endReach } from '../core/study/design-corners.ts';
 import { type Issue, IssueList } from '../core/study/issue.ts';
 import { metricColumns } from '../core/study/metric-columns.ts';
 import type { MetricRow } from '../core/study/metrics.ts';
@@ -113,7 +113,8 @@ function seeBattery({ study, sample }: Context): Sight[] {
   if (sample.designs < 2) return [];
   const limited = sample.trials.filter(({ designs, byBattery }) => byBattery > designs / 2).sort((a, b) => b.byBattery / b.designs - a.byBattery / a.designs);
   if (limited.length === 0) return [];
-  const where = limited.map(({ trial, designs, byBattery }, k) => `${shareText(byBattery / designs)} ${k === 0 ? 'of the designs ' : ''}${placeIn(trial)}`);
+  const ofDesigns = sample.whole ? 'of the designs' : `of a sample of ${count(sample.designs)} designs`;
+  const where = limited.map(({ trial, designs, byBattery }, k) => `${shareText(byBattery / designs)} ${k === 0 ? `${ofDesigns} ` : ''}${placeIn(trial)}`);
   const path = ['battery.discharge', 'battery.resistance'].find((name) => study.values[name] !== undefined) ?? 'battery';
   return [
     {
@@ -135,7 +136,9 @@ function seeLongPulls({ study, sample }: Context): Sight[] {
     .filter(({ longerThanPeak }) => longerThanPeak > 0)
     .map(({ trial, designs, longerThanPeak, longestS }) => {
       const which =
-        sample.designs === 1 ? '' : ` in ${shareText(longerThanPeak / designs)} of the designs${sample.passing > 0 ? ' that meet every requirement' : ''}`;
+        sample.designs === 1
+          ? ''
+          : ` in ${shareText(longerThanPeak / designs)} of the ${sample.whole ? '' : 'sampled '}designs${sample.passing > 0 ? ' that meet every requirement' : ''}`;
       return {
         path: `trials.${trial.name}`,
         found: `full pedal at peak rating for more than ${peakLastsS} s${which}, up to ${shown(longestS, 'time', 0, study)}`,
@@ -156,13 +159,11 @@ function seeEdges({ study, proposals, told }: Context): Sight[] {
     )
       return [];
     const row = findParameter(axis.name) as ParameterRow;
-    const { from, to, stepped } = axis.range;
-    // Drawn from a whole range, hardly a design lies on its very end.
-    const near = stepped ? 0 : 0.01 * (to - from);
+    const near = endReach(axis.range);
     const ends = endsOf(axis.range, row).flatMap(({ word, value }) => {
       const there = proposals.filter(({ inputOf }) => Math.abs(inputOf(axis.name) - value) <= near);
       if (there.length === 0) return [];
-      const where = `${stepped ? '' : 'less than 1 % of the range from '}${givenText(value, row, study)}, the ${word} searched`;
+      const where = `${near === 0 ? '' : 'less than 1 % of the range from '}${givenText(value, row, study)}, the ${word} searched`;
       return [`${where}, in the design${there.length === 1 ? '' : 's'} put forward as ${ruleWords(there)}`];
     });
     return ends.length === 0

@@ -24,7 +24,7 @@ export function cornersOf(study: Pick<Study, 'axes' | 'values'>, matters: (name:
     .filter(({ sets }) => sets.some(matters))
     .reduce<DesignValues[]>(
       (corners, axis) => {
-        const ends = axis.labels === null && axis.sets.length === 1 ? endsOf(axis) : axis.points;
+        const ends = endsOf(axis);
         if (corners.length * ends.length > MOST_CORNERS) return corners;
         return corners.flatMap((values) => ends.map((point) => valuesAt(values, axis, point)));
       },
@@ -32,7 +32,9 @@ export function cornersOf(study: Pick<Study, 'axes' | 'values'>, matters: (name:
     );
 }
 
-function endsOf({ points }: Axis): (readonly number[])[] {
+/** The points of an axis that hold its extremes: lowest and highest of a number under `vary`, all of pairs and options. */
+export function endsOf({ points, labels, sets }: Axis): readonly (readonly number[])[] {
+  if (labels !== null || sets.length > 1) return points;
   const rising = [...points].sort((a, b) => (a[0] as number) - (b[0] as number));
   return [rising[0] as readonly number[], rising.at(-1) as readonly number[]];
 }
@@ -47,4 +49,12 @@ export function extentOf(figures: readonly number[]): { readonly low: number; re
 /** Where an axis stands in the file: `vary.gearing.ratio`, `options.motor on offer`. */
 export function axisPath({ name, labels }: Axis): string {
   return `${labels === null ? 'vary' : 'options'}.${name}`;
+}
+
+/**
+ * How near to an end of a range, SI, a design counts as lying there: at the end itself where that is a point; within 1 % of the
+ * range where any value is drawn, since hardly a design lies on the very end.
+ */
+export function endReach({ from, to, stepped }: NonNullable<Axis['range']>): number {
+  return stepped ? 0 : 0.01 * (to - from);
 }

@@ -67,19 +67,20 @@ export function seeMassFactor({ study, found }: WarningContext): Sight[] {
 
 /** A laden mass below what the vehicle itself weighs, in some design or in all. */
 export function seeTooHeavy({ study, trials }: WarningContext): Sight[] {
+  const corners = cornersOf(study, (name) => MASSES.test(name));
+  const massOf = (replaced: DesignValues) => extentOf(corners.map((values) => vehicleMassKg({ ...values, ...replaced })));
+  const ownMass = massOf({});
   return trials.flatMap(({ name, with: replaced }) => {
-    const ladenName = `trials.${name}.laden`;
-    const own = [...replaced].map(([key, { value }]) => [key, value] as const);
-    const designs = cornersOf(study, (key) => MASSES.test(key) || key === ladenName).map((values) => ({ ...values, ...Object.fromEntries(own) }));
-    const short = designs.filter((values) => (values[ladenName] ?? Number.NaN) < vehicleMassKg(values));
-    const extent = extentOf(short.map(vehicleMassKg));
-    if (extent === null) return [];
-    const which = short.length === designs.length ? 'every design' : 'some designs';
-    const laden = shown(short[0]?.[ladenName] as number, 'mass', 0, study);
+    const path = `trials.${name}.laden`;
+    const laden = extentOf(cornersOf(study, (key) => key === path).map((values) => values[path] ?? Number.NaN));
+    const own = Object.fromEntries([...replaced].flatMap(([key, { value }]) => (MASSES.test(key) ? [[key, value] as const] : [])));
+    const mass = Object.keys(own).length === 0 ? ownMass : massOf(own);
+    if (laden === null || mass === null || laden.low >= mass.high) return [];
+    const which = laden.high < mass.low ? 'every design' : 'some designs';
     return [
       {
-        path: ladenName,
-        found: `${laden} laden, below the mass of the vehicle in ${which}, up to ${shown(extent.high, 'mass', 0, study)}`,
+        path,
+        found: `${shown(laden.low, 'mass', 0, study)} laden, below the mass of the vehicle in ${which}, up to ${shown(mass.high, 'mass', 0, study)}`,
         hint: 'The trial then has no metrics (too heavy); raise the laden mass or check the masses.',
       },
     ];

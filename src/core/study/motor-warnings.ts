@@ -4,7 +4,7 @@ import { curveMaxSpeedRadPerS } from '../vehicle/full-load-curve.ts';
 import type { LossMap } from '../vehicle/loss-map.ts';
 import { motorLossW, peakTorqueLimitNm } from '../vehicle/motor.ts';
 import type { Motor } from '../vehicle/vehicle.ts';
-import { axisPath, cornersOf, type DesignValues, extentOf, valuesAt } from './design-corners.ts';
+import { axisPath, cornersOf, type DesignValues, endsOf, extentOf, valuesAt } from './design-corners.ts';
 import type { Axis, SpeedTrace, Study } from './study.ts';
 import { beside, type Sight, shown, someOf, type WarningContext } from './warning-row.ts';
 
@@ -24,13 +24,20 @@ function reachMPerS(study: Study, values: DesignValues): number {
   return (maxSpeedRadPerS(study, values) * (values['vehicle.wheelRadius'] as number)) / ratio;
 }
 
-/** A speed that a trial asks for, and the points of the ratio's axis (one, where it does not vary) at which no motor of the study allows it. */
+/** A speed that a trial asks for, and where on the axis of the ratio no motor of the study allows it. */
 interface SpeedShortfall {
   readonly wantedMPerS: number;
   readonly axis: Axis | undefined;
+  /** Of a range or list of ratios only the lowest and the highest: between them the highest speed falls. */
+  readonly points: readonly (readonly number[])[];
+  /** Highest speed at each of the points; one where the ratio does not vary. */
   readonly reachesMPerS: readonly number[];
+  /** Indices of those where it does not suffice. */
   readonly short: readonly number[];
 }
+
+/** Beyond so many motors at so many ratios nothing is said. */
+const MOST_REACHES = 50_000;
 
 function speedShortfall(study: Study, { name, kind, trace, with: replaced }: Study['trials'][number]): SpeedShortfall | null {
   const wantedMPerS = speedWanted(study, name, kind, trace);
@@ -38,12 +45,15 @@ function speedShortfall(study: Study, { name, kind, trace, with: replaced }: Stu
   const axis = RATIOS.filter((ratio) => replaced[ratio] === undefined)
     .map((ratio) => study.axes.find(({ sets }) => sets.includes(ratio)))
     .find((each) => each !== undefined);
-  const others = cornersOf({ ...study, axes: study.axes.filter((each) => each !== axis) }, (each) => REACH.includes(each));
+  const own = Object.fromEntries(REACH.flatMap((key) => (study.values[key] === undefined ? [] : [[key, study.values[key]]])));
+  const others = cornersOf({ values: own, axes: study.axes.filter((each) => each !== axis) }, (each) => REACH.includes(each));
+  const points = axis === undefined ? [] : endsOf(axis);
+  if (others.length * points.length > MOST_REACHES) return null;
   const best = (at: (values: DesignValues) => DesignValues) =>
     others.reduce((most, values) => Math.max(most, reachMPerS(study, { ...at(values), ...replaced })), 0);
-  const reachesMPerS = axis === undefined ? [best((values) => values)] : axis.points.map((point) => best((values) => valuesAt(values, axis, point)));
+  const reachesMPerS = axis === undefined ? [best((values) => values)] : points.map((point) => best((values) => valuesAt(values, axis, point)));
   const short = reachesMPerS.flatMap((reach, index) => (reach < wantedMPerS * (1 - 1e-12) ? [index] : []));
-  return { wantedMPerS, axis, reachesMPerS, short };
+  return { wantedMPerS, axis, points, reachesMPerS, short };
 }
 
 /** Does a trial ask for more speed than any design has? */
@@ -69,13 +79,13 @@ export function seeMotorSpeed({ study }: WarningContext): Sight[] {
 }
 
 /** Where on an axis the speed does not suffice. */
-function partOf({ wantedMPerS, axis, reachesMPerS, short }: SpeedShortfall, study: Study): string {
+function partOf({ wantedMPerS, axis, points, reachesMPerS, short }: SpeedShortfall, study: Study): string {
   if (axis === undefined) return 'the ratio of the study';
+  if (short.length === points.length) return `every ${axis.name}`;
   if (axis.labels !== null) return `${someOf(short.map((index) => axis.labels?.[index] as string))} of ${axis.name}`;
-  if (short.length === axis.points.length) return `every ${axis.name}`;
-  if (axis.sets.length > 1) return `${short.length} of the ${axis.points.length} values of ${axis.name}`;
-  const first = short[0] as number;
-  const most = ((axis.points[first]?.[0] as number) * (reachesMPerS[first] as number)) / wantedMPerS;
+  if (axis.sets.length > 1) return `${short.length} of the ${points.length} values of ${axis.name}`;
+  const last = points.length - 1;
+  const most = ((points[last]?.[0] as number) * (reachesMPerS[last] as number)) / wantedMPerS;
   return `${axis.name} above ${shown(most, 'number', 2, study)}`;
 }
 
