@@ -2,6 +2,7 @@
 import { givenText } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
+import { searchWords } from '../core/study/search-methods.ts';
 import type { Axis, Study } from '../core/study/study.ts';
 import { boundWords } from '../page/wording.ts';
 import type { RunEstimate } from '../run/estimate-run.ts';
@@ -22,7 +23,7 @@ export function checkText({ opened, outlook, warnings }: Extract<CheckedStudy, {
     block('Trials', trialLines(study)),
     'needs' in outlook
       ? `A run needs ${outlook.needs.expected}; this is ${outlook.needs.found}. ${outlook.needs.hint}`
-      : [block('Varied', axisLines(study)), costLine(outlook.estimate), block(sampleTitle(outlook.estimate), sampleLines(outlook.estimate, study))]
+      : [block('Varied', axisLines(study)), costLine(outlook.estimate, study), block(sampleTitle(outlook.estimate), sampleLines(outlook.estimate, study))]
           .filter((part) => part !== '')
           .join('\n\n'),
     block(
@@ -42,11 +43,12 @@ function trialLines(study: Study): string[] {
 }
 
 function axisLines(study: Study): string[] {
-  return lines(study.axes.map((axis) => [visibleText(axis.name), countOf(axis.points.length, pointNoun(axis)), axisText(axis, study)]));
+  return lines(study.axes.map((axis) => [visibleText(axis.name), pointWords(axis), axisText(axis, study)]));
 }
 
-function pointNoun({ sets, labels }: Axis): string {
-  return labels !== null ? 'option' : sets.length > 1 ? 'pair' : 'value';
+function pointWords({ sets, points, labels, range }: Axis): string {
+  if (range?.stepped === false) return 'any value';
+  return countOf(points.length, labels !== null ? 'option' : sets.length > 1 ? 'pair' : 'value');
 }
 
 function axisText({ sets, points, labels, range }: Axis, study: Study): string {
@@ -56,9 +58,9 @@ function axisText({ sets, points, labels, range }: Axis, study: Study): string {
   return words.length <= 6 ? words.join(', ') : `${words.slice(0, 4).join(', ')}, … ${words.at(-1)}`;
 }
 
-function costLine({ designs, seconds, workers, bytes, sampled }: RunEstimate): string {
+function costLine({ designs, seconds, workers, bytes, sampled }: RunEstimate, { search }: Study): string {
   const time = `about ${durationText(seconds)} with ${countOf(workers, 'worker')}`;
-  return `A run evaluates ${ink('bold', countOf(designs, 'design'))}: ${time}, about ${sizeText(bytes)} of results (measured on ${countOf(sampled, 'design')}).`;
+  return `A run evaluates ${ink('bold', countOf(designs, 'design'))}, ${searchWords(search)}: ${time}, about ${sizeText(bytes)} of results (measured on ${countOf(sampled, 'design')}).`;
 }
 
 function sampleTitle({ sampled, designs, feasible }: RunEstimate): string {

@@ -45,7 +45,9 @@ export function checkJson(checked: CheckedStudy): object {
     valid: true,
     warnings: warnings.map(issueRecord),
     trials: study.trials.map(({ name, kind, rating }) => ({ name, kind, rating })),
-    varied: study.axes.map(({ name, points }) => ({ name, values: points.length })),
+    // A range that is drawn from as a whole has no count of values.
+    varied: study.axes.map(({ name, points, range }) => ({ name, values: range?.stepped === false ? null : points.length })),
+    search: study.search,
     run: 'needs' in outlook ? { possible: false, ...outlook.needs } : { possible: true, ...estimateJson(outlook.estimate, study) },
   };
 }

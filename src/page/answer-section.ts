@@ -4,6 +4,7 @@ import type { ReportData, ReportDesign } from '../charts/report-data.ts';
 import { proposalLetter } from '../charts/trade-off-view.ts';
 import { axisOf, type ResultColumn } from '../core/evaluate/result-columns.ts';
 import { cautionLine } from '../core/study/cautions.ts';
+import { endReach } from '../core/study/design-corners.ts';
 import type { Axis, Objective } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { type Candidate, candidatesOf } from './candidates.ts';
@@ -86,12 +87,14 @@ function inputRows(design: ReportDesign, data: ReportData): Piece[] {
   });
 }
 
-/** Says that an input is the last that was tried, so that something better may lie beyond. */
+/** Says that an input is the last that was tried, or next to it, so that something better may lie beyond. */
 function edgeWords(value: number | null, axis: Axis | undefined): string {
   if (value === null || axis === undefined || axis.labels !== null || axis.sets.length > 1 || axis.points.length < 2) return '';
   const tried = axis.points.map((point) => point[0] as number);
-  if (value === Math.min(...tried)) return 'lowest tried';
-  return value === Math.max(...tried) ? 'highest tried' : '';
+  const reach = axis.range === null ? 0 : endReach(axis.range);
+  const words = reach > 0 ? 'next to the ' : '';
+  if (value <= Math.min(...tried) + reach) return `${words}lowest tried`;
+  return value >= Math.max(...tried) - reach ? `${words}highest tried` : '';
 }
 
 function objectiveRow(objective: Objective, candidate: Candidate, all: readonly Candidate[], data: ReportData): Markup {

@@ -3,6 +3,7 @@ import { givenText, ownFigures } from '../charts/figure-words.ts';
 import type { ReportData } from '../charts/report-data.ts';
 import { cautions, leftOut } from '../core/study/cautions.ts';
 import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
+import { searchWords } from '../core/study/search-methods.ts';
 import type { Axis, Study, Trial } from '../core/study/study.ts';
 import { trialKindRow } from '../core/study/trial-kinds.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
@@ -57,7 +58,7 @@ function runWords({ study, provenance, counts }: ReportData): Markup {
   const { version, node, started, seconds, digests } = provenance;
   const traces = [...new Map(study.trials.flatMap(({ trace }) => (trace === null ? [] : [[trace.name, trace] as const]))).values()];
   return html`<dl class="run">
-<div><dt>Designs</dt><dd>${formatFigure(counts.designs, 0)}, chosen by ${study.search.method}</dd></div>
+<div><dt>Designs</dt><dd>${formatFigure(counts.designs, 0)}: ${searchWords(study.search)}</dd></div>
 <div><dt>Computed</dt><dd>${started}, in ${formatFigure(seconds, 1)} s</dd></div>
 <div><dt>Versions</dt><dd>layshaft ${version}, Node ${node}</dd></div>
 ${traces.map(({ name, timesS, notes }) => html`<div><dt>Speed trace ${name}</dt><dd>${formatFigure((timesS.at(-1) ?? 0) - (timesS[0] ?? 0), 0)} s. ${notes.join(' ')}</dd></div>`)}

@@ -126,7 +126,7 @@ describe('check', () => {
   it('says what a run would do', async () => {
     const { status, stdout, stderr } = await run('check small-van.yaml');
     expect(stderr).toContain('no mistakes');
-    expect(stderr).toMatch(/A run evaluates 35 designs: about .* with \d+ workers?, about .* of results/);
+    expect(stderr).toMatch(/A run evaluates 35 designs, every combination of what varies: about .* with \d+ workers?, about .* of results/);
     expect(plain(stderr)).toMatch(/All 35 designs: 21 \(60 %\) meet every requirement/);
     expect(plain(stderr)).toMatch(/ramp\.grade +at least 20 % +removes 40 %/);
     expect({ status, stdout }).toEqual({ status: 0, stdout: '' });

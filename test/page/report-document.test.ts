@@ -49,6 +49,26 @@ describe('the report without script', () => {
     expect(words(page, '.cards')).toContain('3200 rpm lowest tried');
   });
 
+  it('marks inputs next to the end of a range that any value is drawn from', () => {
+    const cardsWith = (beyond: number) => {
+      const axes = data.study.axes.map((axis) => {
+        if (axis.name !== 'motor.baseSpeed' || axis.range === null) return axis;
+        const { from, to } = axis.range;
+        const range = { from: from - beyond * (to - from), to, stepped: false };
+        return { ...axis, range, points: [[range.from], [to]] };
+      });
+      return words(read({ ...data, study: { ...data.study, axes } }), '.cards');
+    };
+    expect(cardsWith(0.005)).toContain('3200 rpm next to the lowest tried');
+    expect(cardsWith(0.02)).not.toContain('lowest tried');
+  });
+
+  it('tells how the designs were chosen', () => {
+    expect(words(page, '#method + .body')).toContain('Designs1980: every combination of what varies');
+    const drawn = read({ ...data, study: { ...data.study, search: { method: 'sobol', designs: 1980, seed: 7 } } });
+    expect(words(drawn, '#method + .body')).toContain("Designs1980: points of a Sobol' sequence, scrambled with seed 7");
+  });
+
   it('shows the margin of each design to each requirement and never prints a missed one as met', () => {
     const rows = [...page.querySelectorAll('.margins tbody tr')];
     expect(rows).toHaveLength(data.requirements.filter(({ implied }) => !implied).length);
