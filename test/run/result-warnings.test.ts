@@ -90,6 +90,13 @@ const gapsInSprint = (requirements: string) =>
     '[sprint.time, driveUnit.cost]',
   ]);
 
+const drawn = (torques: string) =>
+  edited(
+    calm,
+    ['motor.peakTorque: { oneOf: [140 N·m, 160 N·m, 180 N·m, 200 N·m, 220 N·m] }', torques],
+    ['requirements:', 'search: { method: sobol, designs: 300 }\nrequirements:'],
+  );
+
 const cases: readonly Case[] = [
   {
     rule: 'grip at the start',
@@ -166,6 +173,14 @@ const cases: readonly Case[] = [
       [RATIOS, 'gearing.ratio: { oneOf: [7, 8, 9, 10, 11, 12, 13] }'],
       [TORQUES, 'motor.peakTorque: { from: 100 N·m, to: 220 N·m, steps: 7 }'],
     ),
+  },
+  {
+    rule: 'range edge',
+    case: 'the cheapest design close to the least torque of a range drawn from',
+    text: drawn(`motor.peakTorque: { from: 140 N·m, to: 220 N·m }`),
+    path: 'vary.motor.peakTorque',
+    says: 'less than 1 % of the range from 140 N·m, the lowest searched, in the design',
+    nearMiss: drawn('motor.peakTorque: { from: 100 N·m, to: 220 N·m }'),
   },
   {
     rule: 'idle requirement',
