@@ -31,8 +31,8 @@ const WEIGHTS = [
 ];
 
 /**
- * Largest difference, as a share, between two rules one after the other. The later one has twice the degree, so that its own error is
- * about the square of the difference: 1e-12.
+ * Largest difference, as a share, between two rules one after the other. The later one has twice the degree, so that its own error is about
+ * the square of the difference: 1e-12.
  */
 const AGREEMENT = 1e-6;
 /** The same between the two rules before. */
@@ -49,9 +49,9 @@ let halvingsLeft = MOST;
 
 /**
  * Adds ∫ f dx and ∫ x f dx from `from` to `to` (0 or more, either may be the greater) to `total`. For f of one sign that is smooth on the
- * interval and may have a pole close to it: the interval is halved where 31 points do not settle it. Relative error about 1e-12, and what `noise` makes:
- * values of f are taken to be uncertain by the share noise · |f|, and no more is asked of them. A NaN of f, wherever it is met,
- * makes both NaN at once.
+ * interval and may have a pole close to it: the interval is halved where 31 points do not settle it. Relative error about 1e-12, and what
+ * `noise` makes: values of f are taken to be uncertain by the share noise · |f|, and no more is asked of them. A NaN of f, wherever it is
+ * met, makes both NaN at once.
  */
 export function addMoments(f: RealFunction, from: number, to: number, noise: number, total: Moments): void {
   if (from === to) return;

@@ -87,8 +87,8 @@ function powerWithinBatteryW({ motor, battery, auxiliariesW }: Vehicle): number 
 
 /**
  * The motion when speed has risen or fallen to `toMPerS` between two breaks: t = ∫ m_e dv / (F − R), x = ∫ m_e v dv / (F − R); with `rises`
- * given, also back in time. Where net force is found against it, time and distance are NaN and the speed is the one where it was found. Relative error of what
- * is added about 1e-11, rising with the rounding of F − R where that is small against F: 1e-6 where (F − R)/F is 1e-9.
+ * given, also back in time. Where net force is found against it, time and distance are NaN and the speed is the one where it was found.
+ * Relative error of what is added about 1e-11, rising with the rounding of F − R: 1e-6 where (F − R)/F is 1e-9.
  */
 export function afterSpeedChange(pull: Pull, from: Motion, toMPerS: number, rises = toMPerS > from.speedMPerS): Motion {
   if (toMPerS === from.speedMPerS) return from;

@@ -1,6 +1,5 @@
 /** Top speed at full pedal. */
 import { type RealFunction, signChange, signChanges } from '../numerics/roots.ts';
-import type { Gear } from '../vehicle/gearing.ts';
 import { type TractionLimit, tractionLimit } from '../vehicle/traction.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 import { type PedalConditions, type Pull, pullInGear } from './full-pedal.ts';
@@ -20,27 +19,36 @@ const PIECES = 8;
  */
 export function solveTopSpeed(vehicle: Vehicle, conditions: PedalConditions): TopSpeedResult {
   const lower = pullInGear(vehicle, 0, conditions);
-  const at = (gear: Gear, speedMPerS: number): TopSpeedResult => ({
+  const higher = vehicle.gearing.ratioCount === 1 ? lower : pullInGear(vehicle, 1, conditions);
+  const inLower = (speed: number) => higher === lower || (speed <= lower.topMPerS && lower.netForceN(speed) >= higher.netForceN(speed));
+  const limited = (speedMPerS: number): TopSpeedResult => ({
     speedMPerS,
-    limit: tractionLimit(vehicle, gear, speedMPerS, conditions.rating, conditions.slope),
+    limit: tractionLimit(vehicle, inLower(speedMPerS) ? 0 : 1, speedMPerS, conditions.rating, conditions.slope),
   });
   const falls = netForceFalls(vehicle);
-  if (vehicle.gearing.ratioCount === 1) {
-    if (!(lower.netForceN(0) > 0)) return at(0, 0);
-    const lossMPerS = firstLossMPerS(lower.netForceN, falls ? [0, lower.topMPerS] : stretchEnds([lower], 0, lower.topMPerS));
-    return Number.isNaN(lossMPerS) ? { speedMPerS: lower.topMPerS, limit: 'motor speed' } : at(0, lossMPerS);
+  for (const { pulls, fromMPerS, toMPerS } of rangesOf(lower, higher)) {
+    const netForceN = pulls.length === 1 ? pulls[0].netForceN : (speed: number) => Math.max(pulls[0].netForceN(speed), pulls[1].netForceN(speed));
+    // Above rest: the lower gear ends there, and the higher one does not hold the speed.
+    if (!(netForceN(fromMPerS) > 0)) return fromMPerS === 0 ? limited(0) : { speedMPerS: fromMPerS, limit: 'motor speed' };
+    const lossMPerS = firstLossMPerS(netForceN, falls ? [fromMPerS, toMPerS] : stretchEnds(pulls, fromMPerS, toMPerS));
+    if (!Number.isNaN(lossMPerS)) return limited(lossMPerS);
   }
+  return { speedMPerS: higher.topMPerS, limit: 'motor speed' };
+}
 
-  const higher = pullInGear(vehicle, 1, conditions);
-  const better = (speed: number) => Math.max(lower.netForceN(speed), higher.netForceN(speed));
-  const atBetter = (speed: number) => at(lower.netForceN(speed) >= higher.netForceN(speed) ? 0 : 1, speed);
-  if (!(better(0) > 0)) return atBetter(0);
-  const lossMPerS = firstLossMPerS(better, falls ? [0, lower.topMPerS] : stretchEnds([lower, higher], 0, lower.topMPerS));
-  if (!Number.isNaN(lossMPerS)) return atBetter(lossMPerS);
-  // The lower gear ends here; the higher one may not hold the speed.
-  if (!(higher.netForceN(lower.topMPerS) > 0)) return { speedMPerS: lower.topMPerS, limit: 'motor speed' };
-  const higherLossMPerS = firstLossMPerS(higher.netForceN, falls ? [lower.topMPerS, higher.topMPerS] : stretchEnds([higher], lower.topMPerS, higher.topMPerS));
-  return Number.isNaN(higherLossMPerS) ? { speedMPerS: higher.topMPerS, limit: 'motor speed' } : at(1, higherLossMPerS);
+/** Speeds in which the same gears can be used. */
+interface SpeedRange {
+  pulls: Pull[];
+  fromMPerS: number;
+  toMPerS: number;
+}
+
+function rangesOf(lower: Pull, higher: Pull): SpeedRange[] {
+  if (higher === lower) return [{ pulls: [lower], fromMPerS: 0, toMPerS: lower.topMPerS }];
+  return [
+    { pulls: [lower, higher], fromMPerS: 0, toMPerS: lower.topMPerS },
+    { pulls: [higher], fromMPerS: lower.topMPerS, toMPerS: higher.topMPerS },
+  ];
 }
 
 /**

@@ -15,7 +15,8 @@ interface Solver {
   initialStepSize: number;
   solve(rates: (x: number, y: number[]) => number[], from: number, start: number[], to: number): { y: number[] };
 }
-const odex = createRequire(import.meta.url)('odex') as { Solver: new (size: number) => Solver };
+const require = createRequire(import.meta.url);
+const odex = require('odex') as { Solver: new (size: number) => Solver };
 
 export interface OracleMotion {
   timeS: number;
