@@ -1,7 +1,7 @@
 /** Applies the rules between numbers to what a study states, or to the study that a trial's `with` makes. */
 import { clip, type IssueList } from './issue.ts';
 import type { Figure } from './read-places.ts';
-import { type Alternative, alternatives, groups, matches, nameInFile, needs, orders } from './rules.ts';
+import { type Alternative, alternatives, groups, matches, nameInFile, needs, orders, standing } from './rules.ts';
 
 /** What is stated, by dotted name, and the offset at which each name stands. */
 export interface Stated {
@@ -42,10 +42,10 @@ function concerns({ only }: RuleCheck, names: readonly string[]): boolean {
 /** One message per alternative, where the later of the two ways begins. */
 function checkAlternative({ holds, rulesOut, inFile, why }: Alternative, check: RuleCheck): void {
   const { stated, issues, only, pathOf, option } = check;
-  const under = (patterns: readonly string[]) => [...stated.stands].filter(([name]) => patterns.some((pattern) => matches(pattern, name)));
-  const held = under(holds)[0];
+  const held = standing(holds, stated.stands)[0];
   if (held === undefined) return;
-  const out = under(only === null && option === undefined ? [...rulesOut, ...(inFile ?? [])] : rulesOut).filter(([name]) => concerns(check, [held[0], name]));
+  const ruledOut = only === null && option === undefined ? [...rulesOut, ...(inFile ?? [])] : rulesOut;
+  const out = standing(ruledOut, stated.stands).filter(([name]) => concerns(check, [held[0], name]));
   const first = out[0];
   if (first === undefined) return;
   const names = out.map(([name]) => nameInFile(name));
@@ -109,10 +109,12 @@ function nearestSection(path: string, stated: Stated): number {
   return stated.stands.get(section) ?? nearestSection(section, stated);
 }
 
-function checkOrders(check: RuleCheck): void {
+/** Everything out of order. */
+export function checkOrders(check: RuleCheck): void {
   const { stated, varied } = check;
   for (const order of orders) {
-    for (const less of [...stated.figures.keys()].filter((name) => matches(order.less, name))) {
+    const named = order.less.includes('*') ? [...stated.figures.keys()].filter((name) => matches(order.less, name)) : [order.less];
+    for (const less of named) {
       const more = order.more.replace('trials.*.', /^trials\.[^.]*\./u.exec(less)?.[0] ?? '');
       if (!concerns(check, [less, more]) || varied.has(less) || varied.has(more)) continue;
       checkOrder(order, less, more, check);

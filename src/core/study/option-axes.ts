@@ -1,15 +1,16 @@
 /** Lists of options -> axes of the search: each option makes a study of its own, complete and in order, and its numbers are a point of the axis. */
 import type { FullLoadCurve } from '../vehicle/full-load-curve.ts';
 import type { LossMap } from '../vehicle/loss-map.ts';
-import { checkRules } from './check-rules.ts';
+import { checkOrders, checkRules } from './check-rules.ts';
 import { checkTrialRules } from './check-trial-rules.ts';
 import { clip, type IssueList } from './issue.ts';
-import { replaces, type StudyFound, studyWithOption } from './option-study.ts';
+import { givenUp, replaces, type StudyFound, studyWithOption } from './option-study.ts';
 import { parameters } from './parameters.ts';
 import { lossMapOf, type MotorFiles, readStudyFullLoad, readStudyMap } from './read-measured.ts';
 import type { OptionFound, OptionList } from './read-options.ts';
+import type { TrialFound } from './read-trials.ts';
 import { referenceValues } from './reference-values.ts';
-import { ruledOutBy } from './rules.ts';
+import { matches, orders, ruledOutBy } from './rules.ts';
 import type { Axis, OptionFile } from './study.ts';
 import { checkTyre } from './tyre-size.ts';
 
@@ -47,14 +48,36 @@ interface OptionStudy {
   readonly stated: ReadonlySet<string>;
 }
 
+/** What options that state the same names have in common: most options of a list do. */
+interface Shape {
+  /** Names of the study that give way to them. */
+  readonly gone: ReadonlySet<string>;
+  /** All rules held for the first of them: for the others only the order of their figures is left to look at. */
+  sound: boolean;
+}
+
+/** Shapes by the names that options state, made when first asked for. */
+type Shapes = (stated: readonly string[]) => Shape;
+
+function shapesOf(base: OptionBase): Shapes {
+  const known = new Map<string, Shape>();
+  return (stated) => {
+    const key = stated.join('\n');
+    const shape = known.get(key) ?? { gone: givenUp(base, stated), sound: false };
+    known.set(key, shape);
+    return shape;
+  };
+}
+
 /** Makes an axis of every list, in their order. Mistakes go into the issues of the study, or of the files that options name. */
 export function optionAxes(lists: readonly OptionList[], base: OptionBase): OptionAxes {
   const brought: Brought = { curves: [], maps: [], bestMapEfficiency: 0 };
   const axes = lists.map((list) => {
     const others = lists.filter((other) => other !== list).flatMap(namesOf);
     const varied = new Set([...base.varied, ...others]);
-    const studies = list.options.map((option) => optionStudy(option, `options.${list.name}.${option.name}`, { ...base, varied }, brought));
-    warnOfGaps(list, base);
+    const shapes = shapesOf(base);
+    const studies = list.options.map((option) => optionStudy(option, `options.${list.name}.${option.name}`, { ...base, varied }, shapes, brought));
+    warnOfGaps(list, base, shapes);
     return axisOf(list, studies, base);
   });
   return { axes, ...brought };
@@ -65,20 +88,17 @@ export function namesOf({ options }: OptionList): string[] {
   return [...new Set(options.flatMap(({ found }) => [...found.stands.keys()]))];
 }
 
-function optionStudy({ at, found }: OptionFound, path: string, base: OptionBase, brought: Brought): OptionStudy {
-  const { issues, varied } = base;
+function optionStudy({ at, found }: OptionFound, path: string, base: OptionBase, shapes: Shapes, brought: Brought): OptionStudy {
+  const { issues } = base;
   checkTyre(found, `${path}.vehicle.tyre`, issues);
-  const named = studyWithOption(base, found);
+  const named = studyWithOption(base, found, shapes([...found.stands.keys()]).gone);
   const curve = found.stands.has('motor.fullLoad') ? readStudyFullLoad(named.found, base.files, issues) : null;
   const measured = found.stands.has('motor.map') ? readStudyMap(named.found, base.files, issues) : null;
   // Only the file says what it covers, and so which coefficients give way to it.
   if (measured !== null) found.stands.set(measured.motorAlone ? 'motor.map.motorAlone' : 'motor.map.wholeDrive', measured.at);
-  const own = studyWithOption(base, found);
-  if (base.sound) {
-    const pathOf = (name: string) => (found.stands.has(name) ? `${path}.${name}` : name);
-    checkRules({ stated: own.found, issues, varied, only: null, base: null, pathOf, option: { at, path } });
-    for (const trial of own.trials) checkTrialRules(trial, { base: own.found, varied, issues, pathOf });
-  }
+  const shape = shapes([...found.stands.keys()]);
+  const own = measured === null ? named : studyWithOption(base, found, shape.gone);
+  if (base.sound) checkOption({ at, found }, path, own, base, shape);
   const fullLoad = curve === null ? base.fullLoad : curveAtOption(curve, found, named.found);
   const values = referenceValues({ found: own.found, trials: own.trials, fullLoad });
   if (curve !== null && fullLoad !== null) values['motor.fullLoad'] = brought.curves.push({ file: fileOf(found, 'motor.fullLoad'), data: fullLoad }) - 1;
@@ -87,6 +107,31 @@ function optionStudy({ at, found }: OptionFound, path: string, base: OptionBase,
     brought.bestMapEfficiency = Math.max(brought.bestMapEfficiency, measured.bestEfficiency || 0);
   }
   return { values, stated: statedBy(found) };
+}
+
+function checkOption({ at, found }: Omit<OptionFound, 'name'>, path: string, own: StudyFound, { issues, varied }: OptionBase, shape: Shape): void {
+  const pathOf = (name: string) => (found.stands.has(name) ? `${path}.${name}` : name);
+  const check = { stated: own.found, issues, varied, only: null, base: null, pathOf, option: { at, path } };
+  const trialCheck = { base: own.found, varied, issues, pathOf };
+  if (shape.sound) {
+    checkOrders(check);
+    for (const trial of own.trials) if (hasOrder(trial)) checkTrialRules(trial, trialCheck, true);
+    return;
+  }
+  const before = issues.errorCount;
+  checkRules(check);
+  for (const trial of own.trials) if (meets(trial, found)) checkTrialRules(trial, trialCheck);
+  shape.sound = issues.errorCount === before;
+}
+
+/** Whether a trial's numbers can meet those of an option in a rule: by its `with`, its own numbers set, or its conditions beside the road load. */
+function meets({ name, withStands }: TrialFound, { stands }: OptionFound['found']): boolean {
+  return withStands.size > 0 || [...stands.keys()].some((own) => own.startsWith(`trials.${name}.`) || own.startsWith('vehicle.coastDown.'));
+}
+
+/** Whether a trial has numbers of its own that stand in an order with others. */
+function hasOrder({ with: replaced, found }: TrialFound): boolean {
+  return [...replaced.keys(), ...found.figures.keys()].some((name) => orders.some(({ less, more }) => matches(less, name) || matches(more, name)));
 }
 
 function fileOf({ texts }: OptionFound['found'], name: string): string {
@@ -124,9 +169,9 @@ function axisOf({ name, options }: OptionList, studies: readonly OptionStudy[], 
 }
 
 /** Options are compared: what some state and another leaves to the study may be a slip. An option that states nothing is the study's own. */
-function warnOfGaps({ name, options }: OptionList, { values, issues }: OptionBase): void {
+function warnOfGaps({ name, options }: OptionList, { values, issues }: OptionBase, shapes: Shapes): void {
   const all = new Set(options.flatMap(({ found }) => [...found.stands.keys()].filter(isSetting)));
-  const open = options.map(({ found }) => opennessOf([...found.stands.keys()], Object.keys(values)));
+  const open = options.map(({ found }) => opennessOf([...found.stands.keys()], Object.keys(values), shapes));
   for (const wanted of all) {
     const without = options.filter((_, index) => open[index]?.(wanted));
     const [first] = without;
@@ -144,7 +189,8 @@ function isSetting(name: string): boolean {
 }
 
 /** Whether an option leaves a number to the study: it does not state it, and the number has a part to play beside what it states. */
-function opennessOf(stated: readonly string[], reference: readonly string[]): (wanted: string) => boolean {
-  const kept = reference.filter((name) => !stated.some((own) => replaces(own, name)));
+function opennessOf(stated: readonly string[], reference: readonly string[], shapes: Shapes): (wanted: string) => boolean {
+  const { gone } = shapes(stated);
+  const kept = reference.filter((name) => !gone.has(name));
   return (wanted) => stated.length > 0 && !stated.includes(wanted) && !stated.some((own) => replaces(own, wanted)) && ruledOutBy(wanted, kept) === undefined;
 }

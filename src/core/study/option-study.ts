@@ -10,16 +10,23 @@ export interface StudyFound {
   readonly trials: readonly TrialFound[];
 }
 
-/**
- * The study with an option in it. A number that the option states, and every number of the study that has no part to play beside it
- * (one ratio beside two), gives way; files stay unless the option names its own.
- */
-export function studyWithOption({ found, trials }: StudyFound, option: Found): StudyFound {
-  const names = [...option.stands.keys()];
-  const givesWay = (name: string) => names.some((own) => replaces(own, name));
+/** Names of the study that give way to names that an option states; files stay unless the option names its own. */
+export function givenUp({ found, trials }: StudyFound, stated: readonly string[]): Set<string> {
+  const touched = trials.filter(({ name }) => stated.some((own) => own.startsWith(`trials.${name}.`)));
+  const names = new Set([found, ...touched.map((trial) => trial.found)].flatMap(({ stands, tried, texts }) => [...stands.keys(), ...tried, ...texts.keys()]));
+  return new Set([...names].filter((name) => stated.some((own) => replaces(own, name))));
+}
+
+/** The study with an option in it, where some names give way. */
+export function studyWithOption({ found, trials }: StudyFound, option: Found, gone: ReadonlySet<string>): StudyFound {
+  const givesWay = (name: string) => gone.has(name);
+  const ofTrials = [...option.stands.keys()].filter((name) => name.startsWith('trials.'));
   return {
     found: joined(found, option, givesWay, (name) => !name.startsWith('trials.')),
-    trials: trials.map((trial) => ({ ...trial, found: joined(trial.found, option, givesWay, (name) => name.startsWith(`trials.${trial.name}.`)) })),
+    trials: trials.map((trial) => {
+      const own = (name: string) => name.startsWith(`trials.${trial.name}.`);
+      return ofTrials.some(own) ? { ...trial, found: joined(trial.found, option, givesWay, own) } : trial;
+    }),
   };
 }
 

@@ -33,6 +33,7 @@ export interface OptionsContext {
 const LONGEST_LIST_NAME = 60;
 const MOST_LISTS = 20;
 const MOST_OPTIONS = 500;
+const MOST_IN_ALL = 1000;
 /** Columns of stored results that a list would collide with. */
 const RESERVED = ['number', 'mark', 'feasible'];
 /** Curve and map: named by a file, or a section with the file and what it states. */
@@ -48,13 +49,21 @@ export function readOptions(part: Located, context: OptionsContext): OptionList[
     return [];
   }
   const seen = new Map<string, number>();
-  return part.entries.flatMap((entry) => {
+  const lists = part.entries.flatMap((entry) => {
     const before = issues.errorCount;
     checkListName(entry, seen, issues);
     const options = readList(entry, context);
     if (fileOf(entry.value) === null) checkOptionNames(options, `options.${entry.key}`, issues);
     return issues.errorCount > before ? [] : [{ name: entry.key, at: entry.at, options }];
   });
+  const count = lists.reduce((sum, { options }) => sum + options.length, 0);
+  if (count <= MOST_IN_ALL) return lists;
+  issues.error(part.at, 'options', {
+    expected: `at most ${MOST_IN_ALL} options in all lists`,
+    found: String(count),
+    hint: 'Leave out what is no real alternative.',
+  });
+  return [];
 }
 
 /** A list's name is a column of the results and stands before `=` on the command line; results know no case. */

@@ -136,8 +136,18 @@ export const orders: readonly Order[] = [
 
 /** Whether a name falls under a pattern of these tables. */
 export function matches(pattern: string, name: string): boolean {
-  const anyTrial = pattern.startsWith('trials.*.') ? name.replace(/^trials\.[^.]*\./u, 'trials.*.') : name;
+  const anyTrial = pattern.startsWith('trials.*.') && name.startsWith('trials.') ? `trials.*.${name.slice(name.indexOf('.', 'trials.'.length) + 1)}` : name;
   return pattern.endsWith('.*') ? anyTrial.startsWith(pattern.slice(0, -1)) : anyTrial === pattern;
+}
+
+/** Names among those that stand (with their offsets) that fall under one of some patterns, in the order of the file. */
+export function standing(patterns: readonly string[], stands: ReadonlyMap<string, number>): [name: string, at: number][] {
+  const found = patterns.flatMap((pattern): [string, number][] => {
+    if (pattern.includes('*')) return [...stands].filter(([name]) => matches(pattern, name));
+    const at = stands.get(pattern);
+    return at === undefined ? [] : [[pattern, at]];
+  });
+  return found.sort((a, b) => a[1] - b[1]);
 }
 
 /**

@@ -327,3 +327,30 @@ describe('options that set different numbers', () => {
     expect(warningsOf(withSection(motors), files)).not.toContain('options of one list');
   });
 });
+
+describe('many options', () => {
+  const rows = Array.from({ length: 500 }, (_, k) => `m${k},${200 + k / 10},${3000 + k}`);
+  const table = (count: number) => ['name,motor.peakTorque_Nm,motor.baseSpeed_rpm', ...rows.slice(0, count)].join('\n');
+
+  it('are read up to five hundred in a list', () => {
+    const [axis] = studyOf(withSection('options: { motor on offer: m.csv }\n'), { 'm.csv': table(500) }).axes;
+    expect(axis?.labels).toHaveLength(500);
+    expect(complaint(withSection('options: { motor on offer: m.csv }\n'), { 'm.csv': `${table(500)}\nlast,200,3000` })).toContain('at most 500 options');
+  });
+
+  it('of the same names are each looked at for the order of their figures', () => {
+    const csv = `${table(20)}\nslip a,200,14000\nslip b,200,15000`;
+    const text = complaint(withSection('options: { motor on offer: m.csv }\n'), { 'm.csv': csv });
+    expect(text.match(/error in/gu)).toHaveLength(2);
+    expect(text).toContain('options.motor on offer.slip b.motor.baseSpeed');
+    const capped = edited(still, ['cruise: { kind: top speed,', 'cruise: { kind: top speed, with: { motor.maxSpeed: 4310 rpm },']);
+    const fast = ['name,motor.baseSpeed_rpm', ...Array.from({ length: 20 }, (_, k) => `m${k},${4301 + k}`)].join('\n');
+    expect(complaint(`${capped}options: { motor on offer: m.csv }\n`, { 'm.csv': fast }).match(/error in/gu)).toHaveLength(10);
+  });
+
+  it('that make the same mistake are all told', () => {
+    const set = (name: string) => `    - { name: ${name}, set: { gearing.ratios.1: 11 } }\n`;
+    const text = complaint(withSection(`options:\n  gearbox:\n${set('a')}${set('b')}`));
+    expect(text.match(/without ratios\.2/gu)).toHaveLength(2);
+  });
+});
