@@ -42,7 +42,7 @@ trials:                        # what every design is put through; the names are
   town:     { kind: cycle, cycle: udds, payload: 180 kg }
   gale:     { kind: cycle, cycle: udds, payload: 180 kg, headWind: 8 m/s, with: { vehicle.auxiliaries: 1.4 kW, air.temperature: 2 °C } }
 
-vary:                          # 11 × 10 × 7 = 770 designs
+vary:                          # 11 × 10 × 7 = 770 designs; leave out steps to draw from whole ranges by "search: { method: sobol, designs: 2000 }"
   gearing.ratio:    { from: 6.5, to: 11.5, steps: 11 }
   motor.peakTorque: { from: 90 N·m, to: 180 N·m, steps: 10 }
   motor.baseSpeed:  { from: 3000 rpm, to: 4800 rpm, steps: 7 }

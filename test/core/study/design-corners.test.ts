@@ -1,7 +1,7 @@
 /** Corners hold the extremes that a full enumeration of the designs finds. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { cornersOf, extentOf } from '../../../src/core/study/design-corners.ts';
+import { cornersOf, endReach, extentOf } from '../../../src/core/study/design-corners.ts';
 import { placesInText } from '../../../src/core/study/place-in-text.ts';
 import type { Axis } from '../../../src/core/study/study.ts';
 import { harbour } from './study-from-disk.ts';
@@ -47,6 +47,13 @@ describe('corners of a search', () => {
   it('stay few, whatever varies', () => {
     const axes = Array.from({ length: 40 }, (_, k) => range(`number ${k}`, [1, 2, 3]));
     expect(cornersOf({ values: {}, axes }, () => true)).toHaveLength(8192);
+  });
+});
+
+describe('the end of a range', () => {
+  it('is reached at its very point where it has steps, within a hundredth of the range where any value is drawn', () => {
+    expect(endReach({ from: 100, to: 300, stepped: true })).toBe(0);
+    expect(endReach({ from: 100, to: 300, stepped: false })).toBe(2);
   });
 });
 
