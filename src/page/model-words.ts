@@ -8,6 +8,10 @@ export function modelSentences(study: Study): string[] {
   const adhesion = used('vehicle.axles.adhesion');
   const budget = [...Object.keys(study.values), ...study.axes.flatMap(({ sets }) => sets)].some((name) => name.startsWith('massAndCost.'));
   const cycle = study.trials.some(({ kind }) => kind === 'cycle');
+  const maps = [...(study.lossMap === null ? [] : [study.lossMap]), ...study.optionMaps.map(({ data }) => data)];
+  const drag = ['gearing.dragTorque.fixed', 'gearing.dragTorque.perSpeed'].some(
+    (name) => (study.values[name] ?? 0) > 0 || study.axes.some(({ sets }) => sets.includes(name)),
+  );
   const sentence = (says: boolean, words: string) => (says ? [words] : []);
   return [
     ...sentence(
@@ -35,11 +39,18 @@ export function modelSentences(study: Study): string[] {
       study.lossMap === null,
       'Losses of motor and inverter: iron, winding, field weakening and inverter terms that grow with the size of the motor.',
     ),
+    ...sentence(maps.length > 0, 'Losses of motor and inverter: interpolated from a measured map, scaled with the motor’s peak power.'),
     ...sentence(
-      study.lossMap !== null || study.optionMaps.length > 0,
-      'Losses of motor and inverter: interpolated from a measured map, scaled with the motor’s peak power.',
+      maps.some(({ motoringOnly }) => motoringOnly),
+      'Where a map has motoring figures alone, generating has the losses of motoring at the same torque and speed.',
     ),
-    'Gearing: one efficiency per ratio and a drag torque that rises with speed.',
+    drag
+      ? 'Gearing: one efficiency per ratio and a drag torque that rises with speed.'
+      : 'Gearing: one efficiency per ratio, without a drag torque of its own.',
+    ...sentence(
+      used('gearing.ratios.1'),
+      'Two ratios: at full pedal the shift comes where the higher gear pulls more, or at maximum motor speed, and its time passes without force; on a cycle each step takes the ratio that draws less from the battery.',
+    ),
     `At full pedal the force is the least of what motor, battery${adhesion ? ' and the adhesion of the driven axle, with load transfer,' : ''} allow.`,
     'Times and distances are integrated over speed; top speed, gradeability and hill start are solved for directly.',
     ...(cycle
