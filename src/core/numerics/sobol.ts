@@ -35,7 +35,7 @@ export function sobolWord(directions: Uint32Array, index: number): number {
   if (!(index >= 0 && index <= 0xffffffff)) throw new RangeError(`point ${index} is not one of the 2^32 of a Sobol' sequence`);
   let word = 0;
   let at = 0;
-  for (let gray = index ^ (index >>> 1); gray !== 0; gray >>>= 1, at++) if (gray & 1) word ^= directions[at]!;
+  for (let gray = index ^ (index >>> 1); gray !== 0; gray >>>= 1, at++) word ^= directions[at]! & -(gray & 1);
   return word >>> 0;
 }
 
