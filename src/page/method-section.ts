@@ -76,13 +76,12 @@ function figureList(study: Study): Markup {
   return html`<div class="scroll" tabindex="0" role="region" aria-label="Every figure of the reference design"><table><thead><tr><th scope="col">Name</th><th scope="col" class="figure">Figure</th><th scope="col">What it is</th></tr></thead><tbody>${rows}</tbody></table></div>`;
 }
 
-/** A row for each option; numbers that no option changes are left out, those without a part to play are a dash. */
+/** A row for each option; numbers without a part to play in it are a dash. */
 function optionTable({ name, sets, points, labels }: Axis, study: Study): Markup {
-  const shown = sets.map((set, k) => ({ set, k })).filter(({ set, k }) => points.some((point) => !Number.isNaN(point[k]) && point[k] !== study.values[set]));
-  const heads = shown.map(({ set }) => html`<th scope="col" class="figure">${set}</th>`);
+  const heads = sets.map((set) => html`<th scope="col" class="figure">${set}</th>`);
   const rows = (labels ?? []).map(
     (label, index) =>
-      html`<tr><th scope="row">${label}</th>${shown.map(({ set, k }) => html`<td class="figure">${settingText(set, points[index]?.[k] ?? Number.NaN, study)}</td>`)}</tr>`,
+      html`<tr><th scope="row">${label}</th>${sets.map((set, k) => html`<td class="figure">${settingText(set, points[index]?.[k] ?? Number.NaN, study)}</td>`)}</tr>`,
   );
   return html`<div class="scroll" tabindex="0" role="region" aria-label="${name}: what each option sets"><table class="options"><thead><tr><th scope="col">Option</th>${heads}</tr></thead><tbody>${rows}</tbody></table></div>`;
 }

@@ -1,9 +1,12 @@
 /** Options at the command line: the built program names them in check, run and sheet. */
 import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
+import { pathToFileURL } from 'node:url';
 import { csvParse } from 'd3-dsv';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
+import { openBrowser } from '../browser.ts';
 import { emptyFolder, layshaft } from './built-program.ts';
+import { openReport } from './report-page.ts';
 
 // Each test starts the program anew: slow where the machine is busy.
 vi.setConfig({ testTimeout: 180_000 });
@@ -70,6 +73,25 @@ describe('a study with options', () => {
       gearbox: null,
       'gearing.ratio': 9.5,
     });
+  });
+
+  it('has a report whose page computes each design as sheet does, names options on an axis and says what each sets', async () => {
+    const browser = await openBrowser();
+    const { page, said } = await openReport(browser, pathToFileURL(join(folder.path, 'out', 'offer', 'report.html')).href);
+    for (const number of [0, 1, 4]) {
+      const inPage = await page.evaluate((asked) => window.layshaft.evaluateDesign(asked), number);
+      const { stdout } = await run('sheet', 'offer.yaml', '--design', String(number), '--json');
+      expect(inPage).toStrictEqual(JSON.parse(stdout));
+    }
+    await page.selectOption('#axis-x', { label: 'Motor on offer' });
+    for (const name of ['reference', 'slow-wound', 'fast-wound']) expect(await page.locator('#chart text', { hasText: name }).count()).toBeGreaterThan(0);
+    await page.fill('#design-number', '4');
+    await page.press('#design-number', 'Enter');
+    expect(await page.textContent('#design .inputs')).toMatch(/motor on offer\s*fast-wound.*gearbox\s*two-speed/su);
+    const table = page.locator('details', { hasText: 'gearbox: what each option sets' }).locator('tbody tr');
+    expect((await table.allTextContents()).map((row) => row.replace(/\s+/gu, ' '))).toEqual(['single9.5———', 'two-speed—11.26.40.25 s']);
+    expect(said).toEqual([]);
+    await browser.close();
   });
 
   it('is answered with the nearest name where an option is misspelt, status 2', async () => {
