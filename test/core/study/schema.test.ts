@@ -1,4 +1,5 @@
 /** The schema for editors knows every name of the catalogue, and accepts what the check accepts. */
+import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { parse } from 'yaml';
 import { parameters } from '../../../src/core/study/parameters.ts';
@@ -8,6 +9,8 @@ import { edited, harbour } from './study-from-disk.ts';
 
 type Json = null | boolean | number | string | Json[] | { [key: string]: Json };
 type Schema = { [key: string]: Json };
+
+const worked = new URL('../../../studies/', import.meta.url);
 
 const schema = JSON.parse(JSON.stringify(studyJsonSchema())) as Schema;
 
@@ -81,6 +84,10 @@ describe('the schema of study files', () => {
     expect(answer(starterStudy())).toEqual([]);
     expect(answer(harbour)).toEqual([]);
     expect(answer(edited(harbour, ['ratio: 9.5', 'ratios: [11.2, 6.4]'], ['efficiency: 97 %', 'efficiency: [97 %, 98 %]']))).toEqual([]);
+  });
+
+  it.each(readdirSync(worked).filter((name) => name.endsWith('.yaml')))('accepts the worked study %s', (name) => {
+    expect(answer(readFileSync(new URL(name, worked), 'utf8'))).toEqual([]);
   });
 
   it('accepts searches that draw designs, from whole ranges too', () => {
