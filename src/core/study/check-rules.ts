@@ -66,8 +66,8 @@ function checkGroups(check: RuleCheck): void {
     const there = names.filter((name) => stated.stands.has(name));
     const missing = names.filter((name) => !stated.stands.has(name) && !stated.tried.has(name));
     const toldAlready = check.base !== null && names.some((name) => check.base?.has(name));
-    if (there.length === 0 || missing.length === 0 || toldAlready || !concerns(check, there)) continue;
-    const first = there[0] as string;
+    const first = there[0];
+    if (first === undefined || missing.length === 0 || toldAlready || misspeltSection(first, stated) || !concerns(check, there)) continue;
     const found = `${there.map(last).join(', ')} without ${missing.map(last).join(', ')}`;
     issues.error(stated.stands.get(first) as number, pathOf(first), {
       expected: `${names.map(last).join(', ')} together`,
@@ -85,18 +85,25 @@ function checkNeeds(check: RuleCheck): void {
     if (!asked || names.some((name) => stated.stands.has(name) || stated.tried.has(name))) continue;
     if (only !== null && ![...only].some((name) => name === when || name.startsWith(`${when}.`))) continue;
     const path = names[0] as string;
-    if (tellMissingSection(path, check, told)) continue;
+    if (misspeltSection(path, stated) || tellMissingSection(path, check, told)) continue;
     const place = option ?? { at: nearestSection(path, stated), path };
     issues.error(place.at, place.path, { expected: names.join(' or '), found: names.length > 1 ? 'neither' : 'nothing', hint });
   }
 }
 
+/** A section under another name is told already; what belongs in it is not missing besides. */
+function misspeltSection(path: string, { stands, tried }: Stated): boolean {
+  const section = path.split('.')[0] as string;
+  return !stands.has(section) && tried.has(section);
+}
+
 /** A section that is missing as a whole is told once, instead of everything in it. */
 function tellMissingSection(path: string, { stated, issues }: RuleCheck, told: Set<string>): boolean {
   const section = path.split('.')[0] as string;
-  if (section === path || stated.stands.has(section) || stated.tried.has(section)) return false;
-  const keys = needs.flatMap(({ names, when }) => (when === undefined ? names : [])).filter((name) => name.startsWith(`${section}.`));
-  const hint = `Add ${section}, and indented below it ${[...new Set(keys.map((name) => name.split('.')[1]))].join(', ')}; layshaft new FILE writes a commented example.`;
+  if (section === path || stated.stands.has(section)) return false;
+  const asked = needs.filter(({ names, when }) => when === undefined && names[0]?.startsWith(`${section}.`));
+  const ways = asked.map(({ names }) => [...new Set(names.map((name) => name.split('.')[1]))].join(' or '));
+  const hint = `Add ${section}, and indented below it ${[...new Set(ways)].join(', ')}; layshaft new FILE writes a commented example.`;
   if (!told.has(section)) issues.error(0, section, { expected: `the section ${section}`, found: 'none', hint });
   told.add(section);
   return true;

@@ -227,8 +227,9 @@ export const brokenStudies: readonly BrokenStudy[] = [
   broken(
     'a whole section is missing',
     [[/\ngearing:[\s\S]*?(?=\nbattery:)/u.exec(harbour)?.[0] as string, '']],
-    ['1:1', 'the section gearing', 'ratio, ratios, efficiency'],
+    ['1:1', 'the section gearing', 'ratio or ratios, efficiency'],
   ),
+  broken('a section under another name', [['vehicle:\n', 'vehicles:\n']], ['3:1', 'vehicles', 'Did you mean vehicle?']),
   broken('a colon is missing', [['  auxiliaries: 420 W', '  auxiliaries 420 W']], ['11:3', 'A colon is missing']),
   broken('a comma within braces', [['wheelbase: 3.06 m,', 'wheelbase: 3,06 m,']], ['9:80', '06 m', 'numbers go without commas']),
   broken(
