@@ -2,7 +2,7 @@
 import { writeFile } from 'node:fs/promises';
 import { starterStudy } from '../core/study/starter.ts';
 import { type CommandRow, type ExitStatus, exitStatus } from './command.ts';
-import { complain, say } from './terminal.ts';
+import { complain, say, typed } from './terminal.ts';
 
 /** The row of `new`. */
 export const newCommand: CommandRow = {
@@ -25,7 +25,7 @@ async function writeStarter(file: string): Promise<ExitStatus> {
     complain(`${file} ${reason}`);
     return exitStatus.wrong;
   }
-  say(`Wrote ${file}. Next: layshaft check ${file}`);
+  say(`Wrote ${file}. Next: layshaft check ${typed(file)}`);
   return exitStatus.done;
 }
 

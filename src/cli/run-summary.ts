@@ -9,7 +9,7 @@ import { type Candidate, candidatesOf } from '../page/candidates.ts';
 import { boundWords, easedLimit, meets, metricColumn, valueAgainst } from '../page/wording.ts';
 import { count, countOf, durationText, shareText } from './figure-text.ts';
 import { columns } from './table.ts';
-import { ink } from './terminal.ts';
+import { ink, typed } from './terminal.ts';
 
 /** Designs that stand side by side in the table. */
 const mostAbreast = 7;
@@ -25,7 +25,7 @@ export function runSummary(report: ReportData, folder: string, seconds: number, 
     candidateTable(candidates, report),
     requirementBlock(report),
     warnings.length === 0 ? '' : [ink('bold', 'What to keep an eye on'), ...warnings.map((line) => `  ${line}`)].join('\n'),
-    `Report: ${join(folder, 'report.html')}\nOne design in full: layshaft sheet ${report.studyFile} --design ${candidates[0]?.design.number ?? 0}`,
+    `Report: ${join(folder, 'report.html')}\nOne design in full: layshaft sheet ${typed(report.studyFile)} --design ${candidates[0]?.design.number ?? 0}`,
     cautionLine,
   ];
   return parts.filter((part) => part !== '').join('\n\n');

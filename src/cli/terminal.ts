@@ -54,3 +54,9 @@ export function capped(lines: readonly string[], limit: number, noun: string): s
   if (lines.length <= limit) return [...lines];
   return [...lines.slice(0, limit), `… and ${count(lines.length - limit)} more ${noun}`];
 }
+
+/** A file name as it is typed into a shell: in quotes where it holds a space or a sign that a shell would take for its own. */
+export function typed(path: string): string {
+  if (/^[\p{L}\p{M}\p{N}_./\\:@%+,=-]+$/u.test(path)) return path;
+  return /["$`\\!]/u.test(path) ? `'${path.replaceAll("'", "'\\''")}'` : `"${path}"`;
+}
