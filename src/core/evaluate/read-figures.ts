@@ -135,10 +135,18 @@ export function budgetReader(kind: 'mass' | 'cost', read: ReadCell): (figures: F
     gearingPerExtraRatio: own('gearing.perExtraRatio'),
     batteryPerJ: own('battery.perEnergy'),
   };
-  const keys = Object.keys(cellOf) as (keyof BudgetTerms)[];
-  const terms = { ...cellOf };
   return (figures, { motor, gearing, battery }) => {
-    for (const key of keys) terms[key] = figures[cellOf[key]];
+    // Written out: records of one fixed shape never come into being.
+    const terms: BudgetTerms = {
+      motorFixed: figures[cellOf.motorFixed],
+      motorPerNm: figures[cellOf.motorPerNm],
+      inverterFixed: figures[cellOf.inverterFixed],
+      inverterPerW: figures[cellOf.inverterPerW],
+      gearingFixed: figures[cellOf.gearingFixed],
+      gearingPerNm: figures[cellOf.gearingPerNm],
+      gearingPerExtraRatio: figures[cellOf.gearingPerExtraRatio],
+      batteryPerJ: figures[cellOf.batteryPerJ],
+    };
     return driveBudget(terms, {
       peakTorqueNm: motor.peakTorqueNm,
       peakPowerW: motor.peakPowerW,

@@ -107,8 +107,8 @@ export function runCycle(vehicle: Vehicle, cycle: CompiledCycle, result: CycleRe
 function driveAlongTrace(vehicle: Vehicle, cycle: CompiledCycle): void {
   const { ratioCount } = vehicle.gearing;
   const steps = cycle.durationS.length;
-  writeQuickLaw(vehicle, 0, cycle.laws[0]);
-  if (ratioCount === 2) writeQuickLaw(vehicle, 1, cycle.laws[1]);
+  writeQuickLaw(vehicle, 0, cycle, cycle.laws[0]);
+  if (ratioCount === 2) writeQuickLaw(vehicle, 1, cycle, cycle.laws[1]);
   for (let from = 0; from < steps; from += STEPS_AT_A_TIME) {
     const to = Math.min(from + STEPS_AT_A_TIME, steps);
     driveInGear(vehicle, 0, cycle, from, to, cycle.driven);

@@ -16,10 +16,10 @@ import { writeDemand } from './wheel-demand.ts';
 /** Largest loss of each map met, as written; found once. */
 const largestLossesW = new WeakMap<LossMap, number>();
 
-/** Drives the moving steps `first` up to, not including, `end` in one gear and writes them to `out`; `cycle.laws` hold the design, unless its losses are measured. */
+/** Drives the moving steps `first` up to, not including, `end` in one gear and writes them to `out`; `cycle.laws` hold the design. */
 export function driveInGear(vehicle: Vehicle, gear: Gear, cycle: CompiledCycle, first: number, end: number, out: DrivenSteps): void {
   const { speedMPerS, nearLimit } = cycle;
-  writeDemand(vehicle.road, vehicle.effectiveMassKg[gear], cycle, first, end, out.demandN);
+  writeDemand(cycle.laws[gear], vehicle.road, cycle, first, end, out.demandN);
   out.gear.fill(gear, first, end);
   if (vehicle.motor.lossMap !== null) {
     const freeShaftW = freeShaftPowerW(vehicle, vehicle.motor.lossMap);

@@ -6,6 +6,8 @@ import { interpolateLinear } from '../numerics/interpolation.ts';
 import { dischargeLimitW } from '../vehicle/battery.ts';
 import type { Gear } from '../vehicle/gearing.ts';
 import type { Motor, Vehicle } from '../vehicle/vehicle.ts';
+import type { MovingSteps } from './moving-steps.ts';
+import { calmResistance, type DemandLaw } from './wheel-demand.ts';
 
 /** Below this share of a limit the exact test finds nothing to clip, whatever the rounding. */
 export const CLEAR = 1 - 1e-12;
@@ -15,7 +17,7 @@ export const CLEAR = 1 - 1e-12;
  * (square + squarePerSpeed2 v²) I² + linear I, where I² = T² + f² stands for the current and f = field (1 − base/v), above base speed,
  * for its field-weakening part.
  */
-export interface QuickLaw {
+export interface QuickLaw extends DemandLaw {
   /** Motor speed over vehicle speed. */
   turnsRadPerM: number;
   pullingLeverM: number;
@@ -59,6 +61,8 @@ export interface QuickLaw {
 export function createQuickLaw(): QuickLaw {
   const no = Number.NaN;
   return {
+    effectiveMassKg: no,
+    calm: null,
     turnsRadPerM: no,
     pullingLeverM: no,
     brakingLeverM: no,
@@ -90,10 +94,13 @@ export function createQuickLaw(): QuickLaw {
   };
 }
 
-/** Fills the record for a motor with loss coefficients. */
-export function writeQuickLaw({ motor, gearing, battery, regeneration, wheelRadiusM, auxiliariesW }: Vehicle, gear: Gear, law: QuickLaw): void {
+/** Fills the record for steps of a cycle; of measured losses it knows nothing. */
+export function writeQuickLaw(vehicle: Vehicle, gear: Gear, steps: MovingSteps, law: QuickLaw): void {
+  const { motor, gearing, battery, regeneration, wheelRadiusM, auxiliariesW } = vehicle;
   const turns = gearing.ratios[gear] / wheelRadiusM;
   const efficiency = gearing.efficiencies[gear];
+  law.effectiveMassKg = vehicle.effectiveMassKg[gear];
+  law.calm = calmResistance(vehicle.road, steps);
   law.turnsRadPerM = turns;
   law.pullingLeverM = 1 / (turns * efficiency);
   law.brakingLeverM = efficiency / turns;

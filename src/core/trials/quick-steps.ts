@@ -9,13 +9,12 @@ import type { QuickLaw } from './quick-law.ts';
 import type { CalmResistance } from './wheel-demand.ts';
 
 /**
- * Adds steps on which the motor pulls: they do not slow down, and no term of the resistance is negative. From step `from` on, at most up to
- * `to`; returns the step it stopped at. `clearW` is the shaft power that is clear of the motor's limit above base speed.
+ * Adds steps on which the motor pulls: they do not slow down, the resistance is calm, and no term of it is negative. From step `from` on, at
+ * most up to `to`; returns the step it stopped at. `clearW` is the shaft power that is clear of the motor's limit above base speed.
  */
 export function addPulling(
   law: QuickLaw,
-  effectiveMassKg: number,
-  resistance: CalmResistance,
+  calm: CalmResistance,
   clearW: number,
   { speedMPerS, perSpeedSPerM, accelerationMPerS2, durationS }: MovingSteps,
   from: number,
@@ -26,10 +25,10 @@ export function addPulling(
   const { squareWPerN2M2, squarePerSpeed2WS2PerN2M4, linearWPerNm, fieldNm, baseMPerS } = law;
   const { auxiliariesW, voltageV, resistance4Ohm, clearNm, clearTerminalW } = law;
   // Torque = perAcceleration a + constant + linear v + square v².
-  const perAcceleration = effectiveMassKg * pullingLeverM;
-  const constant = resistance.constantN * pullingLeverM + dragFixedNm;
-  const linear = resistance.linearNSPerM * pullingLeverM + dragPerSpeedNs;
-  const square = resistance.squareNS2PerM2 * pullingLeverM;
+  const perAcceleration = law.effectiveMassKg * pullingLeverM;
+  const constant = calm.constantN * pullingLeverM + dragFixedNm;
+  const linear = calm.linearNSPerM * pullingLeverM + dragPerSpeedNs;
+  const square = calm.squareNS2PerM2 * pullingLeverM;
   const idleConstant = idleFixedW + auxiliariesW;
   const fieldBase = fieldNm * baseMPerS;
   const voltageSquare = voltageV * voltageV;

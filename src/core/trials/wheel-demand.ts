@@ -21,9 +21,15 @@ export function calmResistance(road: RoadLoad, { evenSlope, cosSlope, sinSlope }
   };
 }
 
-/** Writes F = m_e a + R(v̄) (N) of the steps `from` up to, not including, `to` to `demandN`, with the effective mass of one gear. */
-export function writeDemand(road: RoadLoad, effectiveMassKg: number, steps: MovingSteps, from: number, to: number, demandN: Float64Array): void {
-  const calm = calmResistance(road, steps);
+/** What the wheel force of a design in one gear depends on beside its road load. */
+export interface DemandLaw {
+  effectiveMassKg: number;
+  /** The calm resistance of the steps, where it is one. */
+  calm: CalmResistance | null;
+}
+
+/** Writes F = m_e a + R(v̄) (N) of the steps `from` up to, not including, `to` to `demandN`. */
+export function writeDemand({ calm, effectiveMassKg }: DemandLaw, road: RoadLoad, steps: MovingSteps, from: number, to: number, demandN: Float64Array): void {
   if (calm === null) writeOpenDemand(road, effectiveMassKg, steps, from, to, demandN);
   else writeCalmDemand(calm, effectiveMassKg, steps, from, to, demandN);
 }

@@ -1,5 +1,5 @@
 /** Speeds at which the law of tractive force or road load changes: between them both are smooth. */
-import { signChanges } from '../numerics/roots.ts';
+import { type RealFunction, signChange, signChanges } from '../numerics/roots.ts';
 import { adhesionBreakSpeedsMPerS, adhesionLimitN } from './adhesion.ts';
 import { batteryTorqueLimitNm, dischargeLimitW } from './battery.ts';
 import { type Gear, motorSpeedRadPerS } from './gearing.ts';
@@ -108,11 +108,8 @@ function insertBranches(motor: Motor, ends: number[]): void {
 /** Where the battery starts or stops to bind, and, while it binds, where its torque changes its law. */
 function insertBattery(vehicle: Vehicle, rating: DrivingRating, ends: number[]): void {
   const { motor } = vehicle;
-  // Torque (N·m) that the motor would give beyond the battery's; held where the battery is far from binding, so that it stays finite.
-  const beyond = (speed: number) => {
-    const limitNm = torqueLimitNm(motor, speed, rating);
-    return Math.max(limitNm - batteryTorqueLimitNm(vehicle, speed), -limitNm);
-  };
+  const allowedW = dischargeLimitW(vehicle.battery) - vehicle.auxiliariesW;
+  const beyond = motor.lossMap === null ? powerBeyond(motor, rating, allowedW) : torqueBeyond(vehicle, rating);
   const stretches = ends.slice();
   insertLossLaw(motor, stretches);
   insertChanges(stretches, beyond, ends);
@@ -121,9 +118,27 @@ function insertBattery(vehicle: Vehicle, rating: DrivingRating, ends: number[]):
   for (let k = 1; k < stretches.length; k++) {
     const bound = beyond(0.5 * (stretches[k - 1] + stretches[k])) > 0;
     if (bound || boundBefore) insert(ends, stretches[k - 1]);
-    if (bound) insertLineCrossings(vehicle, stretches[k - 1], stretches[k], ends);
+    if (bound) insertLineCrossings(motor, allowedW, stretches[k - 1], stretches[k], ends);
     boundBefore = bound;
   }
+}
+
+// Two functions of motor speed that are above zero where the battery binds.
+
+/** Power (W) beyond the battery's at the motor's own limit: losses by coefficients rise with torque, so that the battery binds just there. */
+function powerBeyond(motor: Motor, rating: DrivingRating, allowedW: number): RealFunction {
+  return (speed) => {
+    const limitNm = torqueLimitNm(motor, speed, rating);
+    return limitNm * speed + motorLossW(motor, limitNm, speed) - allowedW;
+  };
+}
+
+/** Torque (N·m) that the motor would give beyond the battery's; held where the battery is far from binding, so that it stays finite. */
+function torqueBeyond(vehicle: Vehicle, rating: DrivingRating): RealFunction {
+  return (speed) => {
+    const limitNm = torqueLimitNm(vehicle.motor, speed, rating);
+    return Math.max(limitNm - batteryTorqueLimitNm(vehicle, speed), -limitNm);
+  };
 }
 
 /** Where the loss law itself changes: base speed and the speed lines of a map. */
@@ -135,12 +150,14 @@ function insertLossLaw({ baseSpeedRadPerS, lossMap }: Motor, ends: number[]): vo
 }
 
 /** Where the battery's torque becomes 0 or passes a torque line of the loss map, on a smooth stretch on which it binds. */
-function insertLineCrossings(vehicle: Vehicle, from: number, to: number, ends: number[]): void {
-  const { motor } = vehicle;
-  const allowedW = dischargeLimitW(vehicle.battery) - vehicle.auxiliariesW;
+function insertLineCrossings(motor: Motor, allowedW: number, from: number, to: number, ends: number[]): void {
   const insertLine = (torqueNm: number) => insertChanges([from, to], (speed) => torqueNm * speed + motorLossW(motor, torqueNm, speed) - allowedW, ends);
+  if (motor.lossMap === null) {
+    // Losses by coefficients rise with speed: the last speed tells whether they ever use up what is allowed.
+    if (motorLossW(motor, 0, to) > allowedW) insertLine(0);
+    return;
+  }
   insertLine(0);
-  if (motor.lossMap === null) return;
   const perLine = motor.peakTorqueNm / motor.lossMap.referencePeakTorqueNm;
   for (const torque of motor.lossMap.torquesNm) if (torque > 0) insertLine(torque * perLine);
 }
@@ -150,13 +167,17 @@ function insertAdhesion(vehicle: Vehicle, gear: Gear, rating: DrivingRating, slo
   const grip = (speed: number) => adhesionLimitN(vehicle, speed, slope.cos);
   const { motor, gearing, wheelRadiusM } = vehicle;
   const mostN = (largestTorqueNm(motor) * gearing.ratios[gear] * gearing.efficiencies[gear]) / wheelRadiusM;
+  const [from, to] = [ends[0], ends[ends.length - 1]];
   // Adhesion rises or falls throughout with speed: it is least at one of the ends.
-  if (Math.min(grip(ends[0]), grip(ends[ends.length - 1])) > mostN) return;
-  insertChanges(ends.slice(), (speed) => driveForceN(vehicle, gear, speed, rating) - grip(speed), ends);
+  if (Math.min(grip(from), grip(to)) > mostN) return;
+  const excessN = (speed: number) => driveForceN(vehicle, gear, speed, rating) - grip(speed);
+  if (motor.fullLoad !== null || motor.lossMap !== null || vehicle.axles.driven === 'rear') insertChanges(ends.slice(), excessN, ends);
+  // By the laws alone drive force never rises, and the other axles' adhesion never falls.
+  else if (excessN(from) > 0 && !(excessN(to) > 0)) insert(ends, signChange(excessN, from, to));
 }
 
 /** Inserts the speeds at which `f`, smooth on each of the stretches, changes sign. */
-function insertChanges(stretches: readonly number[], f: (x: number) => number, ends: number[]): void {
+function insertChanges(stretches: readonly number[], f: RealFunction, ends: number[]): void {
   for (let k = 1; k < stretches.length; k++) {
     for (const speed of signChanges(f, stretches[k - 1], stretches[k], PIECES)) insert(ends, speed);
   }

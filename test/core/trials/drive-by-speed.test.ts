@@ -5,7 +5,7 @@ import { addDrawn, clearDrawn, createDrawnSums, type DrawnSums } from '../../../
 import { driveBySpeed } from '../../../src/core/trials/drive-by-speed.ts';
 import { driveStep } from '../../../src/core/trials/drive-step.ts';
 import { createDrivenSteps } from '../../../src/core/trials/driven-steps.ts';
-import { writeDemand } from '../../../src/core/trials/wheel-demand.ts';
+import { calmResistance, writeDemand } from '../../../src/core/trials/wheel-demand.ts';
 import type { Vehicle } from '../../../src/core/vehicle/vehicle.ts';
 import { sampleMotor, sampleVehicle } from '../vehicle/sample-vehicle.ts';
 import { cycleConditions, cycleVehicles } from './cycle-vehicles.ts';
@@ -20,7 +20,7 @@ function drawnExactly(vehicle: Vehicle, { bySpeed }: CompiledCycle): { sums: Dra
   const driven = createDrivenSteps(steps);
   const sums = createDrawnSums();
   clearDrawn(sums);
-  writeDemand(vehicle.road, vehicle.effectiveMassKg[0], bySpeed, 0, steps, driven.demandN);
+  writeDemand({ effectiveMassKg: vehicle.effectiveMassKg[0], calm: calmResistance(vehicle.road, bySpeed) }, vehicle.road, bySpeed, 0, steps, driven.demandN);
   let grossJ = 0;
   for (let k = 0; k < steps; k++) {
     driveStep(vehicle, 0, bySpeed.speedMPerS[k], Number.NEGATIVE_INFINITY, k, driven);
