@@ -26,12 +26,13 @@ interface Told {
   readonly line: number;
   readonly path: string;
   readonly found: string;
+  readonly expected: string;
   readonly whatToDo: string;
 }
 
 /** How often each of some warnings is found in what people read. */
 function timesIn(words: string, warnings: readonly Told[]): number[] {
-  return warnings.map(({ found }) => words.toLowerCase().split(found.toLowerCase()).length - 1);
+  return warnings.map(({ found, expected }) => words.toLowerCase().split(`${found}; expected ${expected}`.toLowerCase()).length - 1);
 }
 
 const rules = (warnings: readonly Told[]) => warnings.map(({ rule }) => rule).sort();
