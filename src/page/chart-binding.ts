@@ -154,7 +154,8 @@ function readingWords(number: number | null, data: ReportData): Markup {
     const letters = data.proposals.map(
       (proposal, index) => html`<p><b class="letter">${proposalLetter(index)}</b> ${proposalRules(proposal, data).join(', ')}</p>`,
     );
-    return html`${letters}<p class="hint">Point at a design to read it, click it to see all its figures. With the keyboard: arrow keys and Enter.</p>`;
+    const several = data.study.objectives.length > 2 && data.counts.feasible > 0;
+    return html`${letters}${several && html`<p class="hint">The front weighs ${data.study.objectives.length} objectives: a design on it that looks beaten in two of them is better in another.</p>`}<p class="hint">Point at a design to read it, click it to see all its figures. With the keyboard: arrow keys and Enter.</p>`;
   }
   const rows = data.columns.map((column, index) => {
     return html`<div><dt>${capitalised(columnPhrase(column, data.study))}</dt><dd>${valueText(design.values[index] ?? null, column, data.study)}</dd></div>`;

@@ -16,6 +16,9 @@ export interface TableOrder {
 /** Rows shown until all are asked for. */
 export const firstRows = 25;
 
+/** Rows on paper; the style sheet hides the others. */
+const printedRows = 12;
+
 /** The order in which the table first stands: by the first objective, its better end on top. */
 export function firstOrder({ study, columns }: ReportData): TableOrder {
   const [objective] = study.objectives;
@@ -34,7 +37,7 @@ export function frontSection(data: ReportData): Markup | null {
   return html`<section aria-labelledby="front" class="wide">
 <h2 id="front">The front, design by design</h2>
 <div class="body">
-<p>${which}. The whole front lies in front.csv.</p>
+<p>${which}. The whole front lies in front.csv.${shownFront > printedRows && html`<span class="in-print"> Printed are the first ${printedRows} of the order on the screen.</span>`}</p>
 <div id="front-table">${frontTable(data, firstOrder(data))}</div>
 </div>
 </section>`;
@@ -46,15 +49,16 @@ export function frontTable(data: ReportData, order: TableOrder): Markup {
   const shown = order.all ? rows : rows.slice(0, firstRows);
   const letters = new Map(data.proposals.map(({ number }, index) => [number, proposalLetter(index)]));
   const decimals = data.columns.map((column, index) => columnDecimals(column, rows, index, data));
+  const kept = data.columns.map((column, index) => ({ column, index })).filter(({ column, index }) => !alwaysFollowed(column, index, rows, data));
   const head = (index: number, words: string) => {
     const sort = order.column !== index ? 'none' : order.descending ? 'descending' : 'ascending';
     return html`<th scope="col" aria-sort="${sort}" class="${index < 0 ? 'stay' : ''}"><button type="button" class="head" data-sort="${index}">${words}</button></th>`;
   };
   return html`<div class="scroll" tabindex="0" role="region" aria-label="Designs on the front"><table class="front">
-<thead><tr>${head(-1, 'Design')}${data.columns.map((column, index) => head(index, headWords(column, data)))}</tr></thead>
+<thead><tr>${head(-1, 'Design')}${kept.map(({ column, index }) => head(index, headWords(column, data)))}</tr></thead>
 <tbody>${shown.map((design) => {
     const letter = letters.get(design.number);
-    return html`<tr><th scope="row" class="stay"><button type="button" class="plain" data-design="${design.number}">${formatFigure(design.number, 0)}</button>${letter !== undefined && html` <b class="letter">${letter}</b>`}</th>${data.columns.map((column, index) => html`<td>${cellText(design.values[index] ?? null, column, decimals[index] as number, data)}</td>`)}</tr>`;
+    return html`<tr><th scope="row" class="stay"><button type="button" class="plain" data-design="${design.number}">${formatFigure(design.number, 0)}</button>${letter !== undefined && html` <b class="letter">${letter}</b>`}</th>${kept.map(({ column, index }) => html`<td>${cellText(design.values[index] ?? null, column, decimals[index] as number, data)}</td>`)}</tr>`;
   })}</tbody>
 </table></div>
 ${rows.length > shown.length && html`<p><button type="button" data-all="yes">Show all ${formatFigure(rows.length, 0)} designs</button></p>`}`;
@@ -71,6 +75,12 @@ export function sortedFront(data: ReportData, { column, descending }: TableOrder
       if (first === null || second === null) return Number(first === null) - Number(second === null) || a.number - b.number;
       return turn * (first - second) || a.number - b.number;
     });
+}
+
+/** Every design on a front follows every cycle unless the study allows otherwise: such a column tells nothing. */
+function alwaysFollowed(column: ResultColumn, index: number, rows: readonly ReportDesign[], { requirements }: ReportData): boolean {
+  const implied = column.role === 'metric' && requirements.some(({ metric, implied }) => implied && metric === column.name);
+  return implied && rows.every(({ values }) => values[index] === 0);
 }
 
 function headWords(column: ResultColumn, { study }: ReportData): string {

@@ -59,11 +59,21 @@ function runWords({ study, provenance, counts }: ReportData): Markup {
   const traces = [...new Map(study.trials.flatMap(({ trace }) => (trace === null ? [] : [[trace.name, trace] as const]))).values()];
   return html`<dl class="run">
 <div><dt>Designs</dt><dd>${formatFigure(counts.designs, 0)}: ${searchWords(study.search)}</dd></div>
-<div><dt>Computed</dt><dd>${started}, in ${formatFigure(seconds, 1)} s</dd></div>
+<div><dt>Computed</dt><dd>${timeWords(started)}, in ${formatFigure(seconds, 1)} s</dd></div>
 <div><dt>Versions</dt><dd>layshaft ${version}, Node ${node}</dd></div>
-${traces.map(({ name, timesS, notes }) => html`<div><dt>Speed trace ${name}</dt><dd>${formatFigure((timesS.at(-1) ?? 0) - (timesS[0] ?? 0), 0)} s. ${notes.join(' ')}</dd></div>`)}
+${traces.map(({ name, timesS, notes }) => html`<div><dt>Speed trace ${name}</dt><dd>${formatFigure((timesS.at(-1) ?? 0) - (timesS[0] ?? 0), 0)} s. ${sentences(notes)}</dd></div>`)}
 ${digests.map(({ name, sha256 }) => html`<div><dt>SHA-256 of ${name}</dt><dd class="digest">${sha256}</dd></div>`)}
 </dl>`;
+}
+
+/** `2026-12-01, 14:02 UTC` of an ISO date and time. */
+function timeWords(started: string): string {
+  return `${started.slice(0, 10)}, ${started.slice(11, 16)} UTC`;
+}
+
+/** Notes of a file, each closed by a full stop. */
+function sentences(notes: readonly string[]): string {
+  return notes.map((note) => (/[.!?]$/u.test(note) ? note : `${note}.`)).join(' ');
 }
 
 function figureList(study: Study): Markup {

@@ -4,7 +4,7 @@ import type { ReportData, RequirementCount } from '../charts/report-data.ts';
 import { proposalLetter } from '../charts/trade-off-view.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup, type Piece } from './markup.ts';
-import { boundWords, designOf, differenceWords, easedLimit, metricColumn } from './wording.ts';
+import { boundWords, designOf, differenceWords, easedLimit, metricColumn, objectiveWords } from './wording.ts';
 
 /** Section 4; where nothing passes, the answer says all of it. */
 export function requirementSection(data: ReportData): Markup | null {
@@ -54,7 +54,7 @@ function easingWords(requirement: RequirementCount, data: ReportData): Piece {
     const now = bestShown(objective.metric, data);
     const gain =
       now === null
-        ? `${columnPhrase(measure, data.study)} ${figureText(best.objective, measure, data.study)}`
+        ? `${objectiveWords(objective, data)} then ${figureText(best.objective, measure, data.study)}`
         : `${differenceWords(best.objective, now.value, measure, data.study)} than ${now.letter}`;
     return [
       html`<li>At ${limit(best.limit)}: ${gain} <span class="together">(<button type="button" class="plain" data-design="${best.number}" hidden>design ${formatFigure(best.number, 0)}</button>)</span></li>`,

@@ -41,10 +41,12 @@ export function valueAgainst(value: number | null, { limit, bound }: Pick<Requir
 /** A limit that a value just meets, rounded to the side where it still does. */
 export function easedLimit(value: number, { bound }: Pick<Requirement, 'bound'>, measured: Measured, study: Study): string {
   const unit = readingUnit(measured.quantity, study.report.units);
-  const decimals = readingDecimals(measured.decimals, measured.quantity, study.report.units) + 1;
+  const usual = readingDecimals(measured.decimals, measured.quantity, study.report.units);
+  const written = Number(fromSi(value, unit).toPrecision(12));
+  const decimals = Number(written.toFixed(usual)) === written ? usual : usual + 1;
   const steps = 10 ** decimals;
-  const written = Number((fromSi(value, unit) * steps).toPrecision(12));
-  const rounded = (bound === 'atLeast' ? Math.floor(written) : Math.ceil(written)) / steps;
+  const scaled = Number((written * steps).toPrecision(12));
+  const rounded = (bound === 'atLeast' ? Math.floor(scaled) : Math.ceil(scaled)) / steps;
   return withUnit(formatFigure(rounded, decimals), measured, study);
 }
 

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { firstOrder, sortedFront } from '../../src/page/front-section.ts';
+import { firstOrder, frontTable, sortedFront } from '../../src/page/front-section.ts';
 import { inventedReport } from '../charts/invented-report.ts';
 
 const data = inventedReport();
@@ -31,5 +31,21 @@ describe('the order of the front', () => {
   it('starts with the better end of the first objective', () => {
     expect(data.columns[firstOrder(data).column]?.name).toBe('stops.batteryEnergy');
     expect(firstOrder(data).descending).toBe(false);
+  });
+});
+
+describe('the table of the front', () => {
+  const heads = (report: typeof data) => [...frontTable(report, firstOrder(report)).text.matchAll(/data-sort="(-?\d+)"/gu)].map(([, column]) => Number(column));
+  const at = data.columns.findIndex(({ name }) => name === 'stops.offTrace');
+  const implied = { ...data, requirements: data.requirements.map((each) => (each.metric === 'stops.offTrace' ? { ...each, implied: true } : each)) };
+  const withShare = (share: number) => ({
+    ...implied,
+    designs: implied.designs.map((design) => ({ ...design, values: design.values.map((value, index) => (index === at ? share : value)) })),
+  });
+
+  it('leaves out what every design meets by being there: a cycle followed throughout', () => {
+    expect(at).toBeGreaterThanOrEqual(0);
+    expect(heads(withShare(0))).not.toContain(at);
+    expect(heads(withShare(0.01))).toContain(at);
   });
 });

@@ -165,7 +165,7 @@ describe('the report when no design passes', () => {
     expect(items[0]).toContain('1980 miss it');
     expect(items[0]).toContain('A first design passes at');
     expect(items[0]).toMatch(/miss no other [\d.]+ %/u);
-    expect(items[0]).toMatch(/At [\d.]+ %: battery energy in stops [\d.]+ Wh\/km \(design \d+\)/u);
+    expect(items[0]).toMatch(/At [\d.]+ %: least battery energy in stops then [\d.]+ Wh\/km \(design \d+\)/u);
     expect(items[1]).toContain('Removes nothing that the others would let pass.');
   });
 

@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import type { ReportData, RequirementCount } from '../../src/charts/report-data.ts';
 import type { ResultColumn } from '../../src/core/evaluate/result-columns.ts';
 import type { Study } from '../../src/core/study/study.ts';
-import { requirementClause } from '../../src/page/wording.ts';
+import { easedLimit, requirementClause } from '../../src/page/wording.ts';
 import { inventedReport } from '../charts/invented-report.ts';
 
 const data = inventedReport();
@@ -44,5 +44,20 @@ describe('a requirement in words', () => {
     };
     const asked = { ...required('ramp.grade'), metric: 'ramp.payload', limit: 900 };
     expect(clause(asked, { ...data, columns: [...data.columns, payload] })).toBe('have at least 900 kg payload in ramp');
+  });
+});
+
+describe('an eased limit', () => {
+  const shown = (value: number, bound: 'atLeast' | 'atMost', metric: string) =>
+    easedLimit(value, { bound }, data.columns.find(({ name }) => name === metric) as ResultColumn, data.study).replaceAll('\u202f', ' ');
+
+  it('is written with a decimal more where it needs one, rounded so that it lets the design pass', () => {
+    expect(shown(0.199_67, 'atLeast', 'ramp.grade')).toBe('19.96 %');
+    expect(shown(11.5031, 'atMost', 'sprint.time')).toBe('11.504 s');
+  });
+
+  it('has no decimals that say nothing', () => {
+    expect(shown(0.25, 'atLeast', 'ramp.grade')).toBe('25.0 %');
+    expect(shown(7.5, 'atMost', 'sprint.time')).toBe('7.50 s');
   });
 });
