@@ -108,6 +108,12 @@ function thin(file: string, { axes }: Study): string {
 /** A figure, or a head of a table, in a unit that US readers have another one for. */
 const siUnit = /(?:\d|, ) ?(?:kg|t|m|km|mm|cm|km\/h|m\/s|m\/s²|m²|N|kN|N·m|N·m·s|Wh\/km|kWh\/100km|°C|K|kg\/m³|kg·m²|N\/\(km\/h\)|s²\/m²)(?![\w·/²(])/u;
 
+/** What people read of a command. */
+async function wordsOf(...args: string[]): Promise<string> {
+  const { stdout, stderr } = await run(...args);
+  return `${stdout}${stderr}`.replaceAll('\u202f', ' ');
+}
+
 /** What people read of a page: no script, no style, not the study as it was written, no sources of traces. */
 function visibleWords(document: Document): string {
   for (const hidden of document.querySelectorAll('script, style, pre, dl.run, title, desc')) hidden.remove();
@@ -120,12 +126,11 @@ describe('a study read in US units', () => {
 
   it('shows no figure in SI units: sheet, check, run, report and charts', async () => {
     writeFileSync(join(folder.path, file), thin('boat-trailer-tug.yaml', read('boat-trailer-tug.yaml')));
-    const said = [await run('sheet', file), await run('check', file), await run('run', file)];
-    const told = said.map(({ stdout, stderr }) => `${stdout}${stderr}`.replaceAll('\u202f', ' '));
+    const told = [await wordsOf('sheet', file), await wordsOf('check', file), await wordsOf('run', file)];
     const report = visibleWords(new JSDOM(readFileSync(join(out, 'report.html'), 'utf8')).window.document);
     const charts = readdirSync(join(out, 'charts')).map((name) => visibleWords(new JSDOM(readFileSync(join(out, 'charts', name), 'utf8')).window.document));
     for (const text of [...told, report, ...charts]) expect(text).not.toMatch(siUnit);
-    expect((await run('sheet', 'ferry-ramp-shuttle.yaml')).stdout.replaceAll('\u202f', ' ')).toMatch(siUnit);
+    expect(await wordsOf('sheet', 'ferry-ramp-shuttle.yaml')).toMatch(siUnit);
     expect(told[0]).toMatch(/peak torque +300 +lbf·ft/u);
     expect(told[0]).toMatch(/top speed +63\.2 +mph/u);
     expect(told[1]).toMatch(/trailer mass 9000 lb, trailer drag area 24 ft²/u);
