@@ -3,6 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { afterShift } from '../../../src/core/trials/coasting.ts';
 import { afterSpeedChange, isBeyondMotorSpeed, pullInGear } from '../../../src/core/trials/full-pedal.ts';
+import { fullLoadCurve } from '../../../src/core/vehicle/full-load-curve.ts';
 import { maxVehicleSpeedMPerS } from '../../../src/core/vehicle/gearing.ts';
 import { resistanceN, slopeOf } from '../../../src/core/vehicle/road-load.ts';
 import { tractiveForceN } from '../../../src/core/vehicle/traction.ts';
@@ -25,6 +26,17 @@ describe('net force at full pedal', () => {
       }),
       { numRuns: 300 },
     );
+  });
+
+  it('asks the battery about a curve that rises above its stated peak torque', () => {
+    const vehicle = plainVehicle({ forceN: 2000, fullForceToMPerS: 30, topMPerS: 60 });
+    const motor = { ...vehicle.motor, fullLoad: fullLoadCurve([10, 20, 60], [2000, 5000, 1000], 2000, 30) };
+    // Copper loss 30 W per N·m of peak torque, times the square of the torque share: 375 kW at 5000 N·m.
+    const losses = { ...motor.losses, copperWPerNm: 30, acCopperS2: 0 };
+    const limited = { ...vehicle, motor: { ...motor, losses }, battery: { ...vehicle.battery, dischargeW: 200_000 } };
+    const pull = pullInGear(limited, 0, levelPeak);
+    for (const speed of [5, 15, 20, 25, 40]) expect(pull.netForceN(speed)).toBe(tractiveForceN(limited, 0, speed, 'peak', levelPeak.slope));
+    expect(pull.netForceN(20)).toBeLessThan(4900);
   });
 
   it('ends at maximum motor speed, with room for the rounding of a speed that is meant to be it', () => {

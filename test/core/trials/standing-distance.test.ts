@@ -156,6 +156,14 @@ describe('standing distance in the end', () => {
     expect(relative(level(dragged, 160).endSpeedMPerS, early?.speedMPerS ?? Number.NaN)).toBeLessThan(1e-9);
   });
 
+  it('settles at the first balance that a falling speed meets', () => {
+    // Higher gear 4000 N against 4500 − 200 v + 9 v²: balance at 2.87 and at 19.35 m/s.
+    const vehicle = twoRatios(4500, 0);
+    const road = { ...vehicle.road, airLinearNSPerM: -200, airSquareNS2PerM2: 9 };
+    const { endSpeedMPerS } = level({ ...vehicle, road }, 5000);
+    expect(relative(endSpeedMPerS, (200 + Math.sqrt(200 ** 2 - 4 * 9 * 500)) / 18)).toBeLessThan(1e-9);
+  });
+
   it('is not covered when the vehicle comes to rest while it shifts', () => {
     expect(level(twoRatios(3900, 20), 1000)).toEqual(notCovered);
   });
