@@ -1,6 +1,6 @@
 /** The charts of a run as files: one drawing for every pair of objectives. */
 import { select } from 'd3';
-import { cautionLine } from '../core/study/cautions.ts';
+import { cautionLine } from '../core/study/catalogue/cautions.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { drawTradeOff } from './draw-trade-off.ts';
 import { capitalised, columnPhrase, valueText } from './figure-words.ts';

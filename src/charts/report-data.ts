@@ -1,7 +1,7 @@
 /** What the report holds: everything the page shows without asking anyone. Plain JSON; missing values are null. */
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
-import type { Issue } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
+import type { Issue } from '../core/study/text/issue.ts';
 
 /** What a design is to the study. */
 export type DesignStanding = 'reference' | 'front' | 'feasible' | 'removed';

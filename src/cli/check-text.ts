@@ -1,8 +1,8 @@
 /** The outcome of `check` for people. */
 import { givenText } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
-import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
-import { searchWords } from '../core/study/search-methods.ts';
+import { findParameter, type ParameterRow } from '../core/study/catalogue/parameters.ts';
+import { searchWords } from '../core/study/catalogue/search-methods.ts';
 import type { Axis, Study } from '../core/study/study.ts';
 import { boundWords } from '../page/wording.ts';
 import type { RunEstimate } from '../run/estimate-run.ts';

@@ -1,10 +1,10 @@
 /** A study as `check` sees it: its mistakes, or the outlook of a run. */
 import { machineValue } from '../core/evaluate/result-columns.ts';
+import { metricColumns } from '../core/study/catalogue/metric-columns.ts';
+import type { MetricColumn } from '../core/study/catalogue/metrics.ts';
 import { whatRunNeeds } from '../core/study/check-study.ts';
-import { type Issue, inFileOrder, issueRecord } from '../core/study/issue.ts';
-import { metricColumns } from '../core/study/metric-columns.ts';
-import type { MetricColumn } from '../core/study/metrics.ts';
 import type { Requirement, Study } from '../core/study/study.ts';
+import { type Issue, inFileOrder, issueRecord } from '../core/study/text/issue.ts';
 import type { RunEstimate } from '../run/estimate-run.ts';
 import { type OpenStudy, readStudy, type WrongStudy } from './open-study.ts';
 

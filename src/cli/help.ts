@@ -1,5 +1,5 @@
 /** Help, made from the table of commands. */
-import { cautionLine } from '../core/study/cautions.ts';
+import { cautionLine } from '../core/study/catalogue/cautions.ts';
 import { type CommandRow, type OptionRow, statusSentences } from './command.ts';
 import { columns } from './table.ts';
 

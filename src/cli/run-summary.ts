@@ -4,7 +4,7 @@ import { columnPhrase, unitWord, valueText } from '../charts/figure-words.ts';
 import type { ReportData, ReportDesign, RequirementCount } from '../charts/report-data.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
-import { cautionLine } from '../core/study/cautions.ts';
+import { cautionLine } from '../core/study/catalogue/cautions.ts';
 import { type Candidate, candidatesOf } from '../page/candidates.ts';
 import { boundWords, easedLimit, meets, metricColumn, valueAgainst } from '../page/wording.ts';
 import { count, countOf, durationText, shareText } from './figure-text.ts';

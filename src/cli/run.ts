@@ -3,7 +3,7 @@ import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
 import { createSearch } from '../core/search/search.ts';
 import { whatRunNeeds } from '../core/study/check-study.ts';
-import type { Issue } from '../core/study/issue.ts';
+import type { Issue } from '../core/study/text/issue.ts';
 import { runFolderName } from '../run/run-folder.ts';
 import { RunProblem } from '../run/run-problem.ts';
 import { type CommandRow, type ExitStatus, exitStatus, jsonOption, type OptionValues, wholeNumber, worstStatus } from './command.ts';

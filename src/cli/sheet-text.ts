@@ -2,7 +2,7 @@
 import { unitWord } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { ComputedDesign, DesignMetric, Setting } from '../core/search/design-bench.ts';
-import { cautionLine } from '../core/study/cautions.ts';
+import { cautionLine } from '../core/study/catalogue/cautions.ts';
 import type { OptionChoice } from '../core/study/read-setting.ts';
 import type { Study, Trial } from '../core/study/study.ts';
 import { boundWords, meets, valueAgainst } from '../page/wording.ts';

@@ -2,9 +2,9 @@
 import { givenText } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { LimitWord } from '../core/evaluate/evaluator.ts';
-import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
+import { findParameter, type ParameterRow, trialParameters } from '../core/study/catalogue/parameters.ts';
+import { trialKindRow } from '../core/study/catalogue/trial-kinds.ts';
 import type { Study, Trial } from '../core/study/study.ts';
-import { trialKindRow } from '../core/study/trial-kinds.ts';
 
 /** `acceleration, from 0 km/h, to 80 km/h, laden mass 2800 kg, peak rating`: the conditions as given, defaults left out. */
 export function trialConditions(study: Study, trial: Trial): string {

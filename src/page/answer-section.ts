@@ -3,9 +3,9 @@ import { columnPhrase, differenceFigure, valueText } from '../charts/figure-word
 import type { ReportData, ReportDesign } from '../charts/report-data.ts';
 import { proposalLetter } from '../charts/trade-off-view.ts';
 import { axisOf, type ResultColumn } from '../core/evaluate/result-columns.ts';
-import { cautionLine } from '../core/study/cautions.ts';
-import { endReach } from '../core/study/design-corners.ts';
+import { cautionLine } from '../core/study/catalogue/cautions.ts';
 import type { Axis, Objective } from '../core/study/study.ts';
+import { endReach } from '../core/study/warn/design-corners.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { type Candidate, candidatesOf } from './candidates.ts';
 import { marginTable } from './margin-table.ts';

@@ -3,7 +3,7 @@ import { capitalised, figureText, inputText, type Measured, ownFigures } from '.
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
 import { chooseDesign } from '../core/search/choose-design.ts';
 import type { ComputedDesign, DesignMetric } from '../core/search/design-bench.ts';
-import { type MetricColumn, trialMetrics } from '../core/study/metrics.ts';
+import { type MetricColumn, trialMetrics } from '../core/study/catalogue/metrics.ts';
 import type { Trial } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup, type Piece } from './markup.ts';

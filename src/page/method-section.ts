@@ -1,11 +1,11 @@
 /** How the figures came about: the trials, the study's figures, the model in words, what it leaves out, the cautions, the run. */
 import { givenText, ownFigures } from '../charts/figure-words.ts';
 import type { ReportData } from '../charts/report-data.ts';
-import { cautions, leftOut } from '../core/study/cautions.ts';
-import { findParameter, type ParameterRow, trialParameters } from '../core/study/parameters.ts';
-import { searchWords } from '../core/study/search-methods.ts';
+import { cautions, leftOut } from '../core/study/catalogue/cautions.ts';
+import { findParameter, type ParameterRow, trialParameters } from '../core/study/catalogue/parameters.ts';
+import { searchWords } from '../core/study/catalogue/search-methods.ts';
+import { trialKindRow } from '../core/study/catalogue/trial-kinds.ts';
 import type { Axis, Study, Trial } from '../core/study/study.ts';
-import { trialKindRow } from '../core/study/trial-kinds.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup } from './markup.ts';
 import { modelSentences } from './model-words.ts';

@@ -1,7 +1,7 @@
 /** What study and results give cause to keep an eye on, before the answer is relied upon. */
 import { capitalised } from '../charts/figure-words.ts';
 import type { ReportData } from '../charts/report-data.ts';
-import { warningPlace, warningWords } from '../core/study/issue.ts';
+import { warningPlace, warningWords } from '../core/study/text/issue.ts';
 import { html, type Markup } from './markup.ts';
 
 /** One entry per warning: its rule, where in the study it belongs, and its sentence; null where there is none. */

@@ -3,8 +3,8 @@ import { columnPhrase, columnWords, differenceText, figureText, givenText, type 
 import type { ReportData, ReportDesign, RequirementCount } from '../charts/report-data.ts';
 import { shortText } from '../charts/visible-text.ts';
 import type { ResultColumn } from '../core/evaluate/result-columns.ts';
-import { trialMetrics } from '../core/study/metrics.ts';
-import { type TrialParameter, trialParameters } from '../core/study/parameters.ts';
+import { trialMetrics } from '../core/study/catalogue/metrics.ts';
+import { type TrialParameter, trialParameters } from '../core/study/catalogue/parameters.ts';
 import type { Objective, Requirement, Study, Trial } from '../core/study/study.ts';
 import { formatAgainstLimit, formatFigure, readingDecimals } from '../core/units/format-quantity.ts';
 import { fromSi, readingUnit } from '../core/units/units.ts';

@@ -1,6 +1,6 @@
 /** The driving schedules that come with the product, as CSV files with their sources in the head. */
 import { readdirSync, readFileSync } from 'node:fs';
-import { readTrace } from '../core/study/read-trace.ts';
+import { readTrace } from '../core/study/read/read-trace.ts';
 import type { SpeedTrace } from '../core/study/study.ts';
 
 /** In the source tree and in the built program alike they stand beside this module. */

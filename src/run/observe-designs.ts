@@ -3,7 +3,7 @@ import { compileStudy } from '../core/evaluate/compile.ts';
 import { type LimitWord, limitWords } from '../core/evaluate/evaluator.ts';
 import { createPedalProbe } from '../core/evaluate/pedal-limits.ts';
 import { createSearch } from '../core/search/search.ts';
-import type { MetricColumn } from '../core/study/metrics.ts';
+import type { MetricColumn } from '../core/study/catalogue/metrics.ts';
 import type { Requirement, Study, Trial } from '../core/study/study.ts';
 import { sampleNumbers } from './design-sample.ts';
 

@@ -6,8 +6,8 @@ import type { RequirementOutcome, RequirementResult } from '../core/front/requir
 import { thinFront } from '../core/front/thin-front.ts';
 import { hashNumber } from '../core/numerics/hash.ts';
 import type { DesignEvaluator } from '../core/search/evaluate-designs.ts';
-import { type Issue, inFileOrder } from '../core/study/issue.ts';
 import type { Study } from '../core/study/study.ts';
+import { type Issue, inFileOrder } from '../core/study/text/issue.ts';
 import { type ProposedDesign, type RequirementsSeen, resultWarnings } from './result-warnings.ts';
 import type { RunAccount } from './run-account.ts';
 

@@ -3,15 +3,15 @@
  * each names the place and the reason, once. What the study alone told before is not told again.
  */
 import { givenText, withCurrency } from '../charts/figure-words.ts';
-import { axisPath, endReach } from '../core/study/design-corners.ts';
-import { type Issue, IssueList } from '../core/study/issue.ts';
-import { metricColumns } from '../core/study/metric-columns.ts';
-import type { MetricRow } from '../core/study/metrics.ts';
-import { isBeyondEveryMotor } from '../core/study/motor-warnings.ts';
-import { findParameter, type ParameterRow } from '../core/study/parameters.ts';
-import { placesInText } from '../core/study/place-in-text.ts';
+import { metricColumns } from '../core/study/catalogue/metric-columns.ts';
+import type { MetricRow } from '../core/study/catalogue/metrics.ts';
+import { findParameter, type ParameterRow } from '../core/study/catalogue/parameters.ts';
 import type { Axis, Requirement, Study, Trial } from '../core/study/study.ts';
-import { type Sight, shown, someOf, type WarningRow } from '../core/study/warning-row.ts';
+import { type Issue, IssueList } from '../core/study/text/issue.ts';
+import { placesInText } from '../core/study/text/place-in-text.ts';
+import { axisPath, endReach } from '../core/study/warn/design-corners.ts';
+import { isBeyondEveryMotor } from '../core/study/warn/motor-warnings.ts';
+import { type Sight, shown, someOf, type WarningRow } from '../core/study/warn/warning-row.ts';
 import { formatAgainstLimit, formatFigure } from '../core/units/format-quantity.ts';
 import { observeDesigns, peakLastsS, type SampleSeen } from './observe-designs.ts';
 

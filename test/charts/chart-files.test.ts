@@ -2,7 +2,7 @@ import { JSDOM } from 'jsdom';
 import { describe, expect, it } from 'vitest';
 import { chartFiles, renderTradeOffSvg } from '../../src/charts/chart-files.ts';
 import type { ReportData } from '../../src/charts/report-data.ts';
-import { cautionLine } from '../../src/core/study/cautions.ts';
+import { cautionLine } from '../../src/core/study/catalogue/cautions.ts';
 import { inventedReport } from './invented-report.ts';
 import { inventedStudy } from './invented-study.ts';
 

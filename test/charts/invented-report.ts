@@ -7,8 +7,8 @@ import { balancedDesign, bestInEach } from '../../src/core/front/proposals.ts';
 import { RequirementTally } from '../../src/core/front/requirements.ts';
 import { thinFront } from '../../src/core/front/thin-front.ts';
 import { createSearch } from '../../src/core/search/search.ts';
-import type { Issue } from '../../src/core/study/issue.ts';
 import type { Study } from '../../src/core/study/study.ts';
+import type { Issue } from '../../src/core/study/text/issue.ts';
 import { inventedStudy } from './invented-study.ts';
 
 /** What a test may ask for. */

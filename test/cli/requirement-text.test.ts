@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { verdictText } from '../../src/cli/requirement-text.ts';
-import { designMetrics, trialMetrics } from '../../src/core/study/metrics.ts';
+import { designMetrics, trialMetrics } from '../../src/core/study/catalogue/metrics.ts';
 import type { Requirement, Study } from '../../src/core/study/study.ts';
 import { boundWords, meets, valueAgainst } from '../../src/page/wording.ts';
 

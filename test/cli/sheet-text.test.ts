@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { type DesignSheet, sheetText } from '../../src/cli/sheet-text.ts';
 import type { LimitWord } from '../../src/core/evaluate/evaluator.ts';
-import { metricColumns } from '../../src/core/study/metric-columns.ts';
-import { findParameter, type ParameterRow } from '../../src/core/study/parameters.ts';
+import { metricColumns } from '../../src/core/study/catalogue/metric-columns.ts';
+import { findParameter, type ParameterRow } from '../../src/core/study/catalogue/parameters.ts';
 import type { Study, Trial } from '../../src/core/study/study.ts';
 
 const trace = { name: 'town', timesS: [0, 1], speedsMPerS: [0, 1], notes: [] };

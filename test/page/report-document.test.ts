@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { JSDOM } from 'jsdom';
 import { describe, expect, it } from 'vitest';
 import type { ReportData } from '../../src/charts/report-data.ts';
-import { cautionLine, cautions } from '../../src/core/study/cautions.ts';
+import { cautionLine, cautions } from '../../src/core/study/catalogue/cautions.ts';
 import { reportDocument } from '../../src/page/report-document.ts';
 import { inventedReport, inventedWarning } from '../charts/invented-report.ts';
 import { inventedStudy } from '../charts/invented-study.ts';

@@ -2,7 +2,7 @@ import { expect, test } from 'vitest';
 import type { ReportData } from '../../src/charts/report-data.ts';
 import type { DesignEvaluator } from '../../src/core/search/evaluate-designs.ts';
 import { studyColumns } from '../../src/core/search/evaluate-designs.ts';
-import { type Issue, warningWords } from '../../src/core/study/issue.ts';
+import { type Issue, warningWords } from '../../src/core/study/text/issue.ts';
 import { findingsOf } from '../../src/run/report-account.ts';
 import { RunAccount } from '../../src/run/run-account.ts';
 import { smallStudyText, studyOf } from './small-study.ts';

@@ -2,7 +2,7 @@
 import { describe, expect, it } from 'vitest';
 import { createDesignEvaluator, studyColumns } from '../../src/core/search/evaluate-designs.ts';
 import { checkStudy } from '../../src/core/study/check-study.ts';
-import { type Issue, warningWords } from '../../src/core/study/issue.ts';
+import { type Issue, warningWords } from '../../src/core/study/text/issue.ts';
 import { estimateRun } from '../../src/run/estimate-run.ts';
 import { findingsOf } from '../../src/run/report-account.ts';
 import { resultWarningRows, resultWarnings } from '../../src/run/result-warnings.ts';

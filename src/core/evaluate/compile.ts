@@ -1,9 +1,9 @@
 /** Compiles a study once into an evaluator of designs. */
 
-import { metricColumns } from '../study/metric-columns.ts';
-import { type DesignMetric, designMetrics, type MetricColumn } from '../study/metrics.ts';
+import { metricColumns } from '../study/catalogue/metric-columns.ts';
+import { type DesignMetric, designMetrics, type MetricColumn } from '../study/catalogue/metrics.ts';
+import { trialKindRow } from '../study/catalogue/trial-kinds.ts';
 import type { Study, Trial } from '../study/study.ts';
-import { trialKindRow } from '../study/trial-kinds.ts';
 import { type Assembler, createAssembler } from './assemble.ts';
 import { type Evaluator, limitWords } from './evaluator.ts';
 import { type FigureCells, layOutFigures } from './figures.ts';

@@ -1,5 +1,5 @@
 /** What evaluates designs: a study compiled once, then rows of inputs to rows of metrics. */
-import type { MetricColumn } from '../study/metrics.ts';
+import type { MetricColumn } from '../study/catalogue/metrics.ts';
 
 /** Why a metric is what it is, or does not exist; stored as its index. */
 export const limitWords = [

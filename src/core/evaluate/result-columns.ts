@@ -1,6 +1,6 @@
 /** Which figures of a design a run stores and shows: varied inputs, objectives, required metrics, and what `keep` names. */
-import { type MetricColumn, type MetricRow, machineKey } from '../study/metrics.ts';
-import { findParameter, type ParameterRow } from '../study/parameters.ts';
+import { type MetricColumn, type MetricRow, machineKey } from '../study/catalogue/metrics.ts';
+import { findParameter, type ParameterRow } from '../study/catalogue/parameters.ts';
 import type { Axis, Study } from '../study/study.ts';
 import { fromSi, machineUnit, type Quantity } from '../units/units.ts';
 

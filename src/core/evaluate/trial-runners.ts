@@ -1,7 +1,7 @@
 /** One runner per kind of trial: reads the trial's own numbers, calls its solver, writes its metrics in catalogue order. */
 
+import { type TrialKind, trialKindRow } from '../study/catalogue/trial-kinds.ts';
 import type { Trial } from '../study/study.ts';
-import { type TrialKind, trialKindRow } from '../study/trial-kinds.ts';
 import { solveAcceleration } from '../trials/acceleration.ts';
 import { type CompiledCycle, compileCycle } from '../trials/compiled-cycle.ts';
 import { type CycleResult, createCycleResult, runCycle } from '../trials/cycle.ts';

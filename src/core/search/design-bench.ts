@@ -2,8 +2,8 @@
 import { compileStudy } from '../evaluate/compile.ts';
 import { type LimitWord, limitWords } from '../evaluate/evaluator.ts';
 import { machineValue } from '../evaluate/result-columns.ts';
-import { type MetricColumn, machineKey } from '../study/metrics.ts';
-import { findParameter, type ParameterRow } from '../study/parameters.ts';
+import { type MetricColumn, machineKey } from '../study/catalogue/metrics.ts';
+import { findParameter, type ParameterRow } from '../study/catalogue/parameters.ts';
 import type { OptionChoice } from '../study/read-setting.ts';
 import type { Axis, Study } from '../study/study.ts';
 import { createSearch } from './search.ts';

@@ -1,25 +1,26 @@
 /** Study text -> a checked study in SI, or everything that is wrong with it, all at once. */
-import { checkAxes, placedOptions } from './check-axes.ts';
-import { checkRules } from './check-rules.ts';
-import { checkTrialRules } from './check-trial-rules.ts';
-import { type Issue, IssueList } from './issue.ts';
-import { studyLayout } from './layout.ts';
-import { type Located, type LocatedMap, readLocated } from './located-text.ts';
-import { metricColumns } from './metric-columns.ts';
-import { namesOf, type OptionAxes, type OptionBase, optionAxes } from './option-axes.ts';
-import { readRequirements, readTradeOff } from './read-aims.ts';
-import { readAxes } from './read-axes.ts';
-import { createMotorFiles, lossMapOf, readStudyFullLoad, readStudyMap } from './read-measured.ts';
-import { type OptionList, readOptions } from './read-options.ts';
-import { type Found, nothingFound, readPlaces } from './read-places.ts';
-import { readSearch } from './read-search.ts';
-import { readTrials, type StudySources, type TrialFound } from './read-trials.ts';
-import { referenceValues } from './reference-values.ts';
-import type { Axis, Search, Study, Trial } from './study.ts';
-import { checkTyre } from './tyre-size.ts';
-import { addWarnings } from './warnings.ts';
 
-export type { StudySources } from './read-trials.ts';
+import { metricColumns } from './catalogue/metric-columns.ts';
+import { studyLayout } from './read/layout.ts';
+import { namesOf, type OptionAxes, type OptionBase, optionAxes } from './read/option-axes.ts';
+import { readRequirements, readTradeOff } from './read/read-aims.ts';
+import { readAxes } from './read/read-axes.ts';
+import { createMotorFiles, lossMapOf, readStudyFullLoad, readStudyMap } from './read/read-measured.ts';
+import { type OptionList, readOptions } from './read/read-options.ts';
+import { type Found, nothingFound, readPlaces } from './read/read-places.ts';
+import { readSearch } from './read/read-search.ts';
+import { readTrials, type StudySources, type TrialFound } from './read/read-trials.ts';
+import { referenceValues } from './read/reference-values.ts';
+import { checkTyre } from './read/tyre-size.ts';
+import { checkAxes, placedOptions } from './rules/check-axes.ts';
+import { checkRules } from './rules/check-rules.ts';
+import { checkTrialRules } from './rules/check-trial-rules.ts';
+import type { Axis, Search, Study, Trial } from './study.ts';
+import { type Issue, IssueList } from './text/issue.ts';
+import { type Located, type LocatedMap, readLocated } from './text/located-text.ts';
+import { addWarnings } from './warn/warnings.ts';
+
+export type { StudySources } from './read/read-trials.ts';
 
 /** A study that can be used, with what to keep an eye on; or every mistake in it, in the order of the file. */
 export type StudyCheck = { readonly ok: true; readonly study: Study; readonly warnings: Issue[] } | { readonly ok: false; readonly issues: Issue[] };

@@ -2,11 +2,11 @@
 import { formatQuantity } from '../units/format-quantity.ts';
 import { nearestName } from '../units/nearest-name.ts';
 import { readQuantity } from '../units/read-quantity.ts';
-import { boundsMissed } from './bounds.ts';
-import { clip } from './issue.ts';
-import { findParameter, type ParameterRow } from './parameters.ts';
-import { matches, orders, ruledOutBy } from './rules.ts';
+import { findParameter, type ParameterRow } from './catalogue/parameters.ts';
+import { boundsMissed } from './read/bounds.ts';
+import { matches, orders, ruledOutBy } from './rules/rules.ts';
 import type { Study } from './study.ts';
+import { clip } from './text/issue.ts';
 
 /** A study with one figure set, and what was set (SI); or what is wrong with the setting, in one or two sentences. */
 export type SettingRead =

@@ -1,14 +1,14 @@
 /** The JSON Schema of study files, for editors: made from the layout and the catalogues, so that names, units and sentences are theirs. */
 import { expectedFigure } from '../units/read-quantity.ts';
 import { machineUnit, type Quantity, quantities, quantityRow } from '../units/units.ts';
-import { boundsText } from './bounds.ts';
-import { type Place, studyLayout, trialLayout } from './layout.ts';
-import { type ParameterRow, parameters } from './parameters.ts';
-import { mostDesigns, mostSeed } from './read-search.ts';
-import { needs } from './rules.ts';
-import { searchMethods } from './search-methods.ts';
+import { type ParameterRow, parameters } from './catalogue/parameters.ts';
+import { searchMethods } from './catalogue/search-methods.ts';
+import { type TrialKind, trialKindRow, trialKinds } from './catalogue/trial-kinds.ts';
+import { boundsText } from './read/bounds.ts';
+import { type Place, studyLayout, trialLayout } from './read/layout.ts';
+import { mostDesigns, mostSeed } from './read/read-search.ts';
+import { needs } from './rules/rules.ts';
 import type { Search } from './study.ts';
-import { type TrialKind, trialKindRow, trialKinds } from './trial-kinds.ts';
 
 type Schema = Record<string, unknown>;
 

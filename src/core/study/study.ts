@@ -1,7 +1,7 @@
 /** A checked study in SI: plain data that travels unchanged to worker threads and, as JSON, into the report. */
 import type { FullLoadCurve } from '../vehicle/full-load-curve.ts';
 import type { LossMap } from '../vehicle/loss-map.ts';
-import type { TrialKind } from './trial-kinds.ts';
+import type { TrialKind } from './catalogue/trial-kinds.ts';
 
 /** A speed trace, as written: times in s, rising strictly; speeds in m/s, not negative. */
 export interface SpeedTrace {

@@ -1,6 +1,6 @@
 /** Every mistake is answered with one message that says where, what was expected, what was found and what to do. SHOW_ISSUES=1 prints the table. */
 import { describe, expect, it } from 'vitest';
-import { formatIssue } from '../../../src/core/study/issue.ts';
+import { formatIssue } from '../../../src/core/study/text/issue.ts';
 import { type BrokenStudy, brokenStudies } from './broken-studies.ts';
 import { check, edited, harbour } from './study-from-disk.ts';
 

@@ -1,11 +1,11 @@
 /** The tables that everything else is made from are complete and hang together. */
 import { describe, expect, it } from 'vitest';
-import { studyLayout, trialLayout } from '../../../src/core/study/layout.ts';
-import { designMetrics, machineKey, trialMetrics } from '../../../src/core/study/metrics.ts';
-import { findParameter, type ParameterRow, parameters, trialParameters } from '../../../src/core/study/parameters.ts';
-import { alternatives, groups, needs, orders } from '../../../src/core/study/rules.ts';
-import { type TrialKind, trialKinds } from '../../../src/core/study/trial-kinds.ts';
-import { warningRows } from '../../../src/core/study/warnings.ts';
+import { designMetrics, machineKey, trialMetrics } from '../../../src/core/study/catalogue/metrics.ts';
+import { findParameter, type ParameterRow, parameters, trialParameters } from '../../../src/core/study/catalogue/parameters.ts';
+import { type TrialKind, trialKinds } from '../../../src/core/study/catalogue/trial-kinds.ts';
+import { studyLayout, trialLayout } from '../../../src/core/study/read/layout.ts';
+import { alternatives, groups, needs, orders } from '../../../src/core/study/rules/rules.ts';
+import { warningRows } from '../../../src/core/study/warn/warnings.ts';
 import { quantities } from '../../../src/core/units/units.ts';
 
 const numbers: readonly ParameterRow[] = [...parameters, ...Object.values(trialParameters)];

@@ -1,9 +1,9 @@
 /** A right study becomes SI numbers by dotted name, trials, axes, requirements and objectives. */
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
+import { metricColumns } from '../../../src/core/study/catalogue/metric-columns.ts';
 import { checkStudy, whatRunNeeds } from '../../../src/core/study/check-study.ts';
-import { formatIssues } from '../../../src/core/study/issue.ts';
-import { metricColumns } from '../../../src/core/study/metric-columns.ts';
+import { formatIssues } from '../../../src/core/study/text/issue.ts';
 import { complaint, edited, harbour, sourcesWith, studyOf, warningsOf } from './study-from-disk.ts';
 
 const cases = new URL('../../data/cases/', import.meta.url);

@@ -1,9 +1,9 @@
 /** Corners hold the extremes that a full enumeration of the designs finds. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { cornersOf, endReach, extentOf } from '../../../src/core/study/design-corners.ts';
-import { placesInText } from '../../../src/core/study/place-in-text.ts';
 import type { Axis } from '../../../src/core/study/study.ts';
+import { placesInText } from '../../../src/core/study/text/place-in-text.ts';
+import { cornersOf, endReach, extentOf } from '../../../src/core/study/warn/design-corners.ts';
 import { harbour } from './study-from-disk.ts';
 
 const range = (name: string, values: readonly number[]): Axis => ({ name, sets: [name], points: values.map((value) => [value]), labels: null, range: null });

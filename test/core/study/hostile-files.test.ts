@@ -1,8 +1,8 @@
 /** Files that are no studies, or mean harm: one clear answer each, whatever they hold. Time and memory are bounded by what is read at all. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { formatIssues } from '../../../src/core/study/issue.ts';
 import { starterStudy } from '../../../src/core/study/starter.ts';
+import { formatIssues } from '../../../src/core/study/text/issue.ts';
 import { check, complaint, edited } from './study-from-disk.ts';
 
 const starter = starterStudy();

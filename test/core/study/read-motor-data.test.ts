@@ -1,7 +1,7 @@
 /** Measured curves and maps from CSV: losses at the nodes, a full grid, and answers that name the cell. */
 import { describe, expect, it } from 'vitest';
-import { formatIssues } from '../../../src/core/study/issue.ts';
-import { readFullLoad, readLossMap } from '../../../src/core/study/read-motor-data.ts';
+import { readFullLoad, readLossMap } from '../../../src/core/study/read/read-motor-data.ts';
+import { formatIssues } from '../../../src/core/study/text/issue.ts';
 
 const rpm = (2 * Math.PI) / 60;
 

@@ -1,10 +1,10 @@
 /** The section `search`: methods, counts and seeds; what each asks of the ranges; answers to what is wrong. */
 import { describe, expect, it } from 'vitest';
 import { createSearch } from '../../../src/core/search/search.ts';
-import { checkAxes, type PlacedAxis } from '../../../src/core/study/check-axes.ts';
-import { formatIssues, IssueList } from '../../../src/core/study/issue.ts';
-import { searchWords } from '../../../src/core/study/search-methods.ts';
+import { searchWords } from '../../../src/core/study/catalogue/search-methods.ts';
+import { checkAxes, type PlacedAxis } from '../../../src/core/study/rules/check-axes.ts';
 import type { Axis, Search } from '../../../src/core/study/study.ts';
+import { formatIssues, IssueList } from '../../../src/core/study/text/issue.ts';
 import { check, complaint, edited, harbour, studyOf } from './study-from-disk.ts';
 
 const GRID = 'search: { method: grid }';

@@ -1,8 +1,8 @@
 /** Speed traces and road profiles from CSV, and what is said of files that cannot be right. */
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { formatIssues } from '../../../src/core/study/issue.ts';
-import { readRoad, readTrace } from '../../../src/core/study/read-trace.ts';
+import { readRoad, readTrace } from '../../../src/core/study/read/read-trace.ts';
+import { formatIssues } from '../../../src/core/study/text/issue.ts';
 
 function problems(csv: string): string {
   const read = readTrace(csv, 'my.csv');

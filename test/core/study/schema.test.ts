@@ -2,7 +2,7 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { parse } from 'yaml';
-import { parameters } from '../../../src/core/study/parameters.ts';
+import { parameters } from '../../../src/core/study/catalogue/parameters.ts';
 import { studyJsonSchema } from '../../../src/core/study/schema.ts';
 import { starterStudy } from '../../../src/core/study/starter.ts';
 import { edited, harbour } from './study-from-disk.ts';

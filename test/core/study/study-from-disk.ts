@@ -1,8 +1,8 @@
 /** Studies of the tests: the built-in cycles from the source tree, files from test data or from a table of texts. */
 import { readdirSync, readFileSync } from 'node:fs';
 import { checkStudy, type StudyCheck, type StudySources } from '../../../src/core/study/check-study.ts';
-import { formatIssues } from '../../../src/core/study/issue.ts';
 import type { Study } from '../../../src/core/study/study.ts';
+import { formatIssues } from '../../../src/core/study/text/issue.ts';
 
 const cycles = new URL('../../../src/run/cycles/', import.meta.url);
 

@@ -1,6 +1,6 @@
 /** Wheel radius from a tyre size against a published rolling circumference: 205/55 R16, 837 revolutions per mile in a maker's table (read), 1923 mm. */
 import { describe, expect, it } from 'vitest';
-import { rollingRadiusM } from '../../../src/core/study/tyre-size.ts';
+import { rollingRadiusM } from '../../../src/core/study/read/tyre-size.ts';
 
 describe('a tyre size', () => {
   it('205/55 R16 rolls 1927 mm by the rule, 1923 mm by the table: within 0.3 %', () => {

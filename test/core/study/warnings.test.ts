@@ -1,7 +1,7 @@
 /** What leaves common practice or misleads is said once, with its place; what just keeps to it stays silent. */
 import { describe, expect, it } from 'vitest';
-import { warningPlace, warningWords } from '../../../src/core/study/issue.ts';
-import { warningRows } from '../../../src/core/study/warnings.ts';
+import { warningPlace, warningWords } from '../../../src/core/study/text/issue.ts';
+import { warningRows } from '../../../src/core/study/warn/warnings.ts';
 import { check, edited, harbour } from './study-from-disk.ts';
 
 type Edit = readonly [from: string, to: string];
