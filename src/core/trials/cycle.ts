@@ -16,7 +16,7 @@ import { driveInGear } from './drive-in-gear.ts';
 import { STEPS_AT_A_TIME } from './driven-steps.ts';
 import { highestMeanW } from './loss-window.ts';
 import { writeQuickLaw } from './quick-law.ts';
-import { airEnergyJ, gradeEnergyJ, inertiaEnergyJ, rollingEnergyJ } from './wheel-demand.ts';
+import { airEnergyJ, gradeEnergyJ, inertiaEnergyJ, rollingEnergyJ } from './road-energies.ts';
 
 /** Figures of one design on one cycle; energies per distance driven. NaN: does not exist. */
 export interface CycleResult {

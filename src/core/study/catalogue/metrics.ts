@@ -41,7 +41,7 @@ export const trialMetrics = {
   rmsTorque: row('rmsTorque', 'torque', 'less', 1, 'RMS torque', 'Root mean square motor torque over the whole time.'),
   torqueLoad: row('torqueLoad', 'share', 'less', 1, 'torque load', 'RMS torque over continuous torque.'),
   lossLoad: row('lossLoad', 'share', 'less', 1, 'loss load', 'Mean motor and inverter loss over the loss at the continuous corner.'),
-  worstLossLoad: row('worstLossLoad', 'share', 'less', 1, 'worst loss load', 'The same for the worst ten minutes.'),
+  worstLossLoad: row('worstLossLoad', 'share', 'less', 1, 'worst loss load', 'The same over the worst ten minutes on end; a cycle little longer than that may show less than its mean.'),
   offTrace: row('offTrace', 'share', 'less', 2, 'off-trace share', 'Share of the time in which the drive cannot follow the trace.'),
   recovered: row('recovered', 'share', 'more', 1, 'recovered share', 'Share of the braking energy at the wheels that returns to the pack.'),
   outsideMap: row('outsideMap', 'share', 'less', 2, 'outside the map', 'Share of the time in which the motor works outside its measured map.'),
