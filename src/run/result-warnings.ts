@@ -2,7 +2,8 @@
  * What only results can warn of: a sample evaluated in full, the counts of requirements, the designs put forward. One row per rule;
  * each names the place and the reason, once. What the study alone told before is not told again.
  */
-import { givenText, withCurrency } from '../charts/figure-words.ts';
+import { columnPhrase, givenText, withCurrency } from '../charts/figure-words.ts';
+import { studyColumns } from '../core/search/evaluate-designs.ts';
 import { metricColumns } from '../core/study/catalogue/metric-columns.ts';
 import type { MetricRow } from '../core/study/catalogue/metrics.ts';
 import { findParameter, type ParameterRow } from '../core/study/catalogue/parameters.ts';
@@ -164,7 +165,7 @@ function seeEdges({ study, proposals, told }: Context): Sight[] {
       const there = proposals.filter(({ inputOf }) => Math.abs(inputOf(axis.name) - value) <= near);
       if (there.length === 0) return [];
       const where = `${near === 0 ? '' : 'less than 1 % of the range from '}${givenText(value, row, study)}, the ${word} searched`;
-      return [`${where}, in the design${there.length === 1 ? '' : 's'} put forward as ${ruleWords(there)}`];
+      return [`${where}, in the design${there.length === 1 ? '' : 's'} put forward as ${ruleWords(there, study)}`];
     });
     return ends.length === 0
       ? []
@@ -177,8 +178,15 @@ function endsOf({ from, to }: NonNullable<Axis['range']>, { atLeast, atMost }: P
   return [...(from === atLeast ? [] : [{ word: 'lowest', value: from }]), ...(to === atMost ? [] : [{ word: 'highest', value: to }])];
 }
 
-function ruleWords(proposals: readonly ProposedDesign[]): string {
-  return someOf(proposals.flatMap(({ rules }) => rules.map((rule) => (rule === 'balanced' ? rule : `best in ${rule}`))));
+/** `least drive unit cost and balanced`: the rules as report and terminal name them. */
+function ruleWords(proposals: readonly ProposedDesign[], study: Study): string {
+  const columns = studyColumns(study);
+  const words = (rule: string) => {
+    const column = columns.find(({ role, name }) => role === 'metric' && name === rule);
+    const aim = study.objectives.find(({ metric }) => metric === rule)?.aim === 'maximise' ? 'most' : 'least';
+    return column === undefined ? rule : `${aim} ${columnPhrase(column, study)}`;
+  };
+  return someOf(proposals.flatMap(({ rules }) => rules.map(words)));
 }
 
 /** Each requirement with its row, the designs that miss it, and where it stands. */

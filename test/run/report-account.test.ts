@@ -83,7 +83,7 @@ test('a proposal at the end of a range is told, among what was known before in t
   const { report } = lineOf(5);
   expect(report.warnings[0]).toBe(said);
   expect(sentences(report)).toContainEqual(
-    expect.stringContaining('vary.gearing.ratio: 7, the lowest searched, in the design put forward as best in driveUnit.cost and balanced;'),
+    expect.stringContaining('vary.gearing.ratio: 7, the lowest searched, in the design put forward as least drive unit cost and balanced;'),
   );
 });
 

@@ -167,7 +167,7 @@ const cases: readonly Case[] = [
     case: 'the cheapest design at the least torque',
     text: edited(smallStudyText(), [RATIOS, 'gearing.ratio: { oneOf: [7, 8, 9, 10, 11, 12, 13] }']),
     path: 'vary.motor.peakTorque',
-    says: '140 N·m, the lowest searched, in the design put forward as best in driveUnit.cost; expected the best designs inside the range.',
+    says: '140 N·m, the lowest searched, in the design put forward as least drive unit cost; expected the best designs inside the range.',
     nearMiss: edited(
       smallStudyText(),
       [RATIOS, 'gearing.ratio: { oneOf: [7, 8, 9, 10, 11, 12, 13] }'],
