@@ -1,6 +1,6 @@
 /** A part of the results as Parquet: a fixed run of designs, every stored column in its machine unit. */
 import { type ColumnSource, parquetWriteBuffer } from 'hyparquet-writer';
-import { machineValue, type ResultColumn } from '../core/evaluate/result-columns.ts';
+import { machineValues, type ResultColumn } from '../core/evaluate/result-columns.ts';
 
 /** Designs per part, whatever the workers and tasks, so that the same study gives the same files. */
 export const designsPerPart = 50_000;
@@ -36,14 +36,25 @@ export class PartRows {
 export function partBytes(rows: PartRows, columns: readonly ResultColumn[]): Uint8Array {
   const { count } = rows;
   const columnData: ColumnSource[] = [
-    { name: 'number', data: BigInt64Array.from(rows.numbers.subarray(0, count), BigInt), type: 'INT64', nullable: false },
+    { name: 'number', data: wholeNumbers(rows.numbers.subarray(0, count)), type: 'INT64', nullable: false, encoding: 'DELTA_BINARY_PACKED' },
     ...columns.map((column, k): ColumnSource => dataColumn(column, rows.columns[k].subarray(0, count))),
-    { name: 'feasible', data: Array.from(rows.feasible.subarray(0, count), (flag) => flag === 1), type: 'BOOLEAN', nullable: false },
+    { name: 'feasible', data: Array.from(rows.feasible.subarray(0, count), Boolean), type: 'BOOLEAN', nullable: false, statistics: false },
   ];
   return new Uint8Array(parquetWriteBuffer({ columnData }));
 }
 
+function wholeNumbers(numbers: Float64Array): BigInt64Array {
+  const whole = new BigInt64Array(numbers.length);
+  for (let i = 0; i < numbers.length; i++) whole[i] = BigInt(numbers[i]);
+  return whole;
+}
+
+/** Inputs always exist, and repeat: they get a dictionary where the writer finds it worth while. Metrics hardly repeat. */
 function dataColumn(column: ResultColumn, values: Float64Array): ColumnSource {
-  const data = Array.from(values, (value) => machineValue(column, value));
-  return { name: column.key, data, type: column.role === 'option' ? 'STRING' : 'DOUBLE', nullable: true };
+  const { key: name, labels, role } = column;
+  if (role === 'option') return { name, data: Array.from(values, (point) => labels?.[point] ?? null), type: 'STRING', nullable: true };
+  const written = machineValues(column, values);
+  if (role === 'input') return { name, data: written, type: 'DOUBLE', nullable: false };
+  const data = written.some(Number.isNaN) ? Array.from(written, (value) => (Number.isNaN(value) ? null : value)) : written;
+  return { name, data, type: 'DOUBLE', nullable: true, encoding: 'PLAIN' };
 }

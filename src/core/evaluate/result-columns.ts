@@ -54,6 +54,27 @@ export function machineValue({ role, quantity, labels }: Pick<ResultColumn, 'rol
   return role === 'input' ? Number(written.toPrecision(15)) : written;
 }
 
+/** The same for a whole column of numbers; NaN stays NaN. */
+export function machineValues(column: Pick<ResultColumn, 'role' | 'quantity' | 'labels'>, si: Float64Array): Float64Array {
+  const written = new Float64Array(si.length);
+  if (column.role === 'metric') {
+    const unit = machineUnit(column.quantity);
+    for (let i = 0; i < si.length; i++) written[i] = fromSi(si[i], unit);
+    return written;
+  }
+  // Rounding goes by way of text, and inputs repeat: the points of an axis.
+  const known = new Map<number, number>();
+  for (let i = 0; i < si.length; i++) {
+    let value = known.get(si[i]);
+    if (value === undefined) {
+      value = (machineValue(column, si[i]) ?? Number.NaN) as number;
+      known.set(si[i], value);
+    }
+    written[i] = value;
+  }
+  return written;
+}
+
 /** The label people read for a metric: the trial in front of it. */
 export function metricLabel(trial: string | null, row: MetricRow): string {
   return trial === null ? row.label : `${trial}: ${row.label}`;
