@@ -1,5 +1,4 @@
 /** The force that a trace asks for at the wheels, step by step. */
-import { airResistanceN } from '../vehicle/road-load.ts';
 import type { RoadLoad } from '../vehicle/vehicle.ts';
 import type { MovingSteps } from './moving-steps.ts';
 
