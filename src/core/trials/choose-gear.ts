@@ -29,7 +29,12 @@ function takesHigherGear(vehicle: Vehicle, speedMPerS: number, mostW: number, k:
   if (lowerFollows || higherFollows) return higherFollows;
   // The higher gear turns the motor more slowly: it is above its speed only where the lower gear is too.
   if (isOverspeed(vehicle.motor, motorSpeedRadPerS(vehicle, 0, speedMPerS))) return true;
-  return higher.gearedN[k] > lower.gearedN[k];
+  return deliveredN(higher, k) > deliveredN(lower, k);
+}
+
+/** Force that a motor within its speed gives at the wheels. While it coasts, and only then is a step of no torque not missed, the gearing brakes, not the motor. */
+function deliveredN({ torqueNm, missed, gearedN }: DrivenSteps, k: number): number {
+  return torqueNm[k] === 0 && missed[k] === 0 ? 0 : gearedN[k];
 }
 
 function copyStep(from: DrivenSteps, to: DrivenSteps, k: number): void {

@@ -6,6 +6,7 @@ import { traceCycle } from '../../../src/core/trials/cycle-trace.ts';
 import { driveInGear } from '../../../src/core/trials/drive-in-gear.ts';
 import { driveStep } from '../../../src/core/trials/drive-step.ts';
 import { createDrivenSteps } from '../../../src/core/trials/driven-steps.ts';
+import { writeQuickLaw } from '../../../src/core/trials/quick-law.ts';
 import { mostPowerW } from '../../../src/core/vehicle/battery.ts';
 import { motorSpeedRadPerS, motorTorqueNm } from '../../../src/core/vehicle/gearing.ts';
 import type { Vehicle } from '../../../src/core/vehicle/vehicle.ts';
@@ -245,6 +246,7 @@ describe('cycle trial, laws', () => {
       fc.property(drawn, ([vehicle, conditions, name]) => {
         const cycle = compileCycle(scheduleOf(name), conditions);
         const [quick, exact] = [cycle.driven, createDrivenSteps(cycle.speedMPerS.length)];
+        writeQuickLaw(vehicle, 0, cycle, cycle.laws[0]);
         driveInGear(vehicle, 0, cycle, 0, cycle.speedMPerS.length, quick);
         exact.demandN.set(quick.demandN);
         let worst = 0;
