@@ -8,40 +8,52 @@ import { addDrawn } from './drawn-sums.ts';
 import { driveStep } from './drive-step.ts';
 import { STEPS_AT_A_TIME } from './driven-steps.ts';
 import { writeQuickLaw } from './quick-law.ts';
-import { addAny, addPulling } from './quick-steps.ts';
+import { addAny, addOneWay, brakingLaw, pullingLaw, type TorqueLaw } from './quick-steps.ts';
+import { EASES } from './speed-order.ts';
 import { type CalmResistance, writeDemand } from './wheel-demand.ts';
 
 /** Adds all moving steps to `cycle.drawn`. */
 export function driveBySpeed(vehicle: Vehicle, cycle: CompiledCycle): void {
   const { bySpeed, laws } = cycle;
-  writeQuickLaw(vehicle, 0, bySpeed, laws[0]);
-  const { calm } = laws[0];
-  const pulls = calm !== null && calm.constantN >= 0 && calm.linearNSPerM >= 0 && calm.squareNS2PerM2 >= 0;
-  addRun(vehicle, cycle, pulls ? calm : null, 0, bySpeed.steady);
-  addRun(vehicle, cycle, null, bySpeed.steady, bySpeed.speedMPerS.length);
+  const { speedMPerS, steady, braking } = bySpeed;
+  const [law] = laws;
+  writeQuickLaw(vehicle, 0, bySpeed, law);
+  const { calm } = law;
+  const pulls = calm !== null && holdsBack(calm, law.effectiveMassKg);
+  const brakes = calm !== null && law.brakingShare > 0;
+  const wholeShare = firstNotBelow(speedMPerS, law.brakingFullMPerS, braking, speedMPerS.length);
+  addRun(vehicle, cycle, pulls ? pullingLaw(law, calm) : null, 0, steady);
+  addRun(vehicle, cycle, null, steady, braking);
+  addRun(vehicle, cycle, null, braking, wholeShare);
+  addRun(vehicle, cycle, brakes ? brakingLaw(law, calm) : null, wholeShare, speedMPerS.length);
 }
 
-/** Adds steps of rising speed; where `pullsAgainst` is given, the motor pulls on all of them. */
-function addRun(vehicle: Vehicle, cycle: CompiledCycle, pullsAgainst: CalmResistance | null, from: number, to: number): void {
+/** Does the road alone slow the vehicle down by more than any steady step? Then the motor pulls on all of them. */
+function holdsBack({ constantN, linearNSPerM, squareNS2PerM2 }: CalmResistance, effectiveMassKg: number): boolean {
+  return constantN >= EASES.constantMPerS2 * effectiveMassKg && linearNSPerM >= 0 && squareNS2PerM2 >= EASES.squarePerM * effectiveMassKg;
+}
+
+/** Adds steps of rising speed, which may keep to one torque law. */
+function addRun(vehicle: Vehicle, cycle: CompiledCycle, torqueLaw: TorqueLaw | null, from: number, to: number): void {
   const { speedMPerS } = cycle.bySpeed;
   const { clearMPerS, clearW, clearFastMPerS, clearFastW } = cycle.laws[0];
   const fast = firstNotBelow(speedMPerS, clearMPerS, from, to);
   const tooFast = firstNotBelow(speedMPerS, clearFastMPerS, fast, to);
-  addStretch(vehicle, cycle, pullsAgainst, clearW, from, fast);
-  addStretch(vehicle, cycle, pullsAgainst, clearFastW, fast, tooFast);
+  addStretch(vehicle, cycle, torqueLaw, clearW, from, fast);
+  addStretch(vehicle, cycle, torqueLaw, clearFastW, fast, tooFast);
   for (let k = tooFast; k < to; k++) addExactly(vehicle, cycle, k);
 }
 
 /** Adds steps on which one shaft power, above base speed, is clear of the motor's limit. */
-function addStretch(vehicle: Vehicle, cycle: CompiledCycle, pullsAgainst: CalmResistance | null, clearW: number, from: number, to: number): void {
+function addStretch(vehicle: Vehicle, cycle: CompiledCycle, torqueLaw: TorqueLaw | null, clearW: number, from: number, to: number): void {
   const { bySpeed, drawn } = cycle;
   const { demandN } = cycle.drivenBySpeed;
   const [law] = cycle.laws;
   for (let start = from; start < to; start += STEPS_AT_A_TIME) {
     const end = Math.min(start + STEPS_AT_A_TIME, to);
-    if (pullsAgainst === null) writeDemand(law, vehicle.road, bySpeed, start, end, demandN);
+    if (torqueLaw === null) writeDemand(law, vehicle.road, bySpeed, start, end, demandN);
     for (let k = start; k < end; k++) {
-      k = pullsAgainst === null ? addAny(law, demandN, clearW, bySpeed, k, end, drawn) : addPulling(law, pullsAgainst, clearW, bySpeed, k, end, drawn);
+      k = torqueLaw === null ? addAny(law, demandN, clearW, bySpeed, k, end, drawn) : addOneWay(law, torqueLaw, clearW, bySpeed, k, end, drawn);
       if (k < end) addExactly(vehicle, cycle, k);
     }
   }

@@ -79,13 +79,15 @@ describe('energy drawn over a cycle, by the quick loops', () => {
     }
   });
 
-  it('orders the steps by the schedule: first those that do not slow down, slow ones first, each step once', () => {
+  it('orders the steps by the schedule: three runs by how they slow down, slow ones first, each step once', () => {
     const cycle = compileCycle(scheduleOf('udds'), onTheLevel);
     const { bySpeed } = cycle;
-    const { steady, speedMPerS, accelerationMPerS2 } = bySpeed;
+    const { steady, braking, speedMPerS, accelerationMPerS2 } = bySpeed;
     speedMPerS.forEach((speed, k) => {
-      expect(accelerationMPerS2[k] >= 0).toBe(k < steady);
-      if (k > 0 && k !== steady) expect(speed).toBeGreaterThanOrEqual(speedMPerS[k - 1]);
+      const slowing = -accelerationMPerS2[k];
+      expect(slowing <= 0.04 + 5e-5 * speed * speed).toBe(k < steady);
+      expect(slowing > 0.15 + 4e-4 * speed * speed).toBe(k >= braking);
+      if (k > 0 && k !== steady && k !== braking) expect(speed).toBeGreaterThanOrEqual(speedMPerS[k - 1]);
     });
     const pairs = (steps: typeof bySpeed | CompiledCycle) => [...steps.speedMPerS].map((speed, k) => `${speed} ${steps.accelerationMPerS2[k]}`).sort();
     expect(pairs(bySpeed)).toEqual(pairs(cycle));
