@@ -17,22 +17,17 @@ export interface DesignEvaluator {
 export function createDesignEvaluator(study: Study, columns: readonly ResultColumn[]): DesignEvaluator {
   const evaluator = compileStudy(study, new Set(columns.filter(({ role }) => role === 'metric').map(({ name }) => name)));
   const search = createSearch(study);
-  const inputs = new Float64Array(evaluator.inputs.length);
+  // One row: inputs, points on the axes, metrics.
+  const pointsAt = evaluator.inputs.length;
+  const metricsAt = pointsAt + study.axes.length;
+  const row = new Float64Array(metricsAt + evaluator.metrics.length);
   const points = new Int32Array(study.axes.length);
-  const metrics = new Float64Array(evaluator.metrics.length);
-  const readers = columns.map(reader);
+  const hasOptions = columns.some(({ role }) => role === 'option');
+  const places = Int32Array.from(columns, placeOf);
 
-  function reader({ role, name }: ResultColumn): () => number {
-    if (role === 'metric') {
-      const at = evaluator.metrics.findIndex((metric) => metric.name === name);
-      return () => metrics[at];
-    }
-    if (role === 'option') {
-      const axis = study.axes.findIndex((candidate) => candidate.name === name);
-      return () => points[axis];
-    }
-    const at = evaluator.inputs.indexOf(name);
-    return () => inputs[at];
+  function placeOf({ role, name }: ResultColumn): number {
+    if (role === 'metric') return metricsAt + evaluator.metrics.findIndex((metric) => metric.name === name);
+    return role === 'option' ? pointsAt + study.axes.findIndex((axis) => axis.name === name) : evaluator.inputs.indexOf(name);
   }
 
   return {
@@ -40,14 +35,15 @@ export function createDesignEvaluator(study: Study, columns: readonly ResultColu
     count: search.count,
     evaluate(designNumber, out, at, stride) {
       if (designNumber === 0) {
-        inputs.set(evaluator.reference);
+        row.set(evaluator.reference);
         points.fill(-1);
       } else {
-        search.inputs(designNumber, inputs, 0);
-        search.points(designNumber, points);
+        search.inputs(designNumber, row, 0);
+        if (hasOptions) search.points(designNumber, points);
       }
-      evaluator.evaluate(inputs, 0, metrics, 0);
-      for (let k = 0; k < readers.length; k++) out[at + k * stride] = readers[k]();
+      row.set(points, pointsAt);
+      evaluator.evaluate(row, 0, row, metricsAt);
+      for (let k = 0; k < places.length; k++) out[at + k * stride] = row[places[k]];
     },
   };
 }

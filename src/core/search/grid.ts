@@ -24,7 +24,11 @@ export const gridSearch: SearchMethod<GridSearch> = ({ axes }): Search => {
   return {
     count,
     inputNames: axes.flatMap((axis) => axis.sets),
-    inputs: (designNumber, out, at) => walk(designNumber, (axis, point) => out.set(axes[axis]!.points[point]!, at + offsets[axis]!)),
+    inputs: (designNumber, out, at) =>
+      walk(designNumber, (axis, point) => {
+        const values = axes[axis]!.points[point]!;
+        for (let k = 0; k < values.length; k++) out[at + offsets[axis]! + k] = values[k]!;
+      }),
     points: (designNumber, out) =>
       walk(designNumber, (axis, point) => {
         out[axis] = point;
