@@ -38,7 +38,7 @@ export function partBytes(rows: PartRows, columns: readonly ResultColumn[]): Uin
   const columnData: ColumnSource[] = [
     { name: 'number', data: wholeNumbers(rows.numbers.subarray(0, count)), type: 'INT64', nullable: false, encoding: 'DELTA_BINARY_PACKED' },
     ...columns.map((column, k): ColumnSource => dataColumn(column, rows.columns[k].subarray(0, count))),
-    { name: 'feasible', data: Array.from(rows.feasible.subarray(0, count), Boolean), type: 'BOOLEAN', nullable: false, statistics: false },
+    { name: 'feasible', data: flags(rows.feasible.subarray(0, count)), type: 'BOOLEAN', nullable: false, statistics: false },
   ];
   return new Uint8Array(parquetWriteBuffer({ columnData }));
 }
@@ -49,12 +49,18 @@ function wholeNumbers(numbers: Float64Array): BigInt64Array {
   return whole;
 }
 
-/** Inputs always exist, and repeat: they get a dictionary where the writer finds it worth while. Metrics hardly repeat. */
+function flags(values: Uint8Array): boolean[] {
+  const set = new Array<boolean>(values.length);
+  for (let i = 0; i < values.length; i++) set[i] = values[i] === 1;
+  return set;
+}
+
+/** Inputs always exist. Numbers stand as they are: dictionaries cost more time than the room they save. */
 function dataColumn(column: ResultColumn, values: Float64Array): ColumnSource {
   const { key: name, labels, role } = column;
   if (role === 'option') return { name, data: Array.from(values, (point) => labels?.[point] ?? null), type: 'STRING', nullable: true };
   const written = machineValues(column, values);
-  if (role === 'input') return { name, data: written, type: 'DOUBLE', nullable: false };
-  const data = written.some(Number.isNaN) ? Array.from(written, (value) => (Number.isNaN(value) ? null : value)) : written;
-  return { name, data, type: 'DOUBLE', nullable: true, encoding: 'PLAIN' };
+  const nullable = role === 'metric';
+  const data = nullable && written.some(Number.isNaN) ? Array.from(written, (value) => (Number.isNaN(value) ? null : value)) : written;
+  return { name, data, type: 'DOUBLE', nullable, encoding: 'PLAIN' };
 }

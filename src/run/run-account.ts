@@ -38,7 +38,8 @@ export class RunAccount {
 
   /** Takes designs first…first + count − 1; returns which are feasible. */
   add(first: number, count: number, columns: readonly Float64Array[]): Uint8Array {
-    const numbers = Float64Array.from({ length: count }, (_, i) => first + i);
+    const numbers = new Float64Array(count);
+    for (let i = 0; i < count; i++) numbers[i] = first + i;
     const objectives = this.objectivesOf(columns);
     const feasible = new Uint8Array(count);
     this.tally.add(

@@ -62,9 +62,13 @@ export function machineValues(column: Pick<ResultColumn, 'role' | 'quantity' | '
     for (let i = 0; i < si.length; i++) written[i] = fromSi(si[i], unit);
     return written;
   }
-  // Rounding goes by way of text, and inputs repeat: the points of an axis.
+  // Rounding goes by way of text, and inputs repeat: the points of an axis, often one after another.
   const known = new Map<number, number>();
   for (let i = 0; i < si.length; i++) {
+    if (i > 0 && si[i] === si[i - 1]) {
+      written[i] = written[i - 1];
+      continue;
+    }
     let value = known.get(si[i]);
     if (value === undefined) {
       value = (machineValue(column, si[i]) ?? Number.NaN) as number;
