@@ -81,7 +81,7 @@ function resultsOf(sheet: DesignSheet, trial: Trial): DesignMetric[] {
 }
 
 function resultRow(sheet: DesignSheet, metric: DesignMetric): string[] {
-  return [metric.column.row.label, ...metricCells(sheet, metric), limitText(metric.limit, !Number.isNaN(metric.value))];
+  return [metric.column.row.label, ...metricCells(sheet, metric), limitText(metric.limit, !Number.isNaN(metric.value), metric.column.row)];
 }
 
 /** Figure and unit; one that misses a requirement in decimals enough not to look as if it met it. */

@@ -2,6 +2,7 @@
 import { givenText } from '../charts/figure-words.ts';
 import { visibleText } from '../charts/visible-text.ts';
 import type { LimitWord } from '../core/evaluate/evaluator.ts';
+import type { MetricRow } from '../core/study/catalogue/metrics.ts';
 import { findParameter, type ParameterRow, trialParameters } from '../core/study/catalogue/parameters.ts';
 import { trialKindRow } from '../core/study/catalogue/trial-kinds.ts';
 import type { Study, Trial } from '../core/study/study.ts';
@@ -26,8 +27,8 @@ export function trialConditions(study: Study, trial: Trial): string {
 }
 
 /** What stands beside a result: `limited by adhesion`; for one that does not exist, why. */
-export function limitText(limit: LimitWord, exists: boolean): string {
-  if (limit === '') return exists ? '' : 'not reached';
+export function limitText(limit: LimitWord, exists: boolean, { absent = 'not reached' }: Pick<MetricRow, 'absent'>): string {
+  if (limit === '') return exists ? '' : absent;
   if (exists) return limit === 'beyond 45°' ? limit : `limited by ${limit}`;
   return limit === 'motor speed' ? 'beyond maximum motor speed' : limit;
 }

@@ -3,7 +3,7 @@ import { capitalised, figureText, inputText, type Measured, ownFigures } from '.
 import type { ReportData, RequirementCount } from '../charts/report-data.ts';
 import { chooseDesign } from '../core/search/choose-design.ts';
 import type { ComputedDesign, DesignMetric } from '../core/search/design-bench.ts';
-import { type MetricColumn, trialMetrics } from '../core/study/catalogue/metrics.ts';
+import { type MetricColumn, type MetricRow, trialMetrics } from '../core/study/catalogue/metrics.ts';
 import type { Trial } from '../core/study/study.ts';
 import { formatFigure } from '../core/units/format-quantity.ts';
 import { html, type Markup, type Piece } from './markup.ts';
@@ -61,10 +61,14 @@ function shownValue(value: number, row: Measured, asked: RequirementCount | unde
   return valueAgainst(value, asked, metricColumn(data, asked.metric).column, data.study);
 }
 
+function absentWords({ absent = 'not reached' }: MetricRow): string {
+  return absent;
+}
+
 /** What limits a result, or why there is none. */
-function limitNote({ value, limit }: DesignMetric, trial: Trial | null): Markup | null {
+function limitNote({ value, limit, column }: DesignMetric, trial: Trial | null): Markup | null {
   const exists = !Number.isNaN(value);
-  if (limit === '') return exists || trial === null || trial.kind === 'cycle' ? null : html`<small>not reached</small>`;
+  if (limit === '') return exists || trial === null || trial.kind === 'cycle' ? null : html`<small>${absentWords(column.row)}</small>`;
   return html`<small>${exists && limit !== 'beyond 45°' ? `limited by ${limit}` : limit}</small>`;
 }
 

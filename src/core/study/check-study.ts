@@ -56,7 +56,7 @@ function readStudy(root: LocatedMap, fileName: string, sources: StudySources, is
   const values = referenceValues({ found, trials, fullLoad });
   const search = readSearch(found.parts.get('search')?.value, issues);
   const { axes, options, known } = readAllAxes({ found, trials, fullLoad, values, files, issues, varied, sound }, { broken, sources, search });
-  const aims = { issues, trials, columns: metricColumns({ trials }), broken, stands: known };
+  const aims = { issues, trials, columns: metricColumns({ trials, values, axes }), broken, stands: known };
   const requirements = readRequirements(found.parts.get('requirements')?.value, aims);
   const tradeOff = readTradeOff(found.parts.get('tradeOff')?.value, aims);
   if (search === null || issues.failed) return null;

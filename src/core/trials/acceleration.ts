@@ -2,7 +2,7 @@
 import { shiftSpeedMPerS } from '../vehicle/shift.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 import { afterShift } from './coasting.ts';
-import { afterSpeedingUp, highestGear, isBeyondMotorSpeed, type Motion, type PedalConditions, pullInGear } from './full-pedal.ts';
+import { afterSpeedingUp, type GearUse, highestGear, isBeyondMotorSpeed, type Motion, type PedalConditions, pullInGear } from './full-pedal.ts';
 
 /** From one speed to a greater one, m/s. */
 export interface AccelerationConditions extends PedalConditions {
@@ -10,8 +10,8 @@ export interface AccelerationConditions extends PedalConditions {
   toMPerS: number;
 }
 
-/** NaN both when the speed is not reached. */
-export interface AccelerationResult {
+/** NaN all three when the speed is not reached. */
+export interface AccelerationResult extends GearUse {
   timeS: number;
   distanceM: number;
 }
@@ -22,16 +22,19 @@ export interface AccelerationResult {
  * 1e-6 where (F − R)/F ≥ 1e-9, about 1e-11 in ordinary cases.
  */
 export function solveAcceleration(vehicle: Vehicle, conditions: AccelerationConditions): AccelerationResult {
-  const end = afterAcceleration(vehicle, conditions);
-  return end === null ? { timeS: Number.NaN, distanceM: Number.NaN } : { timeS: end.timeS, distanceM: end.distanceM };
+  const { fromMPerS, toMPerS, slope, rating } = conditions;
+  const shiftMPerS = shiftSpeedMPerS(vehicle, rating, slope);
+  const end = afterAcceleration(vehicle, conditions, shiftMPerS);
+  if (end === null) return { timeS: Number.NaN, distanceM: Number.NaN, gear: 0, shiftMPerS: Number.NaN };
+  const gear = fromMPerS >= shiftMPerS || toMPerS > shiftMPerS ? 1 : 0;
+  return { timeS: end.timeS, distanceM: end.distanceM, gear, shiftMPerS: gear === 1 && fromMPerS < shiftMPerS ? shiftMPerS : Number.NaN };
 }
 
-function afterAcceleration(vehicle: Vehicle, conditions: AccelerationConditions): Motion | null {
-  const { fromMPerS, toMPerS, slope, rating } = conditions;
+function afterAcceleration(vehicle: Vehicle, conditions: AccelerationConditions, shiftMPerS: number): Motion | null {
+  const { fromMPerS, toMPerS, slope } = conditions;
   const gear = highestGear(vehicle);
   if (isBeyondMotorSpeed(vehicle, gear, toMPerS)) return null;
   const start: Motion = { speedMPerS: fromMPerS, timeS: 0, distanceM: 0 };
-  const shiftMPerS = shiftSpeedMPerS(vehicle, rating, slope);
   if (fromMPerS >= shiftMPerS) return afterSpeedingUp(pullInGear(vehicle, gear, conditions), start, toMPerS);
   const before = afterSpeedingUp(pullInGear(vehicle, 0, conditions), start, Math.min(toMPerS, shiftMPerS));
   if (before === null || toMPerS <= shiftMPerS) return before;

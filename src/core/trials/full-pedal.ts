@@ -23,6 +23,12 @@ export interface Motion {
   distanceM: number;
 }
 
+/** Which gear a trial ends in, and the speed at which it shifts on the way; NaN where it does not. */
+export interface GearUse {
+  gear: Gear;
+  shiftMPerS: number;
+}
+
 /** A vehicle at full pedal in one gear. */
 export interface Pull {
   /** F − R at a speed. */

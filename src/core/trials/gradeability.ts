@@ -15,7 +15,8 @@ export interface GradeabilityConditions {
  * 'motor speed' above maximum motor speed.
  */
 export function solveGradeability(vehicle: Vehicle, { speedMPerS, rating }: GradeabilityConditions): GradeResult {
-  if (isBeyondMotorSpeed(vehicle, highestGear(vehicle), speedMPerS)) return { grade: Number.NaN, limit: 'motor speed' };
+  const gear = highestGear(vehicle);
+  if (isBeyondMotorSpeed(vehicle, gear, speedMPerS)) return { grade: Number.NaN, gear, limit: 'motor speed' };
   const lowerEnds = isBeyondMotorSpeed(vehicle, 0, speedMPerS);
   if (lowerEnds) return steepestGrade(vehicle, 1, speedMPerS, rating, 0);
   const inLower = steepestGrade(vehicle, 0, speedMPerS, rating, 0);

@@ -3,15 +3,15 @@ import { signChanges } from '../numerics/roots.ts';
 import { shiftSpeedMPerS } from '../vehicle/shift.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
 import { afterShift } from './coasting.ts';
-import { afterSpeedChange, highestGear, type Motion, type PedalConditions, type Pull, pullInGear } from './full-pedal.ts';
+import { afterSpeedChange, type GearUse, highestGear, type Motion, type PedalConditions, type Pull, pullInGear } from './full-pedal.ts';
 
 /** The distance to cover, m. */
 export interface StandingDistanceConditions extends PedalConditions {
   distanceM: number;
 }
 
-/** NaN both when the distance is not covered. */
-export interface StandingDistanceResult {
+/** NaN all three when the distance is not covered. */
+export interface StandingDistanceResult extends GearUse {
   timeS: number;
   endSpeedMPerS: number;
 }
@@ -32,18 +32,25 @@ const ROUNDS = 50;
  * Relative error of both below 1e-9.
  */
 export function solveStandingDistance(vehicle: Vehicle, conditions: StandingDistanceConditions): StandingDistanceResult {
-  const end = atDistance(vehicle, conditions);
-  return end === null ? { timeS: Number.NaN, endSpeedMPerS: Number.NaN } : { timeS: end.timeS, endSpeedMPerS: end.speedMPerS };
+  const use: GearUse = { gear: 0, shiftMPerS: Number.NaN };
+  const end = atDistance(vehicle, conditions, use);
+  if (end === null) return { timeS: Number.NaN, endSpeedMPerS: Number.NaN, gear: 0, shiftMPerS: Number.NaN };
+  return { timeS: end.timeS, endSpeedMPerS: end.speedMPerS, ...use };
 }
 
-function atDistance(vehicle: Vehicle, conditions: StandingDistanceConditions): Motion | null {
+function atDistance(vehicle: Vehicle, conditions: StandingDistanceConditions, use: GearUse): Motion | null {
   const { distanceM, slope, rating } = conditions;
   const shiftMPerS = shiftSpeedMPerS(vehicle, rating, slope);
   const lastGear = highestGear(vehicle);
   let start: Motion = { speedMPerS: 0, timeS: 0, distanceM: 0 };
+  use.gear = lastGear;
   if (lastGear === 1 && shiftMPerS > 0) {
     const before = pullAlong(pullInGear(vehicle, 0, conditions), start, shiftMPerS, distanceM);
-    if (before === null || before.distanceM >= distanceM) return before;
+    if (before === null || before.distanceM >= distanceM) {
+      use.gear = 0;
+      return before;
+    }
+    use.shiftMPerS = shiftMPerS;
     const shifted = afterShift(vehicle, slope, before, (motion) => motion.distanceM - distanceM);
     if (shifted.trialEnded) return shifted;
     if (shifted.speedMPerS === 0) return null;

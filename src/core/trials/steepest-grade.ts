@@ -11,6 +11,7 @@ export type GradeLimit = TractionLimit | 'beyond 45°';
 /** Rise over run, at most 1; negative: only downhill. NaN: no grade at all. */
 export interface GradeResult {
   grade: number;
+  gear: Gear;
   limit: GradeLimit;
 }
 
@@ -27,8 +28,8 @@ export function steepestGrade(vehicle: Vehicle, gear: Gear, speedMPerS: number, 
   const gripN = adhesionLimitN(vehicle, speedMPerS, 1);
   const byGrip = gripN === Infinity ? Infinity : gradeAt(-againstN, rollingN - gripN, road.weightN);
   const grade = Math.min(byDrive, byGrip);
-  if (grade > 1) return { grade: 1, limit: 'beyond 45°' };
-  return { grade: grade === -Infinity ? Number.NaN : grade, limit: byGrip <= byDrive ? 'adhesion' : driveLimit(vehicle, gear, speedMPerS, rating) };
+  if (grade > 1) return { grade: 1, gear, limit: 'beyond 45°' };
+  return { grade: grade === -Infinity ? Number.NaN : grade, gear, limit: byGrip <= byDrive ? 'adhesion' : driveLimit(vehicle, gear, speedMPerS, rating) };
 }
 
 /**

@@ -1,12 +1,15 @@
 /** Top speed at full pedal. */
 import { type RealFunction, signChange, signChanges } from '../numerics/roots.ts';
+import type { Gear } from '../vehicle/gearing.ts';
 import { type TractionLimit, tractionLimit } from '../vehicle/traction.ts';
 import type { Vehicle } from '../vehicle/vehicle.ts';
-import { type PedalConditions, type Pull, pullInGear } from './full-pedal.ts';
+import { highestGear, type PedalConditions, type Pull, pullInGear } from './full-pedal.ts';
 
 /** Zero speed when the vehicle cannot start. */
 export interface TopSpeedResult {
   speedMPerS: number;
+  /** The gear that holds it. */
+  gear: Gear;
   limit: TractionLimit;
 }
 
@@ -21,19 +24,19 @@ export function solveTopSpeed(vehicle: Vehicle, conditions: PedalConditions): To
   const lower = pullInGear(vehicle, 0, conditions);
   const higher = vehicle.gearing.ratioCount === 1 ? lower : pullInGear(vehicle, 1, conditions);
   const inLower = (speed: number) => higher === lower || (speed <= lower.topMPerS && lower.netForceN(speed) >= higher.netForceN(speed));
-  const limited = (speedMPerS: number): TopSpeedResult => ({
-    speedMPerS,
-    limit: tractionLimit(vehicle, inLower(speedMPerS) ? 0 : 1, speedMPerS, conditions.rating, conditions.slope),
-  });
+  const limited = (speedMPerS: number): TopSpeedResult => {
+    const gear = inLower(speedMPerS) ? 0 : 1;
+    return { speedMPerS, gear, limit: tractionLimit(vehicle, gear, speedMPerS, conditions.rating, conditions.slope) };
+  };
   const falls = netForceFalls(vehicle);
   for (const { pulls, fromMPerS, toMPerS } of rangesOf(lower, higher)) {
     const netForceN = pulls.length === 1 ? pulls[0].netForceN : (speed: number) => Math.max(pulls[0].netForceN(speed), pulls[1].netForceN(speed));
     // Above rest: the lower gear ends there, and the higher one does not hold the speed.
-    if (!(netForceN(fromMPerS) > 0)) return fromMPerS === 0 ? limited(0) : { speedMPerS: fromMPerS, limit: 'motor speed' };
+    if (!(netForceN(fromMPerS) > 0)) return fromMPerS === 0 ? limited(0) : { speedMPerS: fromMPerS, gear: 0, limit: 'motor speed' };
     const lossMPerS = firstLossMPerS(netForceN, falls ? [fromMPerS, toMPerS] : stretchEnds(pulls, fromMPerS, toMPerS));
     if (!Number.isNaN(lossMPerS)) return limited(lossMPerS);
   }
-  return { speedMPerS: higher.topMPerS, limit: 'motor speed' };
+  return { speedMPerS: higher.topMPerS, gear: highestGear(vehicle), limit: 'motor speed' };
 }
 
 /** Speeds in which the same gears can be used. */

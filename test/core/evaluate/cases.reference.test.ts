@@ -30,6 +30,9 @@ const sources: StudySources = {
   file: (path) => ({ text: readFileSync(new URL(path, folder), 'utf8') }),
 };
 
+/** What studies with two ratios tell besides. */
+const ofGears = /\.(?:ratio|shiftSpeed_kmh|lowerGearShare_pct)$/u;
+
 const separate = 'separate implementation of the model in SciPy 1.10';
 type Group = 'time and distance' | 'top speed' | 'cycle' | 'cycle with a map' | 'rest';
 const tolerances: Record<Group, number> = { 'time and distance': 1e-6, 'top speed': 1e-9, cycle: 1e-9, 'cycle with a map': 2e-6, rest: 2e-6 };
@@ -70,6 +73,7 @@ describe('designs from a separate implementation of the model', () => {
     evaluator.metrics.forEach((column, k) => {
       const { key } = column;
       const value = fromSi(row[k], machineUnit(column.row.quantity));
+      if (ofGears.test(key)) return;
       const wanted = expected.metrics[key];
       const limit = limitWords[limits[k]];
       if (limit !== (expected.limits[key] ?? '')) faults.push(`${key} is limited by '${limit}', not by '${expected.limits[key] ?? ''}'`);
@@ -86,6 +90,7 @@ describe('designs from a separate implementation of the model', () => {
     });
     expect(faults).toEqual([]);
     for (const row of worst.values()) compare(row);
-    expect(evaluator.metrics.map(({ key }) => key).sort()).toEqual(Object.keys(expected.metrics).sort());
+    const told = evaluator.metrics.map(({ key }) => key).filter((key) => !ofGears.test(key));
+    expect(told.sort()).toEqual(Object.keys(expected.metrics).sort());
   });
 });

@@ -1,5 +1,7 @@
 /** Options: what a list of alternatives becomes, and that each of its designs is the study that one would write by hand. */
 import { describe, expect, it } from 'vitest';
+import { metricColumns } from '../../../src/core/study/catalogue/metric-columns.ts';
+import type { Study } from '../../../src/core/study/study.ts';
 import { curve, map, metricsOf, motorMap, still, withSection } from './options.ts';
 import { complaint, edited, studyOf, warningsOf } from './study-from-disk.ts';
 
@@ -128,7 +130,16 @@ describe('what an option states goes before what says the same thing', () => {
   it('one ratio beside the two of the study', () => {
     const two = edited(still, ['ratio: 9.5 ', 'ratios: [11.2, 6.4]\n  shiftTime: 0.25 s #']);
     const read = studyOf(`${two}options: { gearbox: [ { name: single, set: { gearing.ratio: 9.5 } }, { name: two-speed } ] }\n`);
-    expect(metricsOf(read)).toEqual([two, still, two].map((text) => metricsOf(studyOf(text))[0]));
+    // Which gear a trial uses is only told where a study has two ratios, and differs between one ratio and two.
+    const names = (study: Study) => metricColumns(study).map(({ name }) => name);
+    const shared = names(studyOf(still));
+    const sharedOf = (study: Study) => metricsOf(study).map((row) => shared.map((name) => row[names(study).indexOf(name)]));
+    expect(sharedOf(read)).toEqual([two, still, two].map((text) => sharedOf(studyOf(text))[0]));
+    const told = names(read).filter((name) => !shared.includes(name));
+    const toldOf = (study: Study) => metricsOf(study).map((row) => told.map((name) => row[names(study).indexOf(name)]));
+    expect(told).toContain('sprint.shiftSpeed');
+    expect(toldOf(read)[2]).toEqual(toldOf(studyOf(two))[0]);
+    expect(toldOf(read)[1]?.[told.indexOf('sprint.ratio')]).toBe(9.5);
   });
 });
 

@@ -26,14 +26,14 @@ describe('top speed', () => {
   });
 
   it('is the speed of maximum motor speed where force is left over there', () => {
-    expect(solveTopSpeed(plainVehicle({ topMPerS: 40 }), levelPeak)).toEqual({ speedMPerS: 40, limit: 'motor speed' });
+    expect(solveTopSpeed(plainVehicle({ topMPerS: 40 }), levelPeak)).toMatchObject({ speedMPerS: 40, limit: 'motor speed' });
   });
 
   it('is zero, with what holds it down, when the vehicle cannot start', () => {
-    expect(solveTopSpeed(plainVehicle({ forceN: 1000, resistanceN: 1001 }), levelPeak)).toEqual({ speedMPerS: 0, limit: 'motor torque' });
-    expect(solveTopSpeed(plainVehicle({ forceN: 1000, resistanceN: 1000 }), levelPeak)).toEqual({ speedMPerS: 0, limit: 'motor torque' });
+    expect(solveTopSpeed(plainVehicle({ forceN: 1000, resistanceN: 1001 }), levelPeak)).toMatchObject({ speedMPerS: 0, limit: 'motor torque' });
+    expect(solveTopSpeed(plainVehicle({ forceN: 1000, resistanceN: 1000 }), levelPeak)).toMatchObject({ speedMPerS: 0, limit: 'motor torque' });
     const slippery = { ...plainVehicle({ resistanceN: 200 }), axles: { ...plainVehicle().axles, driven: 'all' as const, adhesion: 0.01 } };
-    expect(solveTopSpeed(slippery, levelPeak)).toEqual({ speedMPerS: 0, limit: 'adhesion' });
+    expect(solveTopSpeed(slippery, levelPeak)).toMatchObject({ speedMPerS: 0, limit: 'adhesion' });
   });
 
   it('is the first crossing where a curve lets force exceed resistance again', () => {
@@ -84,9 +84,9 @@ describe('top speed', () => {
     const two: Vehicle = { ...one, gearing: { ...one.gearing, ratioCount: 2 } };
     expect(solveTopSpeed(two, levelPeak).speedMPerS).toBeCloseTo(Math.sqrt(1000), 11);
     const dragged = (dragNS2PerM2: number) => ({ ...two, road: { ...two.road, dragNS2PerM2 } });
-    expect(solveTopSpeed(dragged(1), levelPeak)).toEqual({ speedMPerS: 40, limit: 'motor speed' });
+    expect(solveTopSpeed(dragged(1), levelPeak)).toMatchObject({ speedMPerS: 40, limit: 'motor speed' });
     // The higher gear does not hold the speed at which the lower one ends.
-    expect(solveTopSpeed(dragged(12), levelPeak)).toEqual({ speedMPerS: 20, limit: 'motor speed' });
+    expect(solveTopSpeed(dragged(12), levelPeak)).toMatchObject({ speedMPerS: 20, limit: 'motor speed' });
     expect(solveTopSpeed(dragged(32), levelPeak).speedMPerS).toBeCloseTo(Math.sqrt(250), 11);
   });
 

@@ -17,6 +17,8 @@ export interface MetricRow {
   /** Short label for axes and tables. */
   readonly label: string;
   readonly sentence: string;
+  /** What people read where the metric does not exist and no limit says why; `not reached` unless stated. */
+  readonly absent?: string;
   /** The metric also says what limits it. */
   readonly limited?: boolean;
 }
@@ -52,6 +54,12 @@ export const trialMetrics = {
   offTrace: row('offTrace', 'share', 'less', 2, 'off-trace share', 'Share of the time in which the drive cannot follow the trace.'),
   recovered: row('recovered', 'share', 'more', 1, 'recovered share', 'Share of the braking energy at the wheels that returns to the pack.'),
   outsideMap: row('outsideMap', 'share', 'less', 2, 'outside the map', 'Share of the time in which the motor works outside its measured map.'),
+  ratio: row('ratio', 'number', null, 2, 'ratio in use', 'Ratio of the gear that the trial ends in; for studies with two ratios.'),
+  shiftSpeed: {
+    ...row('shiftSpeed', 'speed', null, 1, 'shift speed', 'Speed at which the trial shifts; missing where it needs no shift.'),
+    absent: 'no shift',
+  },
+  lowerGearShare: row('lowerGearShare', 'share', null, 1, 'time in the lower gear', 'Share of the moving time in the lower of two gears.'),
   'energy.rolling': row('energy.rolling', 'energyPerDistance', null, 1, 'rolling', 'Energy lost to rolling resistance.'),
   'energy.air': row('energy.air', 'energyPerDistance', null, 1, 'air', 'Energy lost to air drag.'),
   'energy.grade': row('energy.grade', 'energyPerDistance', null, 1, 'grade', 'Energy spent on climbing, net.'),

@@ -9,6 +9,8 @@ export interface TrialKindRow {
   /** May it be rated peak or continuous, and which holds by default? null: the rating plays no part. */
   readonly rating: 'peak' | 'continuous' | null;
   readonly metrics: readonly TrialMetric[];
+  /** Further ones where the study has two ratios: which of them is used, and where it shifts. */
+  readonly gearMetrics: readonly TrialMetric[];
 }
 
 const load = ['payload', 'laden', 'trailer.mass', 'trailer.dragArea', 'headWind'] as const;
@@ -20,30 +22,35 @@ export const trialKinds = {
     takes: ['from', 'to', ...load, 'grade'],
     rating: 'peak',
     metrics: ['payload', 'time', 'distance'],
+    gearMetrics: ['ratio', 'shiftSpeed'],
   },
   'standing distance': {
     sentence: 'Full pedal from rest over a distance: time and end speed.',
     takes: ['distance', ...load, 'grade'],
     rating: 'peak',
     metrics: ['payload', 'time', 'endSpeed'],
+    gearMetrics: ['ratio', 'shiftSpeed'],
   },
   'top speed': {
     sentence: 'The highest speed held on the road.',
     takes: [...load, 'grade'],
     rating: 'continuous',
     metrics: ['payload', 'speed'],
+    gearMetrics: ['ratio'],
   },
   gradeability: {
     sentence: 'The steepest grade held at a speed.',
     takes: ['at', ...load],
     rating: 'continuous',
     metrics: ['payload', 'grade'],
+    gearMetrics: ['ratio'],
   },
   'hill start': {
     sentence: 'The steepest grade on which the vehicle starts, with a reserve of acceleration where asked.',
     takes: ['startAcceleration', ...load],
     rating: 'peak',
     metrics: ['payload', 'grade'],
+    gearMetrics: ['ratio'],
   },
   cycle: {
     sentence: 'A speed trace over time: energy, loads, and how well it is followed.',
@@ -74,6 +81,7 @@ export const trialKinds = {
       'energy.brakes',
       'energy.unmet',
     ],
+    gearMetrics: ['lowerGearShare'],
   },
 } as const satisfies Record<string, TrialKindRow>;
 
