@@ -74,10 +74,11 @@ export function compileCycle(trace: SpeedTraceLike, conditions: CycleConditions)
   const moving = listMoving(capped);
   const steps = moveAlong(capped, moving, conditions.grade, conditions.road);
   const last = timesS.length - 1;
+  const bySpeed = orderBySpeed(steps);
   const distanceM = distanceOf(capped);
   return {
     ...steps,
-    bySpeed: orderBySpeed(steps),
+    bySpeed,
     moments: momentsOf(steps),
     kineticJPerKg: (speeds[last] * speeds[last] - speeds[0] * speeds[0]) / 2,
     stepOfTrace: moving,
@@ -89,7 +90,7 @@ export function compileCycle(trace: SpeedTraceLike, conditions: CycleConditions)
     windows: tenMinuteWindows(timesS, moving),
     laws: [createQuickLaw(), createQuickLaw()],
     drawn: createDrawnSums(),
-    drivenBySpeed: createDrivenSteps(moving.length),
+    drivenBySpeed: createDrivenSteps(bySpeed.speedMPerS.length),
     driven: createDrivenSteps(moving.length),
     drivenHigher: createDrivenSteps(moving.length),
     nearLimit: new Int32Array(moving.length),
