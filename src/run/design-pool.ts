@@ -28,9 +28,12 @@ export interface DesignBatch extends DesignTask {
 /** Designs per task: tens of milliseconds of work, so that handing over costs nothing and progress moves. */
 export const designsPerTask = 1_000;
 
+/** Tasks that a thread has in hand: it goes on with them while the main thread writes a part, for a tenth of a second or so. */
+const tasksInHand = 4;
+
 /** Evaluates designs 1…count; batches come in the order of design numbers, whatever the threads do. Throws RunProblem. */
 export async function* evaluateInThreads(data: ThreadData, count: number, workers: number, threadUrl: URL): AsyncGenerator<DesignBatch> {
-  const pool = new Piscina({ filename: threadUrl.href, workerData: data, minThreads: workers, maxThreads: workers, concurrentTasksPerWorker: 1 });
+  const pool = new Piscina({ filename: threadUrl.href, workerData: data, minThreads: workers, maxThreads: workers, concurrentTasksPerWorker: tasksInHand });
   let lost: unknown = null;
   // A thread that fails with no task in hand tells only the pool, which starts no other in its place: what is queued would wait for ever.
   pool.on('error', (error) => {
@@ -38,7 +41,7 @@ export async function* evaluateInThreads(data: ThreadData, count: number, worker
     void pool.destroy();
   });
   const tasks = tasksOf(count);
-  // Two tasks a thread in flight keep every thread busy while the oldest is awaited, and memory flat.
+  // No more in flight than the threads have in hand: memory stays flat while the oldest is awaited.
   const inFlight: { task: DesignTask; result: Promise<TaskResult> }[] = [];
   const startNext = (): void => {
     const { value: task } = tasks.next();
@@ -49,13 +52,13 @@ export async function* evaluateInThreads(data: ThreadData, count: number, worker
     inFlight.push({ task, result });
   };
   try {
-    for (let k = 0; k < workers * 2; k++) startNext();
+    for (let k = 0; k < workers * tasksInHand; k++) startNext();
     for (let oldest = inFlight.shift(); oldest !== undefined; oldest = inFlight.shift()) {
       const { task } = oldest;
       const done = await oldest.result.catch((error: unknown) => {
-        throw threadProblem(task, lost ?? error);
+        throw threadProblem(task, inFlight.at(-1)?.task ?? task, lost ?? error);
       });
-      if (lost !== null) throw threadProblem(task, lost);
+      if (lost !== null) throw threadProblem(task, inFlight.at(-1)?.task ?? task, lost);
       const batch = batchOf(task, done, data.columns.length);
       startNext();
       yield batch;
@@ -70,9 +73,10 @@ function* tasksOf(count: number): Generator<DesignTask, undefined> {
   return undefined;
 }
 
-function threadProblem({ first, count }: DesignTask, cause: unknown): RunProblem {
+/** Which of the tasks in flight the thread had begun nobody can tell. */
+function threadProblem(oldest: DesignTask, newest: DesignTask, cause: unknown): RunProblem {
   const reason = cause instanceof Error ? cause.message : String(cause);
-  const message = `A worker thread stopped at designs ${first} to ${first + count - 1}: ${reason}`;
+  const message = `A worker thread stopped somewhere in designs ${oldest.first} to ${newest.first + newest.count - 1}: ${reason}`;
   return new RunProblem(message, 'Run again, with fewer --workers where memory is short.', { cause });
 }
 

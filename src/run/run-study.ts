@@ -84,8 +84,8 @@ export async function runStudy(options: RunOptions): Promise<RunOutcome> {
     done += batch.count;
     if (performance.now() - told >= tellEveryMs) tell();
   }
-  tell();
   parts.end();
+  tell();
 
   const provenance = {
     version: record.version,
