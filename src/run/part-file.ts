@@ -5,6 +5,11 @@ import { machineValues, type ResultColumn } from '../core/evaluate/result-column
 /** Designs per part, whatever the workers and tasks, so that the same study gives the same files. */
 export const designsPerPart = 50_000;
 
+/** Designs per row group: their columns are small enough for the garbage collector's quick road. */
+const rowsPerGroup = 10_000;
+/** One page a column and group: to look for the ends of pages would take as long as to write them. */
+const wholeColumns = 0;
+
 /** Name of part k, counted from 0. */
 export function partName(part: number): string {
   return `part-${String(part).padStart(5, '0')}.parquet`;
@@ -40,7 +45,7 @@ export function partBytes(rows: PartRows, columns: readonly ResultColumn[]): Uin
     ...columns.map((column, k): ColumnSource => dataColumn(column, rows.columns[k].subarray(0, count))),
     { name: 'feasible', data: flags(rows.feasible.subarray(0, count)), type: 'BOOLEAN', nullable: false, statistics: false },
   ];
-  return new Uint8Array(parquetWriteBuffer({ columnData }));
+  return new Uint8Array(parquetWriteBuffer({ columnData, rowGroupSize: rowsPerGroup, pageSize: wholeColumns }));
 }
 
 function wholeNumbers(numbers: Float64Array): BigInt64Array {
