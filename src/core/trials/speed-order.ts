@@ -14,8 +14,8 @@ export interface SpeedOrder extends MovingSteps {
 }
 
 /**
- * Deceleration c0 + c2 v² (m/s²) that half the rolling resistance and air drag of a car, or those of a lorry, make, and one that takes brakes. Which run
- * a step stands in decides how quickly it is driven, never what comes of it.
+ * Two decelerations c0 + c2 v²: what about half the rolling resistance and air drag of a car make, or those of a lorry; and what takes brakes.
+ * Which run a step stands in decides how quickly it is driven, never what comes of it.
  */
 export const EASES = { constantMPerS2: 0.04, squarePerM: 5e-5 };
 const BRAKES = { constantMPerS2: 0.15, squarePerM: 4e-4 };
