@@ -1,5 +1,4 @@
 /** A run from first to last: every design evaluated, stored and counted; then front, charts and report. */
-import { JSDOM } from 'jsdom';
 import { chartFiles } from '../charts/chart-files.ts';
 import type { ReportData } from '../charts/report-data.ts';
 import { machineValue } from '../core/evaluate/result-columns.ts';
@@ -96,6 +95,8 @@ export async function runStudy(options: RunOptions): Promise<RunOutcome> {
   };
   const { report, front } = findingsOf({ ...options, provenance }, account, designs);
   folder.write('front.csv', frontCsv(front, designs, report));
+  // Large, and only wanted here: in memory from the start it would burden the garbage collector all the while.
+  const { JSDOM } = await import('jsdom');
   for (const chart of chartFiles(report, new JSDOM('').window.document)) folder.write(`charts/${chart.name}`, chart.svg);
   folder.write('report.html', options.renderReport(report));
   const seconds = secondsSince(started);

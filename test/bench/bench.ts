@@ -15,8 +15,8 @@ const { values: asked, positionals } = parseArgs({
   options: { json: { type: 'boolean', default: false }, quick: { type: 'boolean', default: false }, evaluate: { type: 'boolean', default: false } },
 });
 const thorough: Thoroughness = asked.quick
-  ? { rounds: 5, designs: 300, poolDesigns: 20_000, poolRounds: 3, frontPoints: 200_000, frontRounds: 3, runRounds: 1 }
-  : { rounds: 15, designs: 1000, poolDesigns: 60_000, poolRounds: 7, frontPoints: 1_000_000, frontRounds: 7, runRounds: 3 };
+  ? { rounds: 5, designs: 300, poolDesigns: 60_000, poolRounds: 3, frontPoints: 200_000, frontRounds: 3, runRounds: 1 }
+  : { rounds: 15, designs: 1000, poolDesigns: 240_000, poolRounds: 5, frontPoints: 1_000_000, frontRounds: 7, runRounds: 3 };
 const measures: Measure[] = [];
 
 if (asked.evaluate) evaluateAlone(positionals);

@@ -100,9 +100,9 @@ export async function poolMeasures({ study }: Workload, { poolDesigns, poolRound
   ];
 }
 
-/** The first part of the designs warms the threads up and does not count. */
+/** The first half of the designs warms the threads up and does not count. */
 async function poolRate(study: Workload['study'], designs: number, workers: number): Promise<number> {
-  const warmUp = Math.floor(designs / 4);
+  const warmUp = designs / 2;
   let started = Number.NaN;
   let counted = 0;
   for await (const { first, count } of evaluateInThreads({ study, columns: studyColumns(study) }, designs, workers, threadUrl)) {
